@@ -1,0 +1,10 @@
+/** The one door of the engine: everything that the rest of the house may use stands here. */
+export { DomainError } from "./numerics/domain-error.js";
+export type { Assessment, CountRow } from "./decision/assessment.js";
+export type { Building, Ground, GroundLayer, Investigation, PilePoint, Problem } from "./decision/problem.js";
+export type { CorrelationName } from "./ground/correlation.js";
+export type { DamagePoint } from "./costs/damage.js";
+export type { Delay, Prices } from "./costs/prices.js";
+export type { DesignRule, DesignRuleName } from "./investigation/design-rule.js";
+export type { Point } from "./investigation/hole-positions.js";
+export type { LengthRule, PileSpecification } from "./piles/pile-specification.js";

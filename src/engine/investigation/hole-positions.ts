@@ -1,0 +1,7 @@
+import type { Metres } from "../../units/quantities.js";
+
+/** A place in plan, m. */
+export interface Point {
+  readonly x: Metres;
+  readonly y: Metres;
+}
