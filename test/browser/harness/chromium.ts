@@ -34,7 +34,7 @@ export async function unpackBrowser(): Promise<UnpackedBrowser> {
       if (tar.status !== 0) throw new Error(`tar could not unpack ${archive}: ${String(tar.stderr)}`);
       rmSync(join(aside, archive));
     }
-    writeFileSync(join(aside, "fonts/fonts.conf"), FONTS);
+    writeFileSync(join(aside, "fonts/fonts.conf"), fontsIn(home));
     try {
       renameSync(aside, home);
     } catch (error) {
@@ -49,13 +49,15 @@ export async function unpackBrowser(): Promise<UnpackedBrowser> {
 }
 
 // the package's own file names folders of another kind of machine; only its one family, so that pictures are alike everywhere
-const FONTS = `<?xml version="1.0"?>
+function fontsIn(home: string): string {
+  return `<?xml version="1.0"?>
 <!DOCTYPE fontconfig SYSTEM "fonts.dtd">
 <fontconfig>
-  <dir prefix="relative">fonts</dir>
-  <cachedir prefix="relative">cache</cachedir>
+  <dir>${home}/fonts/fonts</dir>
+  <cachedir>${home}/fonts/cache</cachedir>
 </fontconfig>
 `;
+}
 
 async function unpackFile(from: string, to: string): Promise<void> {
   await pipeline(createReadStream(from), createBrotliDecompress(), createWriteStream(to));
