@@ -21,14 +21,21 @@ class IconsPlugin {
   }
 }
 
-/** What both bundles share; the practice page is a configuration of its own so that its grid cannot reach the add-in. */
-const bundle = (name, entry, folder, plugins) => ({
-  name,
+// The practice page is not here: its grid must not reach the add-in, and src/build/practice-page.ts bundles it on its own.
+export default {
   mode: "production",
   target: "web",
   context: at("."),
-  entry,
-  output: { path: at(folder), filename: "[name].js", cssFilename: "[name].css", assetModuleFilename: "files/[hash][ext]", clean: { keep: /^practice\// } },
+  // the pane's page is the shared runtime: it loads the functions first and then what the pane adds to them
+  entry: { functions: at("src/functions/associate.ts"), pane: { import: at("src/pane/main.ts"), dependOn: "functions" } },
+  output: {
+    path: at("dist"),
+    filename: "[name].js",
+    chunkFilename: "[name].js",
+    cssFilename: "[name].css",
+    assetModuleFilename: "files/[hash][ext]",
+    clean: { keep: /^practice\// },
+  },
   resolve: { extensionAlias: { ".js": [".ts", ".js"] }, extensions: [".ts", ".js"] },
   module: {
     rules: [
@@ -37,18 +44,7 @@ const bundle = (name, entry, folder, plugins) => ({
     ],
   },
   experiments: { css: true },
-  optimization: { minimizer: [new EsbuildPlugin({ target, css: true, legalComments: "none" })] }, // terser takes minutes over the grid
-  performance: { hints: false }, // size-limit holds the add-in's size
-  cache: { type: "filesystem", name },
-  plugins: [new IconsPlugin(), ...plugins],
-});
-
-const addIn = bundle("add-in", { functions: at("src/functions/associate.ts"), pane: { import: at("src/pane/main.ts"), dependOn: "functions" } }, "dist", [
-  new HtmlPlugin({ filename: "pane.html", template: at("src/pane/pane.html"), chunks: ["functions", "pane"], scriptLoading: "defer" }),
-]);
-
-const practice = bundle("practice", { practice: at("src/practice/main.ts") }, "dist/practice", [
-  new HtmlPlugin({ filename: "index.html", template: at("src/practice/index.html"), scriptLoading: "defer" }),
-]);
-
-export default [addIn, practice];
+  optimization: { minimizer: [new EsbuildPlugin({ target, css: true, legalComments: "none" })] },
+  performance: { hints: false }, // size-limit holds the size
+  plugins: [new IconsPlugin(), new HtmlPlugin({ filename: "pane.html", template: at("src/pane/pane.html"), chunks: ["functions", "pane"], scriptLoading: "defer" })],
+};

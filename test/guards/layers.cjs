@@ -50,9 +50,9 @@ module.exports = {
     },
     {
       name: "no-node-in-pages",
-      comment: "Only the formula line, the build and the practice server run in Node.",
+      comment: "Only the formula line and the build run in Node.",
       severity: "error",
-      from: { path: "^src/", pathNot: "^src/(formula|build|practice/server)/" },
+      from: { path: "^src/", pathNot: "^src/(formula|build)/" },
       to: { dependencyTypes: ["core"] },
     },
     {
@@ -66,7 +66,7 @@ module.exports = {
       name: "workbook-files-in-formula-only",
       comment: "Reading files of a workbook is the formula line's work.",
       severity: "error",
-      from: { path: "^src/", pathNot: "^src/(formula|practice/server)/" },
+      from: { path: "^src/", pathNot: "^src/(formula|build)/" },
       to: { path: "node_modules/(exceljs|jszip)/" },
     },
     {

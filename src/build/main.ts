@@ -1,0 +1,41 @@
+import { mkdir, writeFile } from "node:fs/promises";
+import { fileURLToPath } from "node:url";
+
+const dist = fileURLToPath(new URL("../../dist", import.meta.url));
+
+// Each command loads what it needs and no more: the bundler alone takes half a second to load.
+const COMMANDS: Readonly<Record<string, () => Promise<void>>> = {
+  async build() {
+    const { buildAddIn } = await import("./build-add-in.js");
+    const { buildPractice } = await import("./practice-page.js");
+    for (const { name, bytes } of await buildAddIn()) process.stdout.write(`${name.padEnd(28)} ${(bytes / 1000).toFixed(1).padStart(9)} kB\n`);
+    await buildPractice(`${dist}/practice`);
+  },
+  async start() {
+    const { start } = await import("./start.js");
+    await start(`${dist}/practice`);
+  },
+  async metadata() {
+    const { functionsMetadata } = await import("./metadata.js");
+    const json = await functionsMetadata();
+    await mkdir(dist, { recursive: true });
+    await writeFile(`${dist}/functions.json`, `${JSON.stringify(json, null, 2)}\n`);
+    process.stdout.write(`${json.functions.length} functions: dist/functions.json\n`);
+  },
+  async develop() {
+    const { develop } = await import("./develop.js");
+    await develop();
+  },
+};
+
+const [wanted = ""] = process.argv.slice(2);
+const command = COMMANDS[wanted];
+if (command === undefined) {
+  process.stderr.write(`"${wanted}" is not a command; accepted: ${Object.keys(COMMANDS).join(", ")}.\n`);
+  process.exitCode = 1;
+} else {
+  await command().catch((reason: unknown) => {
+    process.stderr.write(`${reason instanceof Error ? reason.message : String(reason)}\n`);
+    process.exitCode = 1;
+  });
+}
