@@ -54,8 +54,8 @@ export interface InsertedSheet {
   readonly names: readonly string[];
 }
 
-/** What a cell is for; each form of the workbook gives each purpose its own look. */
-export type CellStyle = "title" | "section" | "label" | "input" | "result" | "note" | "head";
+/** What a cell is for (head: over a column of words; numberhead: over a column of numbers); each form of the workbook gives each purpose its own look. */
+export type CellStyle = "title" | "section" | "label" | "input" | "result" | "note" | "head" | "numberhead";
 
 /** How a number shows: 1,234 - 0.25 - 12.5 - 8.0 %; plain numbers without a format show as they are. */
 export type NumberLook = "money" | "ratio" | "metres" | "percent";

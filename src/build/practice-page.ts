@@ -1,0 +1,35 @@
+import { build } from "esbuild";
+import { copyFile, mkdir, writeFile } from "node:fs/promises";
+import { join } from "node:path";
+import { fileURLToPath } from "node:url";
+import { functionsMetadata } from "./metadata.js";
+
+const source = fileURLToPath(new URL("../", import.meta.url));
+
+/**
+ * Bundles the practice page with its grid: one module, its rarely needed parts as files of their own, the worker, styles
+ * and the functions' metadata.
+ *
+ * @param output  folder to write into; made if absent
+ */
+export async function buildPractice(output: string): Promise<void> {
+  await mkdir(output, { recursive: true });
+  const settings = {
+    bundle: true,
+    minify: true,
+    // the grid's libraries hold long tables of characters that would triple in size as escapes
+    charset: "utf8",
+    format: "esm",
+    target: "es2022",
+    outdir: output,
+    legalComments: "none",
+    define: { "process.env.NODE_ENV": '"production"' },
+    logLevel: "warning",
+  } as const;
+  await Promise.all([
+    build({ ...settings, splitting: true, entryPoints: { main: join(source, "practice/main.ts") } }),
+    build({ ...settings, entryPoints: { "counts-worker": join(source, "jobs/counts-worker.ts") } }),
+    copyFile(join(source, "practice/index.html"), join(output, "index.html")),
+    writeFile(join(output, "functions.json"), JSON.stringify(await functionsMetadata())),
+  ]);
+}
