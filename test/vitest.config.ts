@@ -14,7 +14,7 @@ export default defineConfig({
         root,
         test: { name: "units", include: ["test/**/*.test.ts"], exclude: ["test/guards/**", "test/browser/**"], testTimeout: 30_000 },
       },
-      { root, test: { name: "guards", include: ["test/guards/**/*.test.ts"], testTimeout: 120_000 } },
+      { root, test: { name: "guards", include: ["test/guards/**/*.test.ts"], testTimeout: 120_000, hookTimeout: 120_000 } },
       {
         root,
         test: { name: "browser", include: ["test/browser/**/*.test.ts"], testTimeout: 120_000, hookTimeout: 120_000, fileParallelism: false },

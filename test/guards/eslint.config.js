@@ -9,7 +9,7 @@ const PAGES = ["src/host/**/*.ts", "src/pane/**/*.ts", "src/practice/**/*.ts"];
 
 const named = { selector: "ExportDefaultDeclaration", message: "Named exports only: a name that the importer chooses cannot be searched for." };
 const extension = {
-  selector: ":matches(ImportDeclaration, ExportNamedDeclaration, ExportAllDeclaration)[source.value=/^\\.{1,2}\\/(?!.*\\.(js|json|css|html)$)/]",
+  selector: ":matches(ImportDeclaration, ExportNamedDeclaration, ExportAllDeclaration)[source.value=/^\\.{1,2}\\/(?!.*\\.(js|cjs|json|css|html)$)/]",
   message: "A relative import ends in .js, as the runtime resolves it.",
 };
 const skipped = {
