@@ -14,6 +14,7 @@ export async function start(folder: string): Promise<void> {
   await rm(folder, { recursive: true, force: true });
   await buildPractice(folder);
   process.stdout.write(`The demonstration bid, expected costs by number of holes\n\n${await demonstrationTable()}\n\n`);
-  const { address } = await servePractice(folder, PORT);
+  const { address, close } = await servePractice(folder, PORT);
+  for (const signal of ["SIGINT", "SIGTERM"] as const) process.once(signal, () => void close());
   process.stdout.write(`The practice workbook is at ${address} (stop with Ctrl+C). Nothing leaves this machine.\n`);
 }

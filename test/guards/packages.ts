@@ -32,7 +32,7 @@ export function packageFaults(manifest: string, lock: string): string[] {
     const names = Object.keys(asked[kind] ?? {});
     if (names.join() !== [...names].sort().join()) faults.push(`${kind} are not sorted.`);
     for (const [name, version] of Object.entries(asked[kind] ?? {})) {
-      if (!/^\d+\.\d+\.\d+$/.test(version)) faults.push(`${name} is asked for as "${version}"; an exact version is accepted.`);
+      if (!/^\d+\.\d+\.\d+(-[\w.]+)?$/.test(version)) faults.push(`${name} is asked for as "${version}"; an exact version is accepted.`);
       if (name === "xlsx") faults.push("xlsx is frozen with known faults; exceljs reads workbooks.");
       if (packages[`node_modules/${name}`]?.version !== version) faults.push(`${name} ${version} is not what the lock file holds.`);
     }
