@@ -16,8 +16,8 @@ export interface Assessment {
   readonly surprises: number;
   /** chance that the design stays at the longest length and is still not allowable, 0 to 1 */
   readonly tooShortChance: number;
-  /** expected metres beyond what the ground needed, summed over the piles, m */
-  readonly overDesign: number;
+  /** expected metres of all piles together, m */
+  readonly totalMetres: number;
 }
 
 /** One row of the table of counts. */

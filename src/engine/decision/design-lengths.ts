@@ -1,0 +1,47 @@
+import { kilonewtons, kilopascals } from "../../units/quantities.js";
+import { designLength } from "../piles/design-length.js";
+import type { Plan } from "./plan.js";
+import type { Problem } from "./problem.js";
+
+/** Length of each load class at a design value. */
+export interface DesignedClasses {
+  /** one a load of the plan, m */
+  readonly byLoad: Float64Array;
+  /** whether the predicted settlement is allowable for all */
+  readonly allowable: boolean;
+}
+
+/** Design lengths of the plan's loads at one design value (its logarithm, kPa). */
+export function designedClasses(problem: Problem, plan: Plan, lnDesignValue: number): DesignedClasses {
+  const { piles, building, ground } = problem;
+  const byLoad = new Float64Array(plan.loads.length);
+  let allowable = true;
+  for (let c = 0; c < byLoad.length; c++) {
+    const heaviest = piles.lengthRule === "one";
+    if (heaviest && c > 0) {
+      byLoad[c] = byLoad[0];
+      continue;
+    }
+    const found = designLength({
+      load: kilonewtons(plan.loads[c]),
+      diameter: piles.diameter,
+      soilModulus: kilopascals(Math.exp(lnDesignValue)),
+      pileModulus: piles.modulus,
+      allowable: building.allowableSettlement,
+      poisson: ground.poissonRatio,
+      shortest: piles.shortest,
+      longest: piles.longest,
+      step: piles.lengthStep,
+    });
+    byLoad[c] = found.length;
+    allowable &&= found.allowable;
+  }
+  return { byLoad, allowable };
+}
+
+/** Design length of each pile, the metres of all piles, and whether all are allowable. */
+export function designLengths(problem: Problem, plan: Plan, lnDesignValue: number): { lengths: Float64Array; metres: number; allowable: boolean } {
+  const { byLoad, allowable } = designedClasses(problem, plan, lnDesignValue);
+  const lengths = Float64Array.from(plan.loadOf, (c) => byLoad[c]);
+  return { lengths, metres: lengths.reduce((sum, l) => sum + l, 0), allowable };
+}
