@@ -1,3 +1,5 @@
+import { requireDomain } from "../numerics/domain-error.js";
+
 /** What things cost, in the person's own money; what concrete weighs in carbon. */
 export interface Prices {
   /** once for any investigation (count above 0) */
@@ -28,4 +30,53 @@ export interface Delay {
   readonly surpriseTolerance: number;
   /** share of the surprises that is found while piling and put right; the rest settle */
   readonly foundShare: number;
+}
+
+/**
+ * Price of an investigation, with the days that its holes hold up the programme.
+ *
+ * @param prices  the price list
+ * @param count  number of holes, >= 0; with none nothing is mobilised and nothing reported
+ * @param holeDepth  depth of each hole, m, >= 0
+ * @param readingsPerHole  number of readings in each hole, >= 0
+ * @returns money
+ * @throws {DomainError} an argument is negative or not finite
+ */
+export function investigationCost(prices: Prices, count: number, holeDepth: number, readingsPerHole: number): number {
+  requireDomain(Number.isInteger(count) && count >= 0, "Number of holes", count, "a whole number, 0 or above");
+  requireDomain(holeDepth >= 0 && holeDepth < Infinity, "Depth of a hole", holeDepth, "0 m or above");
+  requireDomain(readingsPerHole >= 0 && readingsPerHole < Infinity, "Number of readings in a hole", readingsPerHole, "0 or above");
+  if (count === 0) return 0;
+  const hole = prices.perHole + prices.perHoleMetre * holeDepth + prices.perReading * readingsPerHole + prices.daysPerHole * prices.waitingDay;
+  return prices.mobilisation + count * hole + prices.report;
+}
+
+/**
+ * Price of the piles.
+ *
+ * @param prices  the price list
+ * @param pileCount  number of piles, >= 0; with none no rig comes
+ * @param totalMetres  length of all piles together, m, >= 0
+ * @returns money
+ * @throws {DomainError} an argument is negative or not finite
+ */
+export function foundationCost(prices: Prices, pileCount: number, totalMetres: number): number {
+  requireDomain(Number.isInteger(pileCount) && pileCount >= 0, "Number of piles", pileCount, "a whole number, 0 or above");
+  requireDomain(totalMetres >= 0 && totalMetres < Infinity, "Metres of pile", totalMetres, "0 m or above");
+  return pileCount === 0 ? 0 : prices.rig + pileCount * prices.perPile + totalMetres * prices.perPileMetre;
+}
+
+/**
+ * Carbon of the concrete of solid round piles.
+ *
+ * @param prices  the price list, of which the carbon of a cubic metre is used
+ * @param diameter  of the piles, m, > 0
+ * @param totalMetres  length of all piles together, m, >= 0
+ * @returns kg CO2e
+ * @throws {DomainError} an argument is out of range
+ */
+export function concreteCarbon(prices: Prices, diameter: number, totalMetres: number): number {
+  requireDomain(diameter > 0 && diameter < Infinity, "Pile diameter", diameter, "above 0 m");
+  requireDomain(totalMetres >= 0 && totalMetres < Infinity, "Metres of pile", totalMetres, "0 m or above");
+  return prices.carbonPerCubicMetre * (Math.PI / 4) * diameter ** 2 * totalMetres;
 }
