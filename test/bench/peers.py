@@ -1,0 +1,54 @@
+"""The same computations in numpy and scipy, for the benchmark's ratios.
+
+Speaks lines of JSON: {"load": name, "input": {...}} once a case, then {"time": true} for one timed run.
+Arrays arrive and leave as base64 of little-endian doubles.
+"""
+
+import base64
+import json
+import sys
+import time
+
+import numpy as np
+
+
+def band_solve(band, load, n, half):
+    """LAPACK's band Cholesky (pbtrf, pbtrs) on the lower band of an n x n matrix, rows of half + 1."""
+    from scipy.linalg import cho_solve_banded, cholesky_banded
+
+    # ours stands row by row (columns i - half ... i); LAPACK wants the diagonals as rows
+    rows = band.reshape(n, half + 1)
+    lower = np.zeros((half + 1, n))
+    for k in range(half + 1):
+        lower[k, : n - k] = rows[k:, half - k]
+
+    def work():
+        return cho_solve_banded((cholesky_banded(lower, lower=True, check_finite=False), True), load, check_finite=False)
+
+    return work
+
+
+PEERS = {"band_solve": band_solve}
+
+
+def decoded(value):
+    return np.frombuffer(base64.b64decode(value), "<f8").copy() if isinstance(value, str) else value
+
+
+def main():
+    work = None
+    for line in sys.stdin:
+        request = json.loads(line)
+        if "load" in request:
+            work = PEERS[request["load"]](**{name: decoded(value) for name, value in request["input"].items()})
+            work()  # the first call pays for imports and for memory
+            print(json.dumps({"ready": True}), flush=True)
+        else:
+            begun = time.perf_counter()
+            answer = work()
+            took = (time.perf_counter() - begun) * 1e3
+            text = base64.b64encode(np.ascontiguousarray(answer, "<f8").tobytes()).decode()
+            print(json.dumps({"milliseconds": took, "answer": text}), flush=True)
+
+
+main()
