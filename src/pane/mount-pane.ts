@@ -1,0 +1,125 @@
+import "./parts/fluent.js";
+import { siteSheet } from "../host/site-sheet.js";
+import type { InsertedSheet, SheetPlan, Workbook } from "../host/workbook.js";
+import { PRODUCT_VERSION } from "../results/version.js";
+import { exampleSheet } from "./model/example-sheet.js";
+import type { FunctionMetadata } from "./model/help-entries.js";
+import { copyText } from "./parts/clipboard.js";
+import { element } from "./parts/element.js";
+import { toolMark } from "./parts/marks.js";
+import { hatchPatterns } from "./parts/patterns.js";
+import { statusLine } from "./parts/status-line.js";
+import { tabs, type TabView } from "./parts/tabs.js";
+import { themeSwitch } from "./parts/theme.js";
+import { Pricing, type WorkerLike } from "./pricing.js";
+import { ResultsStore } from "./results-store.js";
+import { SiteStore } from "./site-store.js";
+import { startCountsWorker } from "./start-worker.js";
+import { adoptStyles } from "./style/adopt-styles.js";
+import { helpView } from "./views/help-view.js";
+import { resultsView } from "./views/results-view.js";
+import { siteView } from "./views/site-view.js";
+
+/** What a page may tell the pane about itself. */
+export interface PaneOptions {
+  /** functions.json as parsed; omitted where it could not be read */
+  readonly functions?: { readonly functions: readonly FunctionMetadata[] };
+  /** what stands before the functions' names; "PROBE" when omitted */
+  readonly namespace?: string;
+  /** version of the cell functions as they themselves state it; omitted where they are part of the same program */
+  readonly functionsVersion?: string;
+  /** starts the engine's thread; omitted: the one that the build puts beside the page */
+  readonly startWorker?: () => WorkerLike;
+  /** language of the numbers; the person's own when omitted */
+  readonly locale?: string;
+}
+
+/** A pane in place. */
+export interface Pane {
+  /** takes the pane off the page and ends its thread */
+  unmount(): void;
+}
+
+/**
+ * Puts the pane into an element of a page. The pane knows nothing of Excel: it asks the workbook.
+ *
+ * @param host      element that becomes the pane; its contents are replaced
+ * @param workbook  the workbook beside it; undefined: the page has none, and only the help is shown
+ * @param options   what the page tells about itself
+ */
+export function mountPane(host: HTMLElement, workbook: Workbook | undefined, options: PaneOptions = {}): Pane {
+  adoptStyles();
+  const root = element("div", { class: "probeworth" });
+  // The theme of the controls only takes hold of an element that is on the page.
+  host.replaceChildren(root);
+  const { line, tell } = statusLine();
+  const theme = themeSwitch(root, tell);
+  const working = workbook === undefined ? undefined : workingViews(workbook, options, tell);
+  const views = tabs([...(working?.views ?? []), helpTab(workbook, options, tell)]);
+  const header = element("header", { class: "header" }, element("h1", {}, toolMark(), "Probeworth"), theme.button);
+  root.append(hatchPatterns(), element("div", { class: "top" }, header, views.list), element("main", { class: "main" }, ...views.panels), line);
+  return {
+    unmount: () => {
+      theme.stop();
+      working?.close();
+      host.replaceChildren();
+    },
+  };
+}
+
+function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence: string) => void): { readonly views: TabView[]; readonly close: () => void } {
+  const site = new SiteStore(workbook);
+  const pricing = new Pricing(options.startWorker ?? startCountsWorker);
+  const results = new ResultsStore(pricing, tell);
+  const insertTemplate = async (): Promise<void> => {
+    const inserted = await addSheet(workbook, siteSheet(), tell);
+    const name = inserted?.names[0];
+    if (inserted === undefined || name === undefined) return;
+    await site.choose({ kind: "name", name });
+    tell(`The template stands on the new sheet ${inserted.sheet} under the name ${name}. Replace its figures with your own.`);
+  };
+  const actions = {
+    choose: (source: Parameters<SiteStore["choose"]>[0]) => void site.choose(source),
+    readAgain: () => void site.read().then(() => tell(site.state.place === undefined ? "Nothing could be read." : "Read again.")),
+    insertTemplate: () => void insertTemplate(),
+  };
+  site.subscribe((state) => results.take(state));
+  void site.open().catch((reason: unknown) => tell(`The workbook could not be read: ${inWords(reason)}.`));
+  return {
+    views: [
+      { name: "Site", content: siteView(site, actions, options.locale) },
+      { name: "Results", content: resultsView(results, options.locale), seen: (visible) => results.look(visible) },
+    ],
+    close: () => {
+      site.close();
+      pricing.close();
+    },
+  };
+}
+
+function helpTab(workbook: Workbook | undefined, options: PaneOptions, tell: (sentence: string) => void): TabView {
+  const versions = [
+    { part: "Pane", version: PRODUCT_VERSION },
+    { part: "Cell functions", version: options.functionsVersion ?? PRODUCT_VERSION },
+  ];
+  const insert = async (id: string, formula: string): Promise<void> => {
+    const inserted = workbook === undefined ? undefined : await addSheet(workbook, exampleSheet(id, formula), tell);
+    if (inserted !== undefined) tell(`The example stands on the new sheet ${inserted.sheet}.`);
+  };
+  const content = { functions: options.functions?.functions, namespace: options.namespace ?? "PROBE", versions };
+  const actions = { copy: copyText, insert: workbook === undefined ? undefined : (id: string, formula: string) => void insert(id, formula), tell };
+  return { name: "Help", content: helpView(content, actions) };
+}
+
+async function addSheet(workbook: Workbook, plan: SheetPlan, tell: (sentence: string) => void): Promise<InsertedSheet | undefined> {
+  try {
+    return await workbook.insertSheet(plan);
+  } catch (reason) {
+    tell(`No sheet could be added: ${inWords(reason)}.`);
+    return undefined;
+  }
+}
+
+function inWords(reason: unknown): string {
+  return (reason instanceof Error ? reason.message : String(reason)).replace(/\.$/, "");
+}

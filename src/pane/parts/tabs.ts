@@ -1,0 +1,36 @@
+import { element, freshId } from "./element.js";
+import type { FluentTablist } from "./fluent.js";
+
+/** One view behind a tab. */
+export interface TabView {
+  readonly name: string;
+  readonly content: HTMLElement;
+  /** told when the view comes into sight or leaves it */
+  readonly seen?: (visible: boolean) => void;
+}
+
+/**
+ * A row of tabs with their panels; arrows move between tabs, Tab goes into the panel.
+ *
+ * @param views  at least one; the first is shown
+ */
+export function tabs(views: readonly TabView[]): { readonly list: HTMLElement; readonly panels: readonly HTMLElement[] } {
+  const ids = views.map(() => ({ tab: freshId("tab"), panel: freshId("panel") }));
+  const list = element("fluent-tablist", { class: "tabs", size: "small", "aria-label": "Views", activeid: ids[0]!.tab }) as FluentTablist;
+  list.append(...views.map((view, k) => element("fluent-tab", { id: ids[k]!.tab, "aria-controls": ids[k]!.panel }, view.name)));
+  const panels = views.map((view, k) => element("div", { id: ids[k]!.panel, class: "panel", role: "tabpanel", "aria-labelledby": ids[k]!.tab, tabindex: -1, hidden: k > 0 }, view.content));
+  let shown = 0;
+  list.addEventListener("change", (event) => {
+    // Fields inside a tab would send their own change events through here.
+    if (event.target !== list) return;
+    const next = ids.findIndex((id) => id.tab === list.activeid);
+    if (next < 0 || next === shown) return;
+    panels.forEach((panel, k) => {
+      panel.hidden = k !== next;
+    });
+    views[shown]!.seen?.(false);
+    shown = next;
+    views[shown]!.seen?.(true);
+  });
+  return { list, panels };
+}

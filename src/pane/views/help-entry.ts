@@ -1,0 +1,64 @@
+import type { HelpEntry } from "../model/help-entries.js";
+import { element } from "../parts/element.js";
+
+/** What the buttons of an example do. */
+export interface ExampleActions {
+  /** puts the formula on the clipboard; false where the browser forbids it */
+  readonly copy: (formula: string) => Promise<boolean>;
+  /** puts the formula on a new sheet; undefined where there is no workbook */
+  readonly insert: ((id: string, formula: string) => void) | undefined;
+  readonly tell: (sentence: string) => void;
+}
+
+/**
+ * One function, folded; its inside is made when it is first opened, because there are many.
+ *
+ * @param entry    the function
+ * @param actions  what the buttons do
+ */
+export function helpEntry(entry: HelpEntry, actions: ExampleActions): HTMLElement {
+  const head = element("summary", {}, element("span", { class: "function-name" }, entry.id), element("span", { class: "function-words" }, entry.description));
+  const made = element("details", { class: "group function" }, head);
+  made.addEventListener("toggle", () => {
+    if (made.open && made.childElementCount === 1) made.append(inside(entry, actions));
+  });
+  return made;
+}
+
+function inside(entry: HelpEntry, actions: ExampleActions): HTMLElement {
+  const parameters = entry.parameters.flatMap((parameter) => [
+    element("dt", {}, element("code", {}, parameter.name), parameter.need === "required" ? undefined : element("span", { class: "need" }, ` ${parameter.need}`)),
+    element("dd", {}, parameter.description),
+  ]);
+  const list = parameters.length === 0 ? element("p", {}, "It takes no arguments.") : element("dl", { class: "parameters" }, ...parameters);
+  return element("div", { class: "function-body" }, element("p", { class: "call" }, element("code", {}, breakable(entry.call))), list, entry.example === undefined ? undefined : example(entry.id, entry.example, actions));
+}
+
+function example(id: string, formula: string, actions: ExampleActions): HTMLElement {
+  const shown = element("code", { class: "formula", tabindex: -1 }, formula);
+  const copy = element("fluent-button", { size: "small", appearance: "outline", "aria-label": `Copy the example of ${id}` }, "Copy");
+  copy.addEventListener("click", () => {
+    void actions.copy(formula).then((copied) => {
+      if (copied) actions.tell("Copied. Paste it into a cell.");
+      else {
+        // Without leave to use the clipboard the person copies by hand; the text is already marked for that.
+        window.getSelection()?.selectAllChildren(shown);
+        shown.focus();
+        actions.tell("The clipboard is closed to this pane. The formula is marked; copy it with the keyboard.");
+      }
+    });
+  });
+  const buttons = element("div", { class: "row" }, copy);
+  if (actions.insert !== undefined) {
+    const insert = actions.insert;
+    const button = element("fluent-button", { size: "small", appearance: "outline", "aria-label": `Put the example of ${id} on a new sheet` }, "Put on a new sheet");
+    button.addEventListener("click", () => insert(id, formula));
+    buttons.append(button);
+  }
+  return element("div", { class: "example" }, shown, buttons);
+}
+
+/** Lets a long call break after a comma and after the full stop, which the pane's width needs. */
+function breakable(call: string): string {
+  return call.replace(/([.(])/g, "$1\u200b");
+}
