@@ -60,8 +60,9 @@ export default tseslint.config(
   { files: ["src/pane/**/*.ts", "src/practice/**/*.ts"], rules: { "no-restricted-globals": ["error", ...dialogs, ...excel] } },
   { files: ["src/host/**/*.ts"], rules: { "no-restricted-globals": ["error", ...dialogs] } },
   { files: ["**/*.d.ts"], rules: { "no-restricted-syntax": "off" } }, // the shape of somebody else's module
-  { files: ["src/**/*.ts"], rules: { "max-lines": ["error", { max: 200, skipBlankLines: true, skipComments: true }] } },
-  { files: PURE, rules: { "max-lines": ["error", { max: 150, skipBlankLines: true, skipComments: true }] } },
+  // about 150 lines in the engine and 200 elsewhere; what is well above is two ideas
+  { files: ["src/**/*.ts"], rules: { "max-lines": ["error", { max: 220, skipBlankLines: true, skipComments: true }] } },
+  { files: PURE, rules: { "max-lines": ["error", { max: 180, skipBlankLines: true, skipComments: true }] } },
   {
     // a table is as long as its rows
     files: ["src/**/*-table.ts", "src/**/*-numbers.ts", "src/**/*-plans.ts", "src/inputs/catalogue*.ts", "src/host/demonstration*.ts", "src/inputs/methods.ts", "src/inputs/ground-kinds.ts"],
