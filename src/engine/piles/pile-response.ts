@@ -19,13 +19,14 @@ export interface PileResponse {
   readonly length: Metres;
   /** ln of the head stiffness in the median ground, K in kN/m */
   readonly lnStiffness: number;
-  /** representative radius of each ring, m, increasing; the same for all lengths of one diameter. Rings under the shaft have weight below the tip only */
+  /** representative radius of each ring, m, increasing; the same for all lengths of one diameter. The first ring lies under the shaft and has weight below the tip only */
   readonly rings: Float64Array;
   /** depths that bound the levels, m, one more than there are levels, from 0 */
   readonly levelBounds: Float64Array;
   /** energy shares w, rings x levels, ring by ring (ring * levels + level); their sum is below 1, the pile takes the rest */
   readonly weights: Float64Array;
-  /** kappa, the sum of the energy shares, 0 to 1 */
+  /** kappa, the sum of the energy shares, 0 to 1: what ln stiffness gains when all ground is stiffer by a factor e, to first order */
   readonly weightSum: number;
-  readonly form: GroupedForm;
+  /** the second-order form, where it was asked for */
+  readonly form: GroupedForm | undefined;
 }
