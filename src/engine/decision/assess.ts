@@ -1,12 +1,13 @@
 import { concreteCarbon, investigationCost } from "../costs/prices.js";
 import { normalQuantile } from "../numerics/normal.js";
 import { requireDomain } from "../numerics/domain-error.js";
-import { weightedPercentile } from "../numerics/percentile.js";
+import { percentile as percentileOf, weightedPercentile } from "../numerics/percentile.js";
 import { readingDepths } from "../investigation/reading-depths.js";
 import type { Assessment } from "./assessment.js";
-import { designedClasses } from "./design-lengths.js";
+import { designedClasses, designLengths } from "./design-lengths.js";
+import { lnDesignValues, outerNodes } from "./design-law.js";
 import { expectedOutcome, type Outcome } from "./expected-outcome.js";
-import { holeCovariance } from "./node-moments.js";
+import { holeCovariance } from "./hole-covariance.js";
 import { preparedSite } from "./prepared-site.js";
 import type { Problem } from "./problem.js";
 import { Remembered } from "./remembered.js";
@@ -66,10 +67,10 @@ export function contingency(problem: Problem, count: number, percentile: number)
   return weightedPercentile(costs, weights, percentile) - weightedPercentile(costs, weights, 50);
 }
 
-/** Percentiles of pile lengths; all lengths move together with the one design value, so percentiles of lengths and of metres agree. */
+/** Percentiles of pile lengths. Where all piles follow one design value their lengths move together, and every row is one design. */
 export interface LengthTable {
   readonly percentiles: readonly number[];
-  /** piles of equal load, heaviest first, with their length at each percentile, m */
+  /** piles of equal load, heaviest first, with their (mean) length at each percentile, m */
   readonly groups: readonly { readonly load: number; readonly piles: number; readonly lengths: readonly number[] }[];
   readonly meanLength: readonly number[];
   readonly totalMetres: readonly number[];
@@ -83,21 +84,40 @@ export interface LengthTable {
  */
 export function pileLengthTable(problem: Problem, count: number, percentiles: readonly number[]): LengthTable {
   requireCount(count);
+  for (const p of percentiles) requireDomain(p > 0 && p < 100, "Percentile", p, "above 0 and below 100");
+  const { plan } = preparedSite(problem).model;
+  const sizes = Array.from(plan.loads, (_, c) => plan.loadOf.filter((of) => of === c).length);
+  const lengthsOf = sampledLengths(problem, count);
+  const groups = sizes.map((piles, c) => ({
+    load: plan.loads[c],
+    piles,
+    lengths: lengthsOf(percentiles, (lengths) => lengths.reduce((sum, length, i) => sum + (plan.loadOf[i] === c ? length : 0), 0) / piles),
+  }));
+  const meanLength = lengthsOf(percentiles, (lengths) => lengths.reduce((sum, length) => sum + length, 0) / lengths.length);
+  return { percentiles, groups, meanLength, totalMetres: meanLength.map((mean) => mean * plan.piles.length) };
+}
+
+/** Percentiles of a quantity of the pile lengths: exact for one design value, from a quasi-random set for one a hole. */
+function sampledLengths(problem: Problem, count: number): (percentiles: readonly number[], quantity: (lengths: Float64Array) => number) => number[] {
   const site = preparedSite(problem);
   const { plan } = site.model;
-  const design = site.design(count);
-  const rows = percentiles.map((percentile) => {
-    requireDomain(percentile > 0 && percentile < 100, "Percentile", percentile, "above 0 and below 100");
-    // Soft readings make long piles: the percentile of length is the opposite one of the design value.
-    return designedClasses(problem, plan, design.mean - normalQuantile(percentile / 100) * Math.sqrt(design.variance)).byLoad;
+  const law = site.design(count);
+  if (law.size <= 1) {
+    return (percentiles, quantity) =>
+      percentiles.map((p) => {
+        // Soft readings make long piles: the percentile of length is the opposite one of the design value.
+        const { byLoad } = designedClasses(problem, plan, law.mean - (law.size === 0 ? 0 : normalQuantile(p / 100) * law.root[0]));
+        return quantity(Float64Array.from(plan.loadOf, (c) => byLoad[c]));
+      });
+  }
+  const nodes = outerNodes(law, problem.seed);
+  const designs = Array.from(nodes.weights, (_, node) => {
+    const normals = nodes.normals.subarray(node * law.size, (node + 1) * law.size);
+    return designLengths(problem, plan, lnDesignValues(law, normals), law.ofPile).lengths;
   });
-  const sizes = Array.from(plan.loads, (_, c) => plan.loadOf.filter((of) => of === c).length);
-  const totalMetres = rows.map((byLoad) => sizes.reduce((sum, size, c) => sum + size * byLoad[c], 0));
-  return {
-    percentiles,
-    groups: sizes.map((piles, c) => ({ load: plan.loads[c], piles, lengths: rows.map((byLoad) => byLoad[c]) })),
-    meanLength: totalMetres.map((total) => total / plan.piles.length),
-    totalMetres,
+  return (percentiles, quantity) => {
+    const values = designs.map(quantity);
+    return percentiles.map((p) => percentileOf(values, p));
   };
 }
 
@@ -109,19 +129,20 @@ export function pileLengthTable(problem: Problem, count: number, percentiles: re
  * @throws {DomainError} an argument is out of range
  */
 export function pileLengthPercentile(problem: Problem, count: number, percentile: number, pile?: number): number {
-  const table = pileLengthTable(problem, count, [percentile]);
-  if (pile === undefined) return table.meanLength[0];
-  const piles = problem.building.piles;
-  requireDomain(Number.isInteger(pile) && pile >= 1 && pile <= piles.length, "Pile", pile, `a whole number from 1 to ${piles.length}`);
-  return table.groups.find((group) => group.load === piles[pile - 1].load)!.lengths[0];
+  if (pile === undefined) return pileLengthTable(problem, count, [percentile]).meanLength[0];
+  requireCount(count);
+  requireDomain(percentile > 0 && percentile < 100, "Percentile", percentile, "above 0 and below 100");
+  const piles = problem.building.piles.length;
+  requireDomain(Number.isInteger(pile) && pile >= 1 && pile <= piles, "Pile", pile, `a whole number from 1 to ${piles}`);
+  return sampledLengths(problem, count)([percentile], (lengths) => lengths[pile - 1])[0];
 }
 
 function outcomeOf(problem: Problem, count: number, keep: boolean): Outcome {
   const site = preparedSite(problem);
-  const design = site.design(count);
-  const holes = holeCovariance(site.model, site.layout(count), design);
+  const law = site.design(count);
+  const holes = holeCovariance(site.model, site.layout(count), law);
   const piles = problem.building.piles.length;
-  return expectedOutcome(problem, site.model, holes, design, standardDraws(piles, problem.delay.foundShare > 0, problem.seed), keep);
+  return expectedOutcome(problem, site.model, holes, law, standardDraws(piles, problem.delay.foundShare > 0, problem.seed), keep);
 }
 
 function requireCount(count: number): void {

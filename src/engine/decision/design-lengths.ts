@@ -39,9 +39,16 @@ export function designedClasses(problem: Problem, plan: Plan, lnDesignValue: num
   return { byLoad, allowable };
 }
 
-/** Design length of each pile, the metres of all piles, and whether all are allowable. */
-export function designLengths(problem: Problem, plan: Plan, lnDesignValue: number): { lengths: Float64Array; metres: number; allowable: boolean } {
-  const { byLoad, allowable } = designedClasses(problem, plan, lnDesignValue);
-  const lengths = Float64Array.from(plan.loadOf, (c) => byLoad[c]);
-  return { lengths, metres: lengths.reduce((sum, l) => sum + l, 0), allowable };
+/**
+ * Design length of each pile, the metres of all piles, and whether all are allowable.
+ *
+ * @param lnDesignValues  logarithms of the design values, kPa
+ * @param ofPile          which of them each pile follows
+ */
+export function designLengths(
+  problem: Problem, plan: Plan, lnDesignValues: Float64Array, ofPile: Int32Array,
+): { lengths: Float64Array; metres: number; allowable: boolean } {
+  const designed = Array.from(lnDesignValues, (value) => designedClasses(problem, plan, value));
+  const lengths = Float64Array.from(plan.loadOf, (c, i) => designed[ofPile[i]].byLoad[c]);
+  return { lengths, metres: lengths.reduce((sum, l) => sum + l, 0), allowable: designed.every((d) => d.allowable) };
 }

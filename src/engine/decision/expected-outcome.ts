@@ -1,18 +1,16 @@
 import { damageShare } from "../costs/damage.js";
 import { foundationCost } from "../costs/prices.js";
-import type { DesignDistribution } from "../investigation/design-distribution.js";
 import { gaussLegendre } from "../numerics/gauss-legendre.js";
-import type { HoleCovariance } from "./node-moments.js";
+import { lnDesignValues, outerNodes, totalDraws, type DesignLaw } from "./design-law.js";
+import type { HoleCovariance } from "./hole-covariance.js";
 import { nodeMoments } from "./node-moments.js";
 import { chanceTooSoft, expectedLnStiffness, lengthLaws, type LengthLaws } from "./needed-length.js";
 import { damageThreshold, drawDistortions, type FoundSurprises } from "./node-draws.js";
 import { designLengths } from "./design-lengths.js";
-import { outerNodes } from "./outer-rule.js";
 import type { Problem } from "./problem.js";
 import type { SiteModel } from "./site-model.js";
 
-/** Draws of the ground at each node of the design value, and blocks of them whose scatter gives the standard error. */
-export const drawsPerNode = 128;
+/** Blocks of draws whose scatter gives the standard error. */
 const replicates = 4;
 
 /** Expected outcome of one count, apart from the investigation itself. */
@@ -36,22 +34,22 @@ export interface Outcome {
  *
  * @param problem  prices, damage, loads
  * @param model    ground under the piles
- * @param holes    what the holes say of it
- * @param design   distribution of the log design value
+ * @param holes    what the design values say of it
+ * @param law      of the design values
  * @param draws    standard normals, dimension by dimension: 2 a pile, then uniforms, 1 a pile, where surprises are found
  * @param keep     whether each draw's cost is kept
  */
 export function expectedOutcome(
-  problem: Problem, model: SiteModel, holes: HoleCovariance, design: DesignDistribution, draws: Float64Array, keep: boolean,
+  problem: Problem, model: SiteModel, holes: HoleCovariance, law: DesignLaw, draws: Float64Array, keep: boolean,
 ): Outcome {
   const { plan } = model;
   const n = plan.piles.length;
   const { building, delay, prices } = problem;
-  const nodes = outerNodes(design.variance);
-  const totalDraws = nodes.deviations.length * drawsPerNode;
-  const stride = outerNodes(1).deviations.length * drawsPerNode;
-  const costs = new Float64Array(keep ? totalDraws : 0);
-  const weights = new Float64Array(keep ? totalDraws : 0);
+  const nodes = outerNodes(law, problem.seed);
+  const { drawsPerNode } = nodes;
+  const kept = keep ? nodes.weights.length * drawsPerNode : 0;
+  const costs = new Float64Array(kept);
+  const weights = new Float64Array(kept);
   const distortion = new Float64Array(drawsPerNode);
   const foundCount = new Float64Array(drawsPerNode);
   const threshold = damageThreshold(building.damage);
@@ -59,11 +57,12 @@ export function expectedOutcome(
   const sum = { foundation: 0, failure: 0, delay: 0, failureChance: 0, surprises: 0, tooShort: 0, metres: 0 };
   const replicate = new Float64Array(replicates);
   const laws = lengthLaws(model);
-  for (let node = 0; node < nodes.deviations.length; node++) {
+  for (let node = 0; node < nodes.weights.length; node++) {
     const weight = nodes.weights[node];
-    const deviation = nodes.deviations[node];
-    const { lengths, metres, allowable } = designLengths(problem, plan, design.mean + deviation);
-    const moments = nodeMoments(model, holes, design, deviation, lengths);
+    const normals = nodes.normals.subarray(node * law.size, (node + 1) * law.size);
+    const { lengths, metres, allowable } = designLengths(problem, plan, lnDesignValues(law, normals), law.ofPile);
+    const bend = law.bend === 0 ? 0 : (law.bend * normals[0]) / law.root[0];
+    const moments = nodeMoments(model, holes, normals, lengths, bend);
     const foundation = foundationCost(prices, n, metres);
     sum.foundation += weight * foundation;
     sum.metres += weight * metres;
@@ -71,7 +70,7 @@ export function expectedOutcome(
     let surprises = 0;
     let extension = 0;
     for (let i = 0; i < n; i++) {
-      const at = surpriseOf(problem, lengths[i], (length) => chanceTooSoft(laws, model, holes, i, length, design, deviation, needed[i]));
+      const at = surpriseOf(problem, lengths[i], (length) => chanceTooSoft(laws, model, holes, i, length, normals, needed[i]));
       surprises += at.chance;
       extension += at.extension;
     }
@@ -80,7 +79,7 @@ export function expectedOutcome(
     const nodeDelay = delay.foundShare * (surprises * perFound + extension * prices.perPileMetre);
     sum.delay += weight * nodeDelay;
     const found = delay.foundShare > 0 ? foundSurprises(problem, moments.lengths, laws, needed) : undefined;
-    drawDistortions(plan, moments, { values: draws, count: stride, first: node * drawsPerNode, size: drawsPerNode }, found, distortion, foundCount);
+    drawDistortions(plan, moments, { values: draws, count: totalDraws, first: node * drawsPerNode, size: drawsPerNode }, found, distortion, foundCount);
     const each = surprises > 0 ? nodeDelay / (delay.foundShare * surprises || 1) : 0;
     for (let m = 0; m < drawsPerNode; m++) {
       const loss = distortion[m] > threshold ? building.value * damageShare(building.damage, distortion[m]) : 0;

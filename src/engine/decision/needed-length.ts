@@ -1,7 +1,6 @@
 import { normalDistribution } from "../numerics/normal.js";
 import { lagrangeWeights } from "../numerics/lagrange.js";
-import type { DesignDistribution } from "../investigation/design-distribution.js";
-import type { HoleCovariance } from "./node-moments.js";
+import type { HoleCovariance } from "./hole-covariance.js";
 import type { SiteModel } from "./site-model.js";
 import { ranks } from "./structure-tables.js";
 
@@ -74,19 +73,18 @@ export function expectedLnStiffness(laws: LengthLaws, length: number): number {
 }
 
 /**
- * Chance that a pile is softer than needed at a trial length, given the design value.
+ * Chance that a pile is softer than needed at a trial length, given the design values.
  *
  * @param laws       of the site
  * @param model      ground under the piles
- * @param holes      what the holes say of it
+ * @param holes      what the design values say of it
  * @param pile       index of the pile
  * @param length     trial length, m
- * @param design     distribution of the design value
- * @param deviation  ln design value less its mean
+ * @param normals    the normals behind the design values
  * @param needed     ln stiffness that makes the settlement allowable
  */
 export function chanceTooSoft(
-  laws: LengthLaws, model: SiteModel, holes: HoleCovariance, pile: number, length: number, design: DesignDistribution, deviation: number, needed: number,
+  laws: LengthLaws, model: SiteModel, holes: HoleCovariance, pile: number, length: number, normals: Float64Array, needed: number,
 ): number {
   const { at, t } = place(laws, length);
   const along = (values: Float64Array): number => (1 - t) * values[at] + t * values[at + 1];
@@ -94,13 +92,17 @@ export function chanceTooSoft(
   const curve = along(laws.curve);
   let mean = 0;
   let variance = total;
-  if (design.variance > 0) {
+  const { size } = holes;
+  if (size > 0) {
     const grid = model.family.logLengths;
     const { start, weights } = lagrangeWeights(grid, clamp(Math.log(length), grid[0], grid[grid.length - 1]));
-    let toDesign = 0;
-    for (let q = 0; q < 4; q++) toDesign += weights[q] * holes.design[pile * grid.length + start + q];
-    mean = (toDesign * deviation) / design.variance;
-    variance = Math.max(total - toDesign ** 2 / design.variance, 0);
+    for (let s = 0; s < size; s++) {
+      let toNormal = 0;
+      for (let q = 0; q < 4; q++) toNormal += weights[q] * holes.design[(pile * grid.length + start + q) * size + s];
+      mean += toNormal * normals[s];
+      variance -= toNormal ** 2;
+    }
+    variance = Math.max(variance, 0);
   }
   const gap = needed - along(laws.base) - curve * total;
   let threshold = gap;

@@ -1,50 +1,10 @@
 import { choleskyInPlace } from "../numerics/cholesky.js";
 import { lagrangeWeights } from "../numerics/lagrange.js";
-import type { DesignDistribution } from "../investigation/design-distribution.js";
-import type { LayoutTables } from "./layout.js";
+import type { HoleCovariance } from "./hole-covariance.js";
 import type { SiteModel } from "./site-model.js";
 import { ranks } from "./structure-tables.js";
 
-/** What the holes say of each pile's ground, in the units of ln stiffness, gain and slope included. */
-export interface HoleCovariance {
-  /** Cov(Z of pile i at length k, design value): piles x lengths */
-  readonly design: Float64Array;
-  /** per node, Cov(v of form f and rank r under pile i, design value): piles x forms x ranks */
-  readonly curves: readonly [Float64Array, Float64Array];
-  /** what each group of readings tells beyond the mean: piles x lengths x groups; empty where the rule is linear */
-  readonly beyond: Float64Array;
-  readonly groupShares: Float64Array;
-}
-
-/** Scales the hole tables of the two nodes to the problem; without holes all is zero. */
-export function holeCovariance(model: SiteModel, tables: readonly [LayoutTables, LayoutTables] | undefined, design: DesignDistribution): HoleCovariance {
-  const { groundVariance, regionalVariance, slopes, weightSums, shares, nodes } = model;
-  const piles = model.plan.piles.length;
-  const lengths = slopes.length;
-  const forms = model.family.formIndices.length;
-  if (tables === undefined || design.variance === 0) {
-    const none = new Float64Array(piles * forms * ranks);
-    return { design: new Float64Array(piles * lengths), curves: [none, none], beyond: new Float64Array(0), groupShares: new Float64Array(0) };
-  }
-  const blend = (at: number): number => shares[0] * tables[0].mean[at] + shares[1] * tables[1].mean[at];
-  const mean = Float64Array.from({ length: piles * lengths }, (_, at) => {
-    const k = at % lengths;
-    return design.gain * (groundVariance * slopes[k] * blend(at) + regionalVariance * weightSums[k]);
-  });
-  const curves = tables.map((t, b) =>
-    t.curves.map((unit, at) => design.gain * (groundVariance * unit + regionalVariance * nodes[b].tables.curveSums[at % (forms * ranks)])),
-  ) as unknown as [Float64Array, Float64Array];
-  const columns = tables[0].groupCount;
-  const beyond = design.bend === 0 ? new Float64Array(0) : new Float64Array(piles * lengths * columns);
-  for (let at = 0; at < beyond.length; at++) {
-    const row = Math.floor(at / columns);
-    const unit = shares[0] * tables[0].groups[at] + shares[1] * tables[1].groups[at];
-    beyond[at] = groundVariance * slopes[row % lengths] * (unit - blend(row));
-  }
-  return { design: mean, curves, beyond, groupShares: tables[0].groupShares };
-}
-
-/** The piles at one design value: moments of Z and the quadratic that stands for Q, all given the design value. */
+/** The piles at one node: moments of Z and the quadratic that stands for Q, all given the design values. */
 export interface NodeMoments {
   /** design length of each pile, m */
   readonly lengths: Float64Array;
@@ -64,32 +24,31 @@ export interface NodeMoments {
 export const quadraticWidth = 21;
 
 /**
- * Moments of all piles given the design value.
+ * Moments of all piles given the design values.
  *
- * @param model      ground under the piles
- * @param holes      what the holes say of it
- * @param design     distribution of the design value
- * @param deviation  ln design value less its mean
- * @param lengths    design length of each pile, m
+ * @param model    ground under the piles
+ * @param holes    what the design values say of it
+ * @param normals  the normals behind the design values, at this node
+ * @param lengths  design length of each pile, m
+ * @param bend     spread-based rules: the bend of the covariance times the deviation over its variance; else 0
  */
-export function nodeMoments(model: SiteModel, holes: HoleCovariance, design: DesignDistribution, deviation: number, lengths: Float64Array): NodeMoments {
+export function nodeMoments(model: SiteModel, holes: HoleCovariance, normals: Float64Array, lengths: Float64Array, bend: number): NodeMoments {
   const { plan, family } = model;
   const n = plan.piles.length;
   const count = family.lengths.length;
+  const { size } = holes;
   const starts = new Int32Array(n);
   const weights = new Float64Array(n * 4);
   interpolation(family.logLengths, lengths, starts, weights);
   const means = new Float64Array(n);
-  const c = new Float64Array(n);
-  const perVariance = design.variance > 0 ? 1 / design.variance : 0;
+  const c = new Float64Array(n * size);
   for (let i = 0; i < n; i++) {
-    let stiffness = 0;
     for (let q = 0; q < 4; q++) {
       const k = starts[i] + q;
-      stiffness += weights[i * 4 + q] * model.lnStiffness[k];
-      c[i] += weights[i * 4 + q] * holes.design[i * count + k];
+      means[i] += weights[i * 4 + q] * model.lnStiffness[k];
+      for (let s = 0; s < size; s++) c[i * size + s] += weights[i * 4 + q] * holes.design[(i * count + k) * size + s];
     }
-    means[i] = stiffness + c[i] * deviation * perVariance;
+    for (let s = 0; s < size; s++) means[i] += c[i * size + s] * normals[s];
   }
   const covariance = new Float64Array(n * n);
   for (let i = 0; i < n; i++) {
@@ -98,16 +57,18 @@ export function nodeMoments(model: SiteModel, holes: HoleCovariance, design: Des
       let sum = 0;
       for (let p = 0; p < 4; p++) {
         const row = base + (starts[i] + p) * count + starts[j];
-        const wp = weights[i * 4 + p];
-        for (let q = 0; q < 4; q++) sum += wp * weights[j * 4 + q] * model.covariance[row + q];
+        let inner = 0;
+        for (let q = 0; q < 4; q++) inner += weights[j * 4 + q] * model.covariance[row + q];
+        sum += weights[i * 4 + p] * inner;
       }
-      covariance[i * n + j] = covariance[j * n + i] = sum - c[i] * c[j] * perVariance;
+      for (let s = 0; s < size; s++) sum -= c[i * size + s] * c[j * size + s];
+      covariance[i * n + j] = covariance[j * n + i] = sum;
     }
   }
-  if (design.bend !== 0 && perVariance > 0) bendCovariance(covariance, holes, design.bend * deviation * perVariance, starts, weights, n, count);
+  if (bend !== 0) bendCovariance(covariance, holes, bend, starts, weights, n, count);
   const factor = Float64Array.from(covariance);
   choleskyInPlace(factor, n, 1e-9);
-  const { quadratic, residual } = secondOrder(model, holes, lengths, starts, weights, c, covariance, deviation, perVariance);
+  const { quadratic, residual } = secondOrder(model, holes, normals, lengths, starts, weights, c, covariance);
   return { lengths, means, covariance, factor, quadratic, residual };
 }
 
@@ -131,7 +92,7 @@ function interpolation(grid: Float64Array, lengths: Float64Array, starts: Int32A
  * -q G is replaced by -G (1 - exp(-lambda q))/lambda, which agrees for small q and stays positive.
  */
 function bendCovariance(covariance: Float64Array, holes: HoleCovariance, q: number, starts: Int32Array, weights: Float64Array, n: number, count: number): void {
-  const columns = holes.groupShares.length;
+  const columns = holes.columnShares.length;
   const seen = new Float64Array(n * columns);
   for (let i = 0; i < n; i++) {
     for (let p = 0; p < 4; p++) {
@@ -144,7 +105,7 @@ function bendCovariance(covariance: Float64Array, holes: HoleCovariance, q: numb
   for (let i = 0; i < n; i++) {
     for (let j = 0; j <= i; j++) {
       let sum = 0;
-      for (let g = 0; g < columns; g++) sum += holes.groupShares[g] * seen[i * columns + g] * seen[j * columns + g];
+      for (let g = 0; g < columns; g++) sum += holes.columnShares[g] * seen[i * columns + g] * seen[j * columns + g];
       gram[i * n + j] = sum;
     }
     if (covariance[i * n + i] > 0) lambda = Math.max(lambda, gram[i * n + i] / covariance[i * n + i]);
@@ -160,10 +121,11 @@ function bendCovariance(covariance: Float64Array, holes: HoleCovariance, q: numb
 
 /** E[Q | deviations of the pile and its neighbours, design value] as a quadratic, and the standard deviation of the rest. */
 function secondOrder(
-  model: SiteModel, holes: HoleCovariance, lengths: Float64Array, starts: Int32Array, weights: Float64Array,
-  c: Float64Array, covariance: Float64Array, deviation: number, perVariance: number,
+  model: SiteModel, holes: HoleCovariance, normals: Float64Array, lengths: Float64Array, starts: Int32Array, weights: Float64Array,
+  c: Float64Array, covariance: Float64Array,
 ): { quadratic: Float64Array; residual: Float64Array } {
   const { plan, family } = model;
+  const { size } = holes;
   const n = plan.piles.length;
   const count = family.lengths.length;
   const forms = family.formIndices.length;
@@ -192,17 +154,24 @@ function secondOrder(
           const sum = tables.curveSums[f * ranks + r];
           const own = model.groundVariance + model.regionalVariance * sum ** 2;
           rest -= value * own;
-          const toDesign = holes.curves[b][(i * forms + f) * ranks + r];
+          const curve = ((i * forms + f) * ranks + r) * size;
+          let shift = 0;
+          let known = 0;
+          for (let s = 0; s < size; s++) {
+            const covarianceWithNormal = holes.curves[b][curve + s];
+            shift += covarianceWithNormal * normals[s];
+            known += covarianceWithNormal ** 2;
+          }
           for (let a = 0; a < m; a++) {
             const j = near[a];
             const base = ((plan.distanceOf[i * n + j] * forms + f) * ranks + r) * count + starts[j];
             let covarianceWithZ = 0;
             for (let q = 0; q < 4; q++) covarianceWithZ += weights[j * 4 + q] * cross[base + q];
-            t[a] = covarianceWithZ - toDesign * c[j] * perVariance;
+            for (let s = 0; s < size; s++) covarianceWithZ -= holes.curves[b][curve + s] * c[j * size + s];
+            t[a] = covarianceWithZ;
           }
           const explained = solveInPlace(local, m, t);
-          const left = Math.max(own - toDesign ** 2 * perVariance - explained, 0);
-          const shift = toDesign * deviation * perVariance;
+          const left = Math.max(own - known - explained, 0);
           const factor = share * value;
           quadratic[at] += factor * (shift ** 2 + left);
           let next = at + 6;

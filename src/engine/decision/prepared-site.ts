@@ -1,34 +1,32 @@
 import { metres } from "../../units/quantities.js";
-import { fieldCorrelation } from "../ground/correlation.js";
+import { fieldCorrelation } from "../ground/field-correlation.js";
 import { separableTerms } from "../ground/separable-terms.js";
-import { designDistribution, type DesignDistribution, type LogVariances } from "../investigation/design-distribution.js";
+import { designDistribution, type LogVariances } from "../investigation/design-distribution.js";
 import { automaticHoles, type Point } from "../investigation/hole-positions.js";
 import { readingDepths } from "../investigation/reading-depths.js";
 import { readingSums, type ReadingSums } from "../investigation/reading-sums.js";
 import { requireDomain } from "../numerics/domain-error.js";
 import { groundProfile } from "./ground-profile.js";
+import { commonLaw, nearestLaw, type DesignLaw } from "./design-law.js";
 import { layoutTables, type LayoutTables } from "./layout.js";
-import { pileFamily, type PileFamily } from "./pile-family.js";
+import { pileFamily, type FamilyKey, type PileFamily } from "./pile-family.js";
 import { sortedPlan, type Plan } from "./plan.js";
 import type { Problem } from "./problem.js";
 import { Remembered } from "./remembered.js";
 import { nodeTables, siteModel, type NodeTables, type SiteModel } from "./site-model.js";
-import { slopeLoss } from "./slope-loss.js";
+import { slopeLosses } from "./slope-loss.js";
 import { structureTables } from "./structure-tables.js";
 
 /** A problem with everything that does not depend on the count made ready. */
 export interface PreparedSite {
   readonly problem: Problem;
   readonly model: SiteModel;
-  readonly variances: LogVariances;
-  /** ln of the median modulus at the readings' depths, kPa */
-  readonly logMedians: Float64Array;
   /** positions of a count */
   holes(count: number): readonly Point[];
   /** what the holes of a count see of the ground under the piles, at the two nodes; undefined for no holes */
   layout(count: number): readonly [LayoutTables, LayoutTables] | undefined;
-  /** distribution of the log design value for a count */
-  design(count: number): DesignDistribution;
+  /** law of the design values of a count */
+  design(count: number): DesignLaw;
 }
 
 // Dear things first: a family holds finite-element solutions, tables depend on it and on scales, the rest is sums.
@@ -54,12 +52,11 @@ export function preparedSite(problem: Problem): PreparedSite {
   function prepare(): PreparedSite {
     const depths = readingDepths(investigation.readingSpacing, investigation.holeDepth);
     requireDomain(depths.length > 0, "Reading spacing", `${investigation.readingSpacing} m`, "at most the hole depth");
-    const family = families.get(familyKey, () =>
-      pileFamily({
-        diameter: piles.diameter, pileModulus: piles.modulus, poissonRatio: ground.poissonRatio,
-        shortest: piles.shortest, longest: piles.longest, shape: profile.shape,
-      }),
-    );
+    const key: FamilyKey = {
+      diameter: piles.diameter, pileModulus: piles.modulus, poissonRatio: ground.poissonRatio,
+      shortest: piles.shortest, longest: piles.longest, shape: profile.shape,
+    };
+    const family = families.get(familyKey, () => pileFamily(key));
     const plan = plans.get(planKey, () => sortedPlan(building.piles));
     const { j, fraction } = family.locate(profile.modulus);
     const terms = separableTerms(ground);
@@ -68,9 +65,12 @@ export function preparedSite(problem: Problem): PreparedSite {
     const tablesKey = `${familyKey}${structureKey}${planKey}${reach}`;
     const node = (at: number): NodeTables => tables.get(`${at}${tablesKey}`, () => nodeTables(structureTables(family, family.node(at), structure), plan, family));
     const nodes: [NodeTables, NodeTables] = [node(j), node(j - 1)];
-    const loss = losses.get(`${familyKey}${structureKey}${j}`, () => slopeLoss(family, j, structure));
+    const lossAt = (at: number): Float64Array => losses.get(`${at}${familyKey}${structureKey}`, () => slopeLosses(family, key, family.node(at), structure));
+    const soft = lossAt(j);
+    const stiff = lossAt(j - 1);
+    const slopeLoss = soft.map((value, k) => (1 - fraction) * value + fraction * stiff[k]);
     const model = siteModel(plan, family, nodes, fraction, {
-      modulus: profile.modulus, groundVariance: profile.groundVariance, regionalVariance: profile.regionalVariance, slopeLoss: loss,
+      modulus: profile.modulus, groundVariance: profile.groundVariance, regionalVariance: profile.regionalVariance, slopeLoss,
     });
     const correlation = fieldCorrelation(ground);
     const relativeSd = depths.map((z) => profile.relativeSd(z));
@@ -84,10 +84,29 @@ export function preparedSite(problem: Problem): PreparedSite {
       method: Math.log1p(investigation.methodCov ** 2),
     };
     const logMedians = depths.map((z) => profile.logMedian(z));
+    const nearest = (places: readonly Point[]): DesignLaw => {
+      const n = places.length;
+      const alone = (hole: Point): ReadingSums => readingSums([hole], investigation.readingSpacing, relativeSd, correlation);
+      const single = designDistribution(investigation.designRule, alone(places[0]), logMedians, variances);
+      const between = new Float64Array(n * n);
+      for (let a = 0; a < n; a++) {
+        for (let b = 0; b < a; b++) {
+          // Two holes' mean covariance out of the sums over both: the off-diagonal half of four equal quarters.
+          const both = readingSums([places[a], places[b]], investigation.readingSpacing, relativeSd, correlation);
+          const shared = 2 * both.meanCovariance - alone(places[a]).meanCovariance;
+          between[a * n + b] = between[b * n + a] = single.gain ** 2 * (variances.ground * shared + variances.regional + variances.method);
+        }
+      }
+      const ofPile = Int32Array.from(building.piles, (p) => {
+        const distances = places.map((h) => Math.hypot(h.x - p.x, h.y - p.y));
+        return distances.indexOf(Math.min(...distances));
+      });
+      return nearestLaw(single, between, n, ofPile);
+    };
     const readings = (count: number): ReadingSums | undefined =>
       count === 0 ? undefined : sums.get(holesKey(count), () => readingSums(holes(count), investigation.readingSpacing, relativeSd, correlation));
     return {
-      problem, model, variances, logMedians, holes,
+      problem, model, holes,
       layout: (count) =>
         count === 0
           ? undefined
@@ -95,7 +114,11 @@ export function preparedSite(problem: Problem): PreparedSite {
               const at = (b: 0 | 1): LayoutTables => layoutTables(nodes[b].tables, plan, holes(count), family.lengths.length, family.formIndices.length);
               return [at(0), at(1)];
             }),
-      design: (count) => designDistribution(investigation.designRule, readings(count), logMedians, variances),
+      design: (count) => {
+        const rule = investigation.designRule;
+        if (piles.lengthRule !== "nearest" || count < 2) return commonLaw(designDistribution(rule, readings(count), logMedians, variances), building.piles.length);
+        return nearest(holes(count));
+      },
     };
   }
 }

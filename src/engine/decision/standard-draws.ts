@@ -1,7 +1,6 @@
 import { sobolPoints, sobolNormals } from "../numerics/sobol.js";
 import { stream } from "../random/stream.js";
-import { drawsPerNode } from "./expected-outcome.js";
-import { outerNodes } from "./outer-rule.js";
+import { totalDraws } from "./design-law.js";
 import { Remembered } from "./remembered.js";
 
 const known = new Remembered<Float64Array>(6);
@@ -18,7 +17,7 @@ const quasiRandom = 256;
  */
 export function standardDraws(piles: number, uniforms: boolean, seed: string): Float64Array {
   return known.get(JSON.stringify([piles, uniforms, seed]), () => {
-    const count = outerNodes(1).deviations.length * drawsPerNode;
+    const count = totalDraws;
     const dimensions = piles * (uniforms ? 3 : 2);
     const values = new Float64Array(dimensions * count);
     const normals = Math.min(2 * piles, quasiRandom);

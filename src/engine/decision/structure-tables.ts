@@ -199,7 +199,7 @@ function cellValues(bounds: Float64Array, value: (depth: number) => number): Flo
 }
 
 /** Covariance of the depth part between cells of two grids: cells x cells. */
-function cellCovariance(a: Float64Array, b: Float64Array, term: SeparableTerm): Float64Array {
+export function cellCovariance(a: Float64Array, b: Float64Array, term: SeparableTerm): Float64Array {
   const rows = a.length - 1;
   const columns = b.length - 1;
   const out = new Float64Array(rows * columns);
