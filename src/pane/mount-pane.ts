@@ -87,8 +87,8 @@ function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence:
   void site.open().catch((reason: unknown) => tell(`The workbook could not be read: ${inWords(reason)}.`));
   return {
     views: [
-      { name: "Site", content: siteView(site, actions, options.locale) },
-      { name: "Results", content: resultsView(results, options.locale), seen: (visible) => results.look(visible) },
+      { name: "Site", content: () => siteView(site, actions, options.locale) },
+      { name: "Results", content: () => resultsView(results, options.locale), seen: (visible) => results.look(visible) },
     ],
     close: () => {
       site.close();
@@ -108,7 +108,7 @@ function helpTab(workbook: Workbook | undefined, options: PaneOptions, tell: (se
   };
   const content = { functions: options.functions?.functions, namespace: options.namespace ?? "PROBE", versions };
   const actions = { copy: copyText, insert: workbook === undefined ? undefined : (id: string, formula: string) => void insert(id, formula), tell };
-  return { name: "Help", content: helpView(content, actions) };
+  return { name: "Help", content: () => helpView(content, actions) };
 }
 
 async function addSheet(workbook: Workbook, plan: SheetPlan, tell: (sentence: string) => void): Promise<InsertedSheet | undefined> {

@@ -1,4 +1,5 @@
 import { cheapestCount, type CountRow, type LengthTable, type Problem } from "../engine/index.js";
+import { usualCounts } from "../inputs/count.js";
 import type { Site } from "../inputs/index.js";
 import { SHOWN_PERCENTILES } from "./model/lengths.js";
 import type { Pricing } from "./pricing.js";
@@ -11,6 +12,8 @@ export interface PricedTable {
   readonly cheapest: number;
   readonly problem: Problem;
   readonly units: Site["units"];
+  /** whose money, as the person wrote it; "" where nobody did */
+  readonly money: string;
 }
 
 /** What the Results view shows. */
@@ -26,9 +29,6 @@ export interface ResultsState {
   readonly old: boolean;
   readonly lengths: { readonly count: number; readonly table: LengthTable } | undefined;
 }
-
-/** Counts priced when the site block names none. */
-const USUAL_COUNTS = 12;
 
 /** Prices the site block when somebody looks at the results, and keeps the figures. */
 export class ResultsStore {
@@ -86,14 +86,14 @@ export class ResultsStore {
       this.publish({ phase: "refused", message: state.refusal ?? "" });
       return;
     }
-    const { problem, units } = state.site;
-    const counts = countsToPrice(state.site);
+    const { problem, units, money } = state.site;
+    const counts = state.site.counts ?? usualCounts(state.site);
     this.publish({ phase: "running", done: 0, of: counts.length, message: "" });
     this.tell(`Pricing ${counts.length} counts.`);
     const end = await this.pricing.price(problem, counts, (done, of) => this.publish({ done, of }));
     if (state.edition !== this.site?.edition) return;
     if (end.kind === "done") {
-      const table = { edition: state.edition, rows: end.value, cheapest: cheapestCount(end.value), problem, units };
+      const table = { edition: state.edition, rows: end.value, cheapest: cheapestCount(end.value), problem, units, money };
       this.lengthsWanted = undefined;
       this.publish({ phase: "idle", table, old: false, lengths: undefined });
       this.tell(`Priced. The cheapest count is ${table.cheapest}.`);
@@ -129,15 +129,4 @@ export class ResultsStore {
     this.held = { ...this.held, ...change };
     for (const listener of this.listeners) listener(this.held);
   }
-}
-
-/**
- * The counts that the view prices: the site's own, rising and each once, or 0 to 12; never above the hole list.
- *
- * @param site  the site
- */
-export function countsToPrice(site: Pick<Site, "counts" | "problem">): number[] {
-  const listed = site.problem.investigation.holes?.length ?? Infinity;
-  const wanted = site.counts ?? Array.from({ length: USUAL_COUNTS + 1 }, (_, count) => count);
-  return [...new Set(wanted)].filter((count) => count <= listed).sort((a, b) => a - b);
 }

@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { groupChecks, summariseChecks, UNPLACED, type CheckLike } from "../../src/pane/model/checks.js";
 
-const row = (label: string, ok: boolean, change: Partial<CheckLike> = {}): CheckLike => ({ label, value: 1, unit: "m", verdict: ok ? "ok" : "no", ok, row: 2, ...change });
+const row = (label: string, ok: boolean, change: Partial<CheckLike> = {}): CheckLike => ({ label, value: 1, unit: "m", verdict: ok ? "used" : "refused: it is blank", ok, ...change });
 const section = (label: string): string | undefined => ({ Depth: "Ground", Width: "Ground", Price: "Prices" })[label];
 const write = (value: number): string => `<${value}>`;
 
@@ -27,6 +27,11 @@ describe("the checks", () => {
     expect(line.label.length).toBe(60);
     expect(line.value.length).toBeLessThan(70);
     expect(line.verdict.length).toBe(400);
+  });
+
+  it("say no more than the mark beside them leaves open", () => {
+    const lines = groupChecks([row("Depth", true), row("Depth", true, { verdict: "default: as usual" }), row("Depth", false)], section, write)[0]!.lines;
+    expect(lines.map((line) => line.verdict)).toEqual(["It is blank", "", "default: as usual"]);
   });
 
   it("are summed up in one sentence", () => {

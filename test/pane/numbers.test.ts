@@ -25,14 +25,15 @@ describe("numbers for people", () => {
     expect(english.percent(1)).toBe("100\u00a0%");
   });
 
-  it("money is no finer than its first uncertain figure and never shows more than five figures", () => {
-    expect(moneyStep(3600, 427_000)).toBe(1000);
-    expect(moneyStep(940, 427_000)).toBe(100);
+  it("money is no finer than its second uncertain figure and never shows more than five figures", () => {
+    expect(moneyStep(3600, 427_000)).toBe(100);
+    expect(moneyStep(12_500, 427_000)).toBe(1000);
+    expect(moneyStep(940, 427_000)).toBe(10);
     expect(moneyStep(0.3, 427_000)).toBe(10);
     expect(moneyStep(0, 427_000)).toBe(10);
     expect(moneyStep(0, 500)).toBe(1);
     expect(moneyStep(0, 0)).toBe(0.01);
-    expect(moneyStep(1000, 427_000)).toBe(1000);
+    expect(moneyStep(1000, 427_000)).toBe(100);
   });
 
   it("counts of holes read as words up to twelve", () => {

@@ -1,4 +1,4 @@
-import { joinWords, shorten } from "./numbers.js";
+import { joinWords, sentenceCase, shorten } from "./numbers.js";
 
 /** The part of a check row that the pane needs. */
 export interface CheckLike {
@@ -7,7 +7,6 @@ export interface CheckLike {
   readonly unit: string;
   readonly verdict: string;
   readonly ok: boolean;
-  readonly row: number | undefined;
 }
 
 /** One line of a group of checks, ready to be shown. */
@@ -15,10 +14,9 @@ export interface CheckLine {
   readonly label: string;
   /** value and unit as one text; "" where there is none */
   readonly value: string;
+  /** why it is refused (a sentence that may begin with the label), or how an accepted value came about; "" where it is simply used */
   readonly verdict: string;
   readonly ok: boolean;
-  /** row within the site block, counted from 1 */
-  readonly row: number | undefined;
 }
 
 /** The checks of one section of the site block. */
@@ -44,7 +42,7 @@ export function groupChecks(rows: readonly CheckLike[], sectionOf: (label: strin
   for (const row of rows) {
     const section = sectionOf(row.label) ?? UNPLACED;
     const value = typeof row.value === "number" ? write(row.value) : shorten(row.value, 60);
-    const line = { label: shorten(row.label, 60), value: [value, row.unit].filter((text) => text !== "").join("\u00a0"), verdict: shorten(row.verdict, 400), ok: row.ok, row: row.row };
+    const line = { label: shorten(row.label, 60), value: [value, row.unit].filter((text) => text !== "").join("\u00a0"), verdict: reason(row), ok: row.ok };
     const lines = groups.get(section);
     if (lines === undefined) groups.set(section, [line]);
     else lines.push(line);
@@ -71,4 +69,11 @@ export function summariseChecks(rows: readonly CheckLike[]): string {
   const named = refused.slice(0, 3).map((row) => shorten(row.label, 40));
   const rest = refused.length - named.length;
   return `${refused.length} of ${rows.length} inputs cannot be used: ${joinWords(rest > 0 ? [...named, `${rest} more`] : named)}.`;
+}
+
+/** The mark beside the line already says refused or used, so the words need not. */
+function reason(row: CheckLike): string {
+  const words = shorten(row.verdict, 400);
+  if (row.ok) return words === "used" ? "" : words;
+  return sentenceCase(words.replace(/^refused: */, ""));
 }

@@ -1,5 +1,5 @@
 import type { CountRow } from "../../engine/index.js";
-import { countsInWords, holesInWords, moneyStep, sentenceCase, type NumberWriter } from "./numbers.js";
+import { countsInWords, holesInWords, moneyStep, sentenceCase, shorten, type NumberWriter } from "./numbers.js";
 
 /** What the table of counts says, in sentences for a person who has to act on it. */
 export interface Conclusion {
@@ -19,15 +19,17 @@ export interface Conclusion {
  * @param rows      one row a count, counts rising, at least one
  * @param cheapest  the count of the smallest total, one of the rows
  * @param client    the count that the client proposes; undefined: none stated
+ * @param money     whose money, as the person wrote it; "" where nobody did
  * @param writer    writes the numbers
  * @returns         sentences that end with a full stop
  */
-export function conclude(rows: readonly CountRow[], cheapest: number, client: number | undefined, writer: NumberWriter): Conclusion {
+export function conclude(rows: readonly CountRow[], cheapest: number, client: number | undefined, money: string, writer: NumberWriter): Conclusion {
   const best = rows.find((row) => row.count === cheapest) ?? rows[0]!;
   const step = tableStep(rows);
-  const amount = (value: number): string => writer.money(value, step);
+  const unit = money === "" ? "" : `\u00a0${shorten(money, 12)}`;
+  const amount = (value: number): string => writer.money(value, step) + unit;
   const subject = cheapest === 0 ? "Buying no holes costs" : `${sentenceCase(holesInWords(cheapest))} ${cheapest === 1 ? "costs" : "cost"}`;
-  const answer = `${subject} least in all: ${amount(best.total)} expected, give or take ${amount(2 * best.standardError)}.`;
+  const answer = `${subject} least in all: ${amount(best.total)} expected, give or take ${writer.money(2 * best.standardError, step)}.`;
   return { count: best.count, answer, comparison: compare(rows, best, client, amount), remarks: remarks(rows, best, writer) };
 }
 
@@ -60,7 +62,7 @@ function remarks(rows: readonly CountRow[], best: CountRow, writer: NumberWriter
   const others = rows.filter((row) => row.notDistinguishable && row.count !== best.count).map((row) => row.count);
   if (others.length > 0) {
     const noun = others.length === 1 && others[0] === 1 ? "hole" : "holes";
-    sentences.push(`${sentenceCase(countsInWords(others))} ${noun} cannot be told from the cheapest: the difference is within two standard errors.`);
+    sentences.push(`${sentenceCase(countsInWords(others))} ${noun} cannot be told from the cheapest: the difference is within two of its standard errors.`);
   }
   if (rows.length > 1 && best.count === rows[rows.length - 1]!.count) {
     sentences.push("This is the largest count tried, so more holes may cost less still. Raise the counts in the site block to see.");

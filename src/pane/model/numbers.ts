@@ -41,7 +41,7 @@ export function numberWriter(locale?: string): NumberWriter {
 }
 
 /**
- * The step to which money is rounded: the first figure of its standard error, and never more than five figures of the largest sum.
+ * The step to which money is rounded: the second figure of its standard error, and never more than five figures of the largest sum.
  *
  * @param standardError  largest standard error of the sums shown, money, >= 0
  * @param largest        largest sum shown, money, >= 0
@@ -49,7 +49,7 @@ export function numberWriter(locale?: string): NumberWriter {
  */
 export function moneyStep(standardError: number, largest: number): number {
   const power = (value: number): number => 10 ** Math.floor(Math.log10(value) + 1e-12);
-  const byError = standardError > 0 ? power(standardError) : 0;
+  const byError = standardError > 0 ? power(standardError) / 10 : 0;
   const bySize = largest > 0 ? power(largest) / 1e4 : 0;
   const step = Math.max(byError, bySize);
   if (largest >= 100) return Math.max(1, step);

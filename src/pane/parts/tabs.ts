@@ -4,7 +4,8 @@ import type { FluentTablist } from "./fluent.js";
 /** One view behind a tab. */
 export interface TabView {
   readonly name: string;
-  readonly content: HTMLElement;
+  /** makes the inside when the view is first seen, so that opening the pane stays quick */
+  readonly content: () => HTMLElement;
   /** told when the view comes into sight or leaves it */
   readonly seen?: (visible: boolean) => void;
 }
@@ -18,7 +19,11 @@ export function tabs(views: readonly TabView[]): { readonly list: HTMLElement; r
   const ids = views.map(() => ({ tab: freshId("tab"), panel: freshId("panel") }));
   const list = element("fluent-tablist", { class: "tabs", size: "small", "aria-label": "Views", activeid: ids[0]!.tab }) as FluentTablist;
   list.append(...views.map((view, k) => element("fluent-tab", { id: ids[k]!.tab, "aria-controls": ids[k]!.panel }, view.name)));
-  const panels = views.map((view, k) => element("div", { id: ids[k]!.panel, class: "panel", role: "tabpanel", "aria-labelledby": ids[k]!.tab, tabindex: -1, hidden: k > 0 }, view.content));
+  const panels = views.map((_view, k) => element("div", { id: ids[k]!.panel, class: "panel", role: "tabpanel", "aria-labelledby": ids[k]!.tab, hidden: k > 0 }));
+  const fill = (k: number): void => {
+    if (panels[k]!.childElementCount === 0) panels[k]!.append(views[k]!.content());
+  };
+  fill(0);
   let shown = 0;
   list.addEventListener("change", (event) => {
     // Fields inside a tab would send their own change events through here.
@@ -30,6 +35,7 @@ export function tabs(views: readonly TabView[]): { readonly list: HTMLElement; r
     });
     views[shown]!.seen?.(false);
     shown = next;
+    fill(next);
     views[shown]!.seen?.(true);
   });
   return { list, panels };

@@ -68,9 +68,10 @@ export const LAYOUT = `
 .probeworth .refused { margin-top: 6px; }
 .probeworth .check-refused { padding: 5px 6px 6px; background: var(--pane-refused-wash); border-radius: 4px; }
 .probeworth .check-refused + .check-refused { margin-top: 4px; }
-.probeworth .check-refused .check-label { font-weight: 600; }
-.probeworth .check-refused .check-verdict { color: var(--pane-ink); }
-.probeworth .check-row { white-space: nowrap; color: var(--pane-soft); }
+.probeworth .check-sentence { grid-column: 2 / 4; }
+.probeworth .check-sentence strong { font-weight: 650; }
+.probeworth .picture + .key { margin-bottom: 2px; }
+.probeworth .hint + .group { margin-top: 10px; }
 .probeworth .run { padding-block: 8px; }
 .probeworth .run .row { flex-wrap: nowrap; justify-content: space-between; }
 .probeworth .run-words { flex: 1; font-size: 12px; color: var(--pane-soft); }

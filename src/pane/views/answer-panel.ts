@@ -31,7 +31,7 @@ export function answerPanel(store: ResultsStore, writer: NumberWriter): HTMLElem
     if (table === undefined) return;
     const proposed = client.value === "" ? undefined : Number(client.value);
     const usable = proposed !== undefined && Number.isInteger(proposed) && proposed >= 0;
-    const words = conclude(table.rows, table.cheapest, usable ? proposed : undefined, writer);
+    const words = conclude(table.rows, table.cheapest, usable ? proposed : undefined, table.money, writer);
     numeral.textContent = String(words.count);
     answer.textContent = words.answer;
     comparison.textContent = proposed !== undefined && !usable ? "The proposed count must be a whole number, 0 or more." : words.comparison;

@@ -1,5 +1,5 @@
 import { CATALOGUE } from "../../inputs/index.js";
-import { groupChecks, summariseChecks, type CheckGroup, type CheckLine } from "../model/checks.js";
+import { groupChecks, summariseChecks, UNPLACED, type CheckGroup, type CheckLine } from "../model/checks.js";
 import type { NumberWriter } from "../model/numbers.js";
 import { element, freshId } from "../parts/element.js";
 import { verdictMark } from "../parts/marks.js";
@@ -31,7 +31,7 @@ export function checksPanel(store: SiteStore, writer: NumberWriter): HTMLElement
     const wrong = groups.flatMap((group) => group.lines.filter((line) => !line.ok));
     refused.replaceChildren(...wrong.map(lineOf));
     refused.hidden = wrong.length === 0;
-    list.replaceChildren(...groups.map((group) => groupOf(group, unfolded)));
+    list.replaceChildren(...groups.filter((group) => group.section !== UNPLACED).map((group) => groupOf(group, unfolded)));
     if (focused !== undefined) [...list.querySelectorAll("summary")].find((each) => each.dataset["section"] === focused)?.focus();
   });
   return panel;
@@ -65,15 +65,21 @@ function groupOf(group: CheckGroup, unfolded: Set<string>): HTMLElement {
 }
 
 function lineOf(line: CheckLine): HTMLElement {
-  const row = line.row === undefined ? undefined : element("span", { class: "check-row" }, `row ${line.row}`);
+  if (!line.ok) return element("li", { class: "check check-refused" }, verdictMark(false), element("span", { class: "check-sentence" }, ...sentenceOf(line)));
   return element(
     "li",
-    { class: line.ok ? "check" : "check check-refused" },
-    verdictMark(line.ok),
+    { class: "check" },
+    verdictMark(true),
     element("span", { class: "check-label" }, line.label),
     element("span", { class: "check-value" }, line.value),
-    element("span", { class: "check-verdict" }, line.verdict, row === undefined ? undefined : " ", row),
+    line.verdict === "" ? undefined : element("span", { class: "check-verdict" }, line.verdict),
   );
+}
+
+/** The sentence with its label made to stand out; most sentences begin with it. */
+function sentenceOf(line: CheckLine): (Node | string)[] {
+  const label = element("strong", {}, line.label);
+  return line.verdict.startsWith(line.label) ? [label, line.verdict.slice(line.label.length)] : [label, `: ${line.verdict}`];
 }
 
 function plain(label: string): string {

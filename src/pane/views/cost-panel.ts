@@ -1,8 +1,7 @@
-import { drawParts, drawTotals } from "../drawings/cost-chart.js";
 import { tableStep } from "../model/conclusion.js";
 import { costDrawing, describeCosts, type CostDrawing } from "../model/cost-drawing.js";
 import { moneyAxis } from "../model/money-axis.js";
-import type { NumberWriter } from "../model/numbers.js";
+import { shorten, type NumberWriter } from "../model/numbers.js";
 import { element, freshId } from "../parts/element.js";
 import { keySwatch, keySymbol } from "../parts/key-symbols.js";
 import { textTable } from "../parts/text-table.js";
@@ -31,16 +30,20 @@ export function costPanel(store: ResultsStore, writer: NumberWriter): HTMLElemen
     { "aria-labelledby": title },
     element("h2", { id: title }, "Cost against number of holes"),
     element("figure", {}, totalTitle, totals, totalKey, partTitle, parts, partKey, words),
+    element("p", { class: "hint" }, "Most of the error is common to all counts, so the differences between them are surer than the band."),
     folded,
   );
   let drawing: CostDrawing | undefined;
-  const draw = (): void => {
+  let money = "";
+  const draw = async (): Promise<void> => {
+    const { drawParts, drawTotals } = await import("../drawings/cost-chart.js");
     const width = totals.clientWidth;
     if (drawing === undefined || width === 0) return;
     const axis = moneyAxis(drawing.partAxis[1], writer);
-    const unit = axis.unit === "" ? "" : `, ${axis.unit}`;
-    totalTitle.textContent = `Expected total${unit} \u2014 axis not from zero`;
-    partTitle.textContent = `Its parts${unit}, from zero`;
+    const unit = [axis.unit, shorten(money, 12)].filter((word) => word !== "").join(" ");
+    const inUnit = unit === "" ? "" : `, ${unit}`;
+    totalTitle.textContent = `Expected total${inUnit} \u2014 axis not from zero`;
+    partTitle.textContent = `Its parts${inUnit}, from zero`;
     totals.replaceChildren(drawTotals(drawing, width, axis.write));
     parts.replaceChildren(drawParts(drawing, width, axis.write, drawing.parts.map(fillOf)));
   };
@@ -48,14 +51,15 @@ export function costPanel(store: ResultsStore, writer: NumberWriter): HTMLElemen
   store.subscribe((state) => {
     if (state.table === undefined || state.table === shown) return;
     shown = state.table;
+    money = shown.money;
     drawing = costDrawing(shown.rows, shown.cheapest);
     words.textContent = describeCosts(shown.rows, shown.cheapest, writer);
     totalKey.replaceChildren(...keyOfTotals(drawing));
     partKey.replaceChildren(...[...drawing.parts].reverse().map((part) => element("li", {}, keySwatch(fillOf(part)), part)));
     table.replaceChildren(figuresOf(shown, writer));
-    draw();
+    void draw();
   });
-  watchWidth(totals, draw);
+  watchWidth(totals, () => void draw());
   return panel;
 }
 

@@ -1,6 +1,5 @@
 import { holePositions, type Point, type Problem } from "../../engine/index.js";
 import type { Site } from "../../inputs/index.js";
-import { drawPlan } from "../drawings/plan-drawing.js";
 import { holesInWords, type NumberWriter } from "../model/numbers.js";
 import { describePlan } from "../model/plan.js";
 import { element, freshId } from "../parts/element.js";
@@ -36,7 +35,9 @@ export function planPanel(store: SiteStore, writer: NumberWriter): HTMLElement {
   let site: Site | undefined;
   let count = 4;
   let drawn = "";
-  const draw = (): void => {
+  const draw = async (): Promise<void> => {
+    // The plotting library is large; loaded apart, it does not hold up the opening of the pane.
+    const { drawPlan } = await import("../drawings/plan-drawing.js");
     if (site === undefined) return;
     const width = picture.clientWidth;
     const problem = site.problem;
@@ -53,7 +54,7 @@ export function planPanel(store: SiteStore, writer: NumberWriter): HTMLElement {
     count = Number.isInteger(wanted) ? Math.min(Math.max(wanted, 0), most) : count;
     if (number !== document.activeElement) number.value = String(count);
     if (slider.value !== String(count)) slider.value = String(count);
-    draw();
+    void draw();
   };
   slider.addEventListener("change", () => show(Number(slider.value)));
   number.addEventListener("input", () => show(number.value === "" ? count : Number(number.value)));
@@ -69,7 +70,7 @@ export function planPanel(store: SiteStore, writer: NumberWriter): HTMLElement {
     number.max = String(most);
     show(count);
   });
-  watchWidth(picture, draw);
+  watchWidth(picture, () => void draw());
   return panel;
 }
 
