@@ -9,7 +9,7 @@ export const LARGEST_COUNT = 12;
  * cost by number of holes, a two-way sensitivity table and the check rows. Every figure is a formula of the site block.
  */
 export function demonstrationWorkbook(): SheetPlan[] {
-  return [siteSheet("Demonstration: a storage hall on bored piles (invented)"), bid(), counts(), sensitivity(), check()];
+  return [siteSheet(), bid(), counts(), sensitivity(), check()];
 }
 
 function bid(): SheetPlan {
@@ -72,11 +72,15 @@ function counts(): SheetPlan {
   for (let row = first; row <= last; row++) {
     cells.push(...line(row, [value(row - first, "input"), ...columns.map(([, id]) => formula(`=PROBE.${id}(Site,$A${row + 1})`, "result", "money"))]));
   }
+  // the looks of the cells that the table spills into: its head, then count, five costs, standard error, chance and carbon
+  const looks: (NumberLook | undefined)[] = [undefined, "money", "money", "money", "money", "money", "money", "percent", "money"];
   cells.push(
-    ...line(last + 2, [text("The same in one formula, with standard error and the chance of being the cheapest", "section"), ...Array.from({ length: 7 }, () => text("", "section"))]),
-    ...line(last + 3, [formula(`=PROBE.COSTTABLE(Site,${LARGEST_COUNT})`, "label")]),
+    ...looks.slice(1).map((_, k): PlannedCell => ({ row: last + 3, column: k + 1, style: "numberhead" })),
+    ...Array.from({ length: LARGEST_COUNT + 1 }, (_, k) => looks.map((look, column): PlannedCell => ({ row: last + 4 + k, column, style: "label", look }))).flat(),
+    ...line(last + 2, [text("The same in one formula, with standard error and the chance of being the cheapest", "section"), ...Array.from({ length: 8 }, () => text("", "section"))]),
+    ...line(last + 3, [formula(`=PROBE.COSTTABLE(Site,${LARGEST_COUNT})`, "numberhead")]),
   );
-  return { name: "Counts", cells, names: [{ name: "CostByCount", range: `A${first}:F${last + 1}` }, { name: "Cheapest", range: "C2" }], columnWidths: [120, 110, 110, 110, 110, 110, 110, 110, 110] };
+  return { name: "Counts", cells, names: [{ name: "CostByCount", range: `A${first}:F${last + 1}` }, { name: "Cheapest", range: "C2" }], columnWidths: [130, 150, 140, 120, 120, 120, 170, 190, 120] };
 }
 
 function sensitivity(): SheetPlan {
@@ -100,7 +104,7 @@ function sensitivity(): SheetPlan {
 function check(): SheetPlan {
   return {
     name: "Check",
-    cells: [...line(0, [text("Every input as it is read", "title")]), ...line(2, [formula("=PROBE.CHECK(Site)", "label")])],
+    cells: [...line(0, [text("Every input as it is read", "title")]), ...line(2, [formula("=PROBE.CHECK(Site)", "head")]), ...[1, 2, 3].map((column): PlannedCell => ({ row: 2, column, style: column === 1 ? "numberhead" : "head" }))],
     columnWidths: [190, 160, 90, 620],
   };
 }

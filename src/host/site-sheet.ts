@@ -1,24 +1,16 @@
 import { CATALOGUE, templateRows } from "../inputs/index.js";
 import type { PlannedCell, SheetPlan } from "./workbook.js";
 
-const TITLE_ROWS = 2;
-const COLUMNS = "ABCD";
-
 /**
- * The sheet that holds a site block ready to be filled in: the template's rows below a title, inputs marked, and the
- * defined name Site over the block.
- *
- * @param title  stands above the block, outside the named range
- * @param name   of the sheet
+ * The sheet that holds a site block ready to be filled in: the template's rows with inputs marked, and the defined name
+ * Site over them. The block begins in the first row, so that a sentence about "row 12" means row 12 of the sheet.
  */
-export function siteSheet(title = "Site block", name = "Site"): SheetPlan {
+export function siteSheet(): SheetPlan {
   const rows = templateRows();
-  const cells: PlannedCell[] = [{ row: 0, column: 0, value: title, style: "title" }];
-  rows.forEach((row, index) => cells.push(...rowCells(row, index + TITLE_ROWS)));
   return {
-    name,
-    cells,
-    names: [{ name: "Site", range: `A${TITLE_ROWS + 1}:${COLUMNS[3]}${TITLE_ROWS + rows.length}` }],
+    name: "Site",
+    cells: rows.flatMap((row, index) => rowCells(row, index)),
+    names: [{ name: "Site", range: `A1:D${rows.length}` }],
     columnWidths: [190, 130, 86, 560],
   };
 }
@@ -31,7 +23,7 @@ function rowCells(row: readonly (string | number)[], at: number): PlannedCell[] 
   const kind = KINDS.get(label);
   const filled = row.map((value, column) => ({ row: at, column, value })).filter(({ value }) => value !== "");
   if (SECTIONS.has(label)) return [0, 1, 2, 3].map((column) => ({ row: at, column, value: row[column] ?? "", style: "section" }));
-  if (kind === "list") return filled.map((cell) => ({ ...cell, style: cell.column === 0 ? "label" : "note" }));
+  if (kind === "list" && (row[1] ?? "") === "") return filled.map((cell) => ({ ...cell, style: cell.column === 0 ? "label" : "note" }));
   if (kind !== undefined) {
     return [
       { row: at, column: 0, value: row[0]!, style: "label" },

@@ -60,7 +60,10 @@ export type CellStyle = "title" | "section" | "label" | "input" | "result" | "no
 /** How a number shows: 1,234 - 0.25 - 12.5 - 8.0 %; plain numbers without a format show as they are. */
 export type NumberLook = "money" | "ratio" | "metres" | "percent";
 
-/** One cell of a plan; row and column start at 0. A formula starts with "=" and wins over a value. */
+/**
+ * One cell of a plan; row and column start at 0. A formula starts with "=" and wins over a value. A cell with neither
+ * gives its look to what a formula spills into it.
+ */
 export interface PlannedCell {
   readonly row: number;
   readonly column: number;

@@ -1,4 +1,5 @@
 import type { FUniver } from "@univerjs/core/facade";
+import { SetSelectionsOperation, SetWorksheetActiveOperation } from "@univerjs/sheets";
 import type { CellReasons } from "./cell-reasons.js";
 import { cellName } from "./cell-name.js";
 import { errorSource, isErrorText } from "./error-trace.js";
@@ -31,10 +32,10 @@ export function cellLine(grid: FUniver, reasons: CellReasons, line: HTMLElement)
     const own = source.place === cellName(cell.getRow(), cell.getColumn());
     reason.textContent = `${own ? "" : `From ${source.place}: `}${source.sentences.join(" ")}`;
   };
-  // the grid tells of a change of sheet before it has one selected cell there
-  const soon = () => setTimeout(refresh);
-  grid.addEvent(grid.Event.SelectionChanged, soon);
-  grid.addEvent(grid.Event.ActiveSheetChanged, soon);
+  // the grid tells of a change of sheet before it has a selected cell there
+  grid.onCommandExecuted((command) => {
+    if (command.id === SetSelectionsOperation.id || command.id === SetWorksheetActiveOperation.id) setTimeout(refresh);
+  });
   return refresh;
 }
 

@@ -30,11 +30,6 @@ export class CellReasons {
   at(sheet: string, row: number, column: number): readonly string[] {
     return this.kept.get(cellKey(sheet, row, column))?.sentences ?? [];
   }
-
-  /** @returns one of the kept sentences; undefined where nothing failed */
-  first(): string | undefined {
-    return this.kept.values().next().value?.sentences[0];
-  }
 }
 
 function cellKey(sheet: string, row: number, column: number): string {

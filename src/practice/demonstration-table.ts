@@ -1,31 +1,31 @@
-import { demonstrationWorkbook } from "../host/demonstration-workbook.js";
-import type { CellValue } from "../host/workbook.js";
-import { workbookData } from "./grid-data.js";
-import { calculateWorkbook } from "./headless.js";
-import { PracticeWorkbook } from "./practice-workbook.js";
+import { Calculation } from "../formula/calculation.js";
+import { ErrorValue, type CellValue } from "../formula/cell-value.js";
+import { demonstrationBook } from "../formula/demonstration.js";
+import { gridFunctions } from "./grid-functions.js";
 
 /**
- * Calculates the demonstration workbook and reads its table of costs.
+ * Calculates the demonstration workbook without a page and reads its table of costs.
  *
  * @returns  the cells as aligned text, and a closing sentence with the cheapest number of holes
  * @throws {Error} with the cell's own sentence, where a cell of the table is an error
  */
-export async function demonstrationTable(): Promise<string> {
-  const { grid, reasons, close } = await calculateWorkbook(workbookData("demonstration", demonstrationWorkbook()));
+export function demonstrationTable(): string {
+  const calculation = new Calculation(demonstrationBook(), gridFunctions);
   try {
-    const workbook = new PracticeWorkbook(grid);
-    const [table, cheapest] = await Promise.all([workbook.readName("CostByCount"), workbook.readName("Cheapest")]);
-    if (table === undefined || cheapest === undefined) throw new Error("The demonstration workbook has lost its names CostByCount and Cheapest.");
-    const [head, ...rows] = table.values;
-    const best = rows.find((row) => row[0] === cheapest.values[0]?.[0]);
-    if (best === undefined || rows.flat().some((value) => typeof value !== "number")) {
-      throw new Error(`The demonstration could not be priced. ${reasons.first() ?? ""}`);
-    }
+    const [head, ...rows] = cells(calculation, "CostByCount");
+    const cheapest = cells(calculation, "Cheapest")[0]![0]!;
+    const best = rows.find((row) => row[0] === cheapest)!;
     const words = [head!.map(String), ...rows.map((row) => row.map(money))];
-    return `${aligned(words)}\n\nCheapest: ${String(best[0])} holes, ${money(best.at(-1)!)} in all.`;
+    return `${aligned(words)}\n\nCheapest: ${String(cheapest)} holes, ${money(best.at(-1)!)} in all.`;
   } finally {
-    close();
+    calculation.dispose();
   }
+}
+
+function cells(calculation: Calculation, name: string): CellValue[][] {
+  const { values, reason } = calculation.formula(name, 0);
+  if (values.flat().some((value) => value instanceof ErrorValue)) throw new Error(`The demonstration could not be priced: ${reason ?? "a cell of it is an error."}`);
+  return values.map((row) => [...row]);
 }
 
 function aligned(rows: readonly (readonly string[])[]): string {
@@ -33,6 +33,6 @@ function aligned(rows: readonly (readonly string[])[]): string {
   return rows.map((row) => row.map((word, column) => word.padStart(widths[column]!)).join("  ")).join("\n");
 }
 
-function money(value: CellValue | null): string {
+function money(value: CellValue): string {
   return Math.round(Number(value)).toLocaleString("en-US");
 }

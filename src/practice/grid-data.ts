@@ -76,15 +76,16 @@ function cellOf(cell: PlannedCell): ICellData {
 
 const RULE = { s: 1, cl: { rgb: "#c8ccd2" } };
 
-const HEAD: IStyleData = { bl: BooleanNumber.TRUE, bg: { rgb: "#e3ebf3" }, bd: { b: { s: 1, cl: { rgb: "#16324f" } } } };
+const INDENT = { l: 5 };
+const HEAD: IStyleData = { pd: INDENT, bl: BooleanNumber.TRUE, bg: { rgb: "#e2eeec" }, bd: { b: { s: 1, cl: { rgb: "#0b4a53" } } } };
 
 const STYLES: Record<CellStyle, IStyleData> = {
-  title: { fs: 15, bl: BooleanNumber.TRUE, cl: { rgb: "#16324f" } },
-  section: { bl: BooleanNumber.TRUE, cl: { rgb: "#16324f" }, bg: { rgb: "#e3ebf3" } },
-  label: {},
-  input: { cl: { rgb: "#0b3fa8" }, bg: { rgb: "#fff6d6" }, bd: { b: RULE, t: RULE, l: RULE, r: RULE } },
-  result: { bg: { rgb: "#e8f5ec" }, bd: { b: RULE, t: RULE, l: RULE, r: RULE } },
-  note: { cl: { rgb: "#5c6670" }, fs: 10, tb: WrapStrategy.OVERFLOW, pd: { l: 6 } },
+  title: { pd: INDENT, fs: 15, bl: BooleanNumber.TRUE, cl: { rgb: "#0b4a53" } },
+  section: { pd: INDENT, bl: BooleanNumber.TRUE, cl: { rgb: "#0b4a53" }, bg: { rgb: "#e2eeec" } },
+  label: { pd: INDENT },
+  input: { pd: INDENT, cl: { rgb: "#1c3f9e" }, bg: { rgb: "#fff6d6" }, bd: { b: RULE, t: RULE, l: RULE, r: RULE } },
+  result: { bg: { rgb: "#f0f5ef" }, bd: { b: RULE, t: RULE, l: RULE, r: RULE } },
+  note: { pd: INDENT, cl: { rgb: "#5c6670" }, fs: 10, tb: WrapStrategy.OVERFLOW },
   head: HEAD,
   numberhead: { ...HEAD, ht: HorizontalAlign.RIGHT },
 };

@@ -29,6 +29,9 @@ import "@univerjs/ui/facade";
 import type { CellReasons } from "./cell-reasons.js";
 import { gridFunctions } from "./grid-functions.js";
 
+// the page stays awake during a long calculation: after so many formulas keys and pointer have their turn
+const FORMULAS_A_TURN = 25;
+
 /** What the grid needs to start. */
 export interface GridStart {
   readonly container: HTMLElement;
@@ -54,7 +57,7 @@ export function startGrid({ container, workbook, descriptions, reasons, dark }: 
   });
   univer.registerPlugins([
     [UniverRenderEnginePlugin],
-    [UniverFormulaEnginePlugin, { function: gridFunctions(reasons) }],
+    [UniverFormulaEnginePlugin, { function: gridFunctions(reasons), intervalCount: FORMULAS_A_TURN }],
     [UniverUIPlugin, { container, header: true, toolbar: false, footer: true, contextMenu: true }],
     [UniverDocsPlugin],
     [UniverDocsUIPlugin],
@@ -66,5 +69,7 @@ export function startGrid({ container, workbook, descriptions, reasons, dark }: 
     [UniverSheetsNumfmtUIPlugin],
   ]);
   univer.createUnit(UniverInstanceType.UNIVER_SHEET, workbook);
-  return FUniver.newAPI(univer);
+  const grid = FUniver.newAPI(univer);
+  grid.getFormula().calculationStart(() => reasons.startRun());
+  return grid;
 }

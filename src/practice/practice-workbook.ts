@@ -1,16 +1,18 @@
-import { CellValueType, CommandType, type ICellData, type IRange } from "@univerjs/core";
+import { CellValueType, type ICellData, type IRange } from "@univerjs/core";
 import type { FUniver } from "@univerjs/core/facade";
 import { deserializeRangeWithSheet, serializeRange } from "@univerjs/engine-formula";
 import type { FWorkbook, FWorksheet } from "@univerjs/sheets/facade";
 import type { CellValue, InsertedSheet, RangeText, SheetPlan, Workbook } from "../host/workbook.js";
+import { Calculation } from "./calculation.js";
 import { reference, sheetData } from "./grid-data.js";
-
-// one call for a burst of changes: a fill of 500 cells is one change to the pane
-const QUIET_MILLISECONDS = 120;
 
 /** The practice page's grid as the workbook that the pane knows. */
 export class PracticeWorkbook implements Workbook {
-  constructor(private readonly grid: FUniver) {}
+  private readonly calculation: Calculation;
+
+  constructor(private readonly grid: FUniver) {
+    this.calculation = new Calculation(grid);
+  }
 
   async readName(name: string): Promise<RangeText | undefined> {
     const place = this.placeOf(name);
@@ -46,16 +48,7 @@ export class PracticeWorkbook implements Workbook {
   }
 
   onChanged(handler: () => void): () => void {
-    let timer: ReturnType<typeof setTimeout> | undefined;
-    const listening = this.grid.onCommandExecuted((command) => {
-      if (command.type !== CommandType.MUTATION || !/set-range-values|array-formula-data|worksheet|defined-name|rows|col/.test(command.id)) return;
-      clearTimeout(timer);
-      timer = setTimeout(handler, QUIET_MILLISECONDS);
-    });
-    return () => {
-      clearTimeout(timer);
-      listening.dispose();
-    };
+    return this.calculation.onSettled(handler);
   }
 
   private get book(): FWorkbook {

@@ -1,0 +1,145 @@
+import { mkdtemp, mkdir, rm } from "node:fs/promises";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { fileURLToPath } from "node:url";
+import type { Browser, Page } from "playwright-core";
+import { buildPractice } from "../../../src/build/practice-page.js";
+import { servePractice, type PracticeServer } from "../../../src/build/practice-server.js";
+import { launchBrowser } from "./browser.js";
+
+const SCREENSHOTS = fileURLToPath(new URL("../out/", import.meta.url));
+
+/** The built page on a server of its own, with a browser to open it in. */
+export interface Practice {
+  readonly browser: Browser;
+  readonly address: string;
+  close(): Promise<void>;
+}
+
+/** Builds the page into a temporary folder, serves it on a free port and starts the browser. */
+export async function startPractice(): Promise<Practice> {
+  const folder = await mkdtemp(join(tmpdir(), "practice-"));
+  await buildPractice(folder);
+  const server: PracticeServer = await servePractice(folder, 0);
+  const browser = await launchBrowser();
+  return {
+    browser,
+    address: server.address,
+    close: async () => {
+      await browser.close();
+      await server.close();
+      await rm(folder, { recursive: true });
+    },
+  };
+}
+
+/** What a page did that a person may not see. */
+export interface PageLog {
+  /** everything written to the console above the level of a note, and every uncaught error */
+  readonly complaints: string[];
+  /** address of every request, and of every socket */
+  readonly requests: string[];
+}
+
+/** The page as a person uses it: by keyboard, mouse and what can be read on it. */
+export class PracticePage {
+  private constructor(
+    readonly page: Page,
+    readonly log: PageLog,
+  ) {}
+
+  /** Opens the page and waits until the workbook is calculated. */
+  static async open(practice: Practice, options: { width?: number; height?: number; dark?: boolean } = {}): Promise<PracticePage> {
+    const context = await practice.browser.newContext({
+      permissions: ["clipboard-read", "clipboard-write"],
+      viewport: { width: options.width ?? 1360, height: options.height ?? 860 },
+      colorScheme: options.dark === true ? "dark" : "light",
+    });
+    const page = await context.newPage();
+    const log: PageLog = { complaints: [], requests: [] };
+    page.on("console", (message) => {
+      if (message.type() === "error" || message.type() === "warning") log.complaints.push(`${message.type()}: ${message.text()}`);
+    });
+    page.on("pageerror", (error) => log.complaints.push(`uncaught: ${error.message}`));
+    page.on("request", (request) => log.requests.push(request.url()));
+    page.on("websocket", (socket) => log.requests.push(socket.url()));
+    await page.goto(practice.address);
+    await page.locator("body[data-state=ready]").waitFor({ timeout: 60_000 });
+    return new PracticePage(page, log);
+  }
+
+  /** Brings a sheet to the front by its tab. */
+  async showSheet(name: string): Promise<void> {
+    await this.page.getByRole("tablist", { name: "Sheet tabs" }).getByText(name, { exact: true }).click();
+    await this.page.waitForFunction((wanted) => document.getElementById("cell-place")?.textContent?.startsWith(`${wanted}!`), name);
+  }
+
+  /** Selects a cell of the sheet in front, or a range ("B5:G17"), through the box that names the selection. */
+  async select(cell: string): Promise<void> {
+    const box = this.page.locator("#grid input").first();
+    await box.click();
+    await box.fill(cell);
+    await box.press("Enter");
+    const first = cell.split(":")[0]!;
+    await this.page.waitForFunction((wanted) => document.getElementById("cell-place")?.textContent?.endsWith(`!${wanted}`), first);
+  }
+
+  /** Types into a cell as at a keyboard and waits until everything that depends on it is calculated. */
+  async type(cell: string, text: string): Promise<void> {
+    await this.select(cell);
+    await this.calculated(async () => {
+      await this.page.keyboard.type(text);
+      await this.page.keyboard.press("Enter");
+    });
+  }
+
+  /** Empties the selected cells. */
+  async clear(cell: string): Promise<void> {
+    await this.select(cell);
+    await this.calculated(() => this.page.keyboard.press("Delete"));
+  }
+
+  /** Does something that changes cells and waits until the page says that it is calculated. */
+  async calculated(action: () => Promise<void>): Promise<void> {
+    await this.page.evaluate(() => (document.body.dataset["state"] = "waiting"));
+    await action();
+    await this.page.locator("body[data-state=ready]").waitFor({ timeout: 60_000 });
+  }
+
+  /** Selects a cell and reads the line under the grid. */
+  async read(cell: string): Promise<{ value: string; reason: string }> {
+    await this.select(cell);
+    return { value: (await this.page.textContent("#cell-value")) ?? "", reason: (await this.page.textContent("#cell-reason")) ?? "" };
+  }
+
+  /** Selects a cell and reads its number. */
+  async number(cell: string): Promise<number> {
+    const { value } = await this.read(cell);
+    return Number(value.replaceAll(",", "").replace("%", ""));
+  }
+
+  /** Copies a cell over a range, as with Ctrl+C and Ctrl+V. */
+  async fill(from: string, range: string): Promise<void> {
+    await this.select(from);
+    await this.page.keyboard.press("Control+C");
+    await this.select(range);
+    await this.calculated(() => this.page.keyboard.press("Control+V"));
+  }
+
+  /** Reads the texts of a column, from one row to another, in lines. */
+  async columnText(column: string, first: number, last: number): Promise<string> {
+    const lines: string[] = [];
+    for (let row = first; row <= last; row++) lines.push((await this.read(`${column}${row}`)).value);
+    return lines.join("\n");
+  }
+
+  /** Keeps a picture for the eye; pictures are never compared. */
+  async picture(name: string): Promise<void> {
+    await mkdir(SCREENSHOTS, { recursive: true });
+    await this.page.screenshot({ path: join(SCREENSHOTS, `${name}.png`) });
+  }
+
+  async close(): Promise<void> {
+    await this.page.context().close();
+  }
+}

@@ -1,0 +1,130 @@
+import { afterAll, beforeAll, expect, it } from "vitest";
+import { PracticePage, startPractice, type Practice } from "./harness/practice-page.js";
+
+let practice: Practice;
+let sheet: PracticePage;
+
+beforeAll(async () => {
+  practice = await startPractice();
+  sheet = await PracticePage.open(practice);
+});
+
+afterAll(async () => {
+  await sheet?.close();
+  await practice?.close();
+});
+
+// Source: Vanmarcke (1983), Markov correlation at T = theta: (1 + e^-2)/2
+it("shows the number of a formula typed into a cell, in capitals or not", async () => {
+  await sheet.showSheet("Site");
+  await sheet.type("F2", "=PROBE.VARIANCEFACTOR(3,3)");
+  await sheet.type("F3", "=probe.variancefactor(3,3)");
+  expect(await sheet.number("F2")).toBeCloseTo((1 + Math.exp(-2)) / 2, 9);
+  expect(await sheet.number("F3")).toBeCloseTo((1 + Math.exp(-2)) / 2, 9);
+});
+
+// Identity: a hole's price enters the total once for each hole.
+it("moves the total by two hole prices when an input of the site block changes", async () => {
+  await sheet.showSheet("Site");
+  const row = await rowOf("Price per hole");
+  const price = await sheet.number(`B${row}`);
+  await sheet.type("F4", "=PROBE.TOTALCOST(Site,2)");
+  const before = await sheet.number("F4");
+  await sheet.type(`B${row}`, String(price + 500));
+  expect((await sheet.number("F4")) - before).toBeCloseTo(1000, 4);
+  await sheet.type(`B${row}`, String(price));
+  expect(await sheet.number("F4")).toBe(before);
+});
+
+// Identity: a pair in the formula stands for the same value in the block.
+it("takes a label and value after the count in place of the block's input", async () => {
+  await sheet.showSheet("Site");
+  const row = await rowOf("Price per hole");
+  const price = await sheet.number(`B${row}`);
+  await sheet.type("F5", `=PROBE.TOTALCOST(Site,2,"Price per hole",${price + 500})-PROBE.TOTALCOST(Site,2)`);
+  expect(await sheet.number("F5")).toBeCloseTo(1000, 4);
+});
+
+// Identity: table and single functions come from one assessment.
+it("spills a table of costs that agrees with the single cells", async () => {
+  await sheet.showSheet("Counts");
+  const totals = [];
+  for (const row of [5, 8, 17]) totals.push(await sheet.number(`F${row}`));
+  const head = [];
+  for (const column of "ABCDEF") head.push((await sheet.read(`${column}20`)).value);
+  expect(head[0]).toMatch(/holes|count/i);
+  const column = "ABCDEF"[head.findIndex((word) => /total/i.test(word))];
+  for (const [index, row] of [21, 24, 33].entries()) expect(await sheet.number(`${column}${row}`)).toBeCloseTo(totals[index]!, -1);
+});
+
+// The whole table is emptied and made again from its first cell, as a person does it. Identity: a cell of the table is
+// the same formula typed alone, and at the block's own COV the column of the Counts sheet.
+it("fills a two-way sensitivity table down and across from one formula", async () => {
+  await sheet.showSheet("Sensitivity");
+  await sheet.clear("B5:G17");
+  expect((await sheet.read("D9")).value).toBe("");
+  await sheet.type("B5", '=PROBE.TOTALCOST(Site,$A5,"Stiffness COV",B$4)');
+  await sheet.fill("B5", "B5:G17");
+  const alone = await sheet.number("D9");
+  expect(alone).toBeGreaterThan(0);
+  await sheet.type("J5", '=PROBE.TOTALCOST(Site,4,"Stiffness COV",0.4)');
+  expect(Math.round(await sheet.number("J5"))).toBe(Math.round(alone));
+  const corner = await sheet.number("G17");
+  await sheet.type("J6", '=PROBE.TOTALCOST(Site,12,"Stiffness COV",0.8)');
+  expect(Math.round(await sheet.number("J6"))).toBe(Math.round(corner));
+  expect(Math.round(corner)).not.toBe(Math.round(alone));
+});
+
+it("says in a sentence why a cell cannot be priced, and passes it on to the cells behind", async () => {
+  await sheet.showSheet("Site");
+  const row = await rowOf("Price per hole");
+  const price = await sheet.number(`B${row}`);
+  await sheet.type("F6", "=F4*2");
+  await sheet.clear(`B${row}`);
+  const own = await sheet.read("F4");
+  expect(own.value).toBe("#VALUE!");
+  expect(own.reason).toMatch(/Price per hole.*blank/i);
+  expect(own.reason).toContain(String(row));
+  const behind = await sheet.read("F6");
+  expect(behind.value).toBe("#VALUE!");
+  expect(behind.reason).toContain("From F4:");
+  await sheet.picture("error-sentence");
+  await sheet.showSheet("Bid");
+  expect((await sheet.read("E17")).reason).toMatch(/Price per hole/);
+  await sheet.showSheet("Check");
+  expect(await sheet.columnText("D", 3, 80)).toMatch(/blank/i);
+  await sheet.showSheet("Site");
+  await sheet.type(`B${row}`, String(price));
+  expect(await sheet.read("F4")).toMatchObject({ reason: "" });
+});
+
+it.each([
+  ["=PROBE.TOTALCOST(Site)", /count/i],
+  ["=PROBE.TOTALCOST(Site,-1)", /-1/],
+  ["=PROBE.TOTALCOST(Site,1.5)", /1\.5/],
+  ['=PROBE.TOTALCOST(Site,2,"Stifness COV",0.3)', /Stiffness COV/],
+  ['=PROBE.TOTALCOST(Site,2,"Stiffness COV")', /no value/i],
+  ["=PROBE.TOTALCOST(NA(),2)", /#N\/A/],
+  ["=PROBE.TOTALCOST(H1,2)", /./],
+  ["=PROBE.TOTALCOST(A:D,2.5)", /2\.5/],
+  ["=PROBE.SETTLEMENT(1000,10)", /diameter/i],
+  ["=PROBE.NOSUCH(1)", /PROBE\./],
+])("gives %s an error value with a sentence", async (formula, words) => {
+  await sheet.showSheet("Site");
+  await sheet.type("F8", formula);
+  const { value, reason } = await sheet.read("F8");
+  expect(value).toMatch(/^#(VALUE!|N\/A|NAME\?)$/);
+  expect(reason).toMatch(words);
+  expect(reason).toMatch(/[a-z]{3}.*\.$/);
+});
+
+it("never wrote to the console and never asked anything of another machine", () => {
+  expect(sheet.log.complaints).toEqual([]);
+  expect(sheet.log.requests.length).toBeGreaterThan(2);
+  expect(sheet.log.requests.filter((address) => !address.startsWith(practice.address) && !/^(data|blob):/.test(address))).toEqual([]);
+});
+
+async function rowOf(label: string): Promise<number> {
+  for (let row = 1; row <= 120; row++) if ((await sheet.read(`A${row}`)).value === label) return row;
+  throw new Error(`The site block has no row ${label}.`);
+}
