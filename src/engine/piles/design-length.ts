@@ -107,7 +107,6 @@ function stiffEnough(form: Form, from: number, to: number, needed: number): numb
     if (dimensionless(form, middle) >= needed) return middle;
     if (elasticity > 0) low = middle;
     else high = middle;
-    if (middle === low && middle === high) break;
   }
   return undefined;
 }
