@@ -13,7 +13,7 @@ const PORT = 3100;
 export async function start(folder: string): Promise<void> {
   await rm(folder, { recursive: true, force: true });
   await buildPractice(folder);
-  process.stdout.write(`The demonstration bid, expected costs by number of holes\n\n${await demonstrationTable()}\n\n`);
+  process.stdout.write(`The demonstration bid, expected costs by number of holes\n\n${demonstrationTable()}\n\n`);
   const { address, close } = await servePractice(folder, PORT);
   for (const signal of ["SIGINT", "SIGTERM"] as const) process.once(signal, () => void close());
   process.stdout.write(`The practice workbook is at ${address} (stop with Ctrl+C). Nothing leaves this machine.\n`);
