@@ -3,6 +3,8 @@ import type { CorrelationFamily } from "./correlation-family.js";
 
 /** Below this thickness, in scales of fluctuation, differences of integrals lose more digits than three Gauss points. */
 const THIN = 2 ** -12;
+/** Below this one a cell is a point: the correlation changes by less than the error stated below, and squares may vanish. */
+const POINT = 1e-10;
 
 /**
  * Correlation of the ground averaged over two cells of a line, from the second integral F of the correlation (F'' = rho):
@@ -22,7 +24,7 @@ export function averageCovariance(family: CorrelationFamily, distance: number, t
   const d = Math.abs(distance);
   const thin = Math.min(thicknessA, thicknessB);
   const thick = Math.max(thicknessA, thicknessB);
-  if (thin === 0) return pointToCell(family, d, thick);
+  if (thin < POINT) return pointToCell(family, d, thick);
   const apart = d - (thin + thick) / 2;
   if (thin < THIN && (apart >= 0 || thin < THIN * thick)) {
     const { nodes, weights } = gaussLegendre(3);
@@ -37,7 +39,7 @@ export function averageCovariance(family: CorrelationFamily, distance: number, t
 }
 
 function pointToCell(family: CorrelationFamily, d: number, thickness: number): number {
-  if (thickness === 0) return family.correlation(d);
+  if (thickness < POINT) return family.correlation(d);
   const half = thickness / 2;
   if (d <= half) return (family.integral(half + d) + family.integral(half - d)) / thickness;
   if (thickness >= THIN) return (family.tail(d - half) - family.tail(d + half)) / thickness;

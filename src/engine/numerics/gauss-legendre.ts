@@ -12,9 +12,9 @@ const known = new Map<number, QuadratureRule>();
  * Gauss-Legendre rule on the interval from 0 to 1, exact for polynomials of degree 2 n - 1.
  *
  * @param n  number of points, 1 to 1000
- * @returns nodes in increasing order and weights that sum to 1, absolute error below 1e-15; shared, not to be written to
+ * @returns nodes in increasing order and weights that sum to 1, error below 1e-15; shared, not to be written to
  * @throws {DomainError} n is out of range
- * @source Newton's iteration on the Legendre recurrence from the usual cosine starting values, e.g. Press et al. (2007),
+ * @source Newton's iteration on the Legendre recurrence from the usual cosine starting values, as in Press et al. (2007),
  *   Numerical Recipes, 4.6 (method only)
  */
 export function gaussLegendre(n: number): QuadratureRule {
@@ -24,25 +24,29 @@ export function gaussLegendre(n: number): QuadratureRule {
   return rule;
 }
 
+/** Newton's iteration for t = 1 - x, in which nodes and weights near the end keep their relative accuracy. */
 function makeRule(n: number): QuadratureRule {
   const nodes = new Float64Array(n);
   const weights = new Float64Array(n);
   for (let i = 0; i < (n + 1) >> 1; i++) {
-    let x = Math.cos((Math.PI * (i + 0.75)) / (n + 0.5));
+    let t = 2 * Math.sin((Math.PI * (i + 0.75)) / (2 * n + 1)) ** 2;
     let slope = 0;
     for (let iteration = 0; iteration < 100; iteration++) {
-      let previous = 0;
       let value = 1;
-      for (let k = 1; k <= n; k++) [previous, value] = [value, x * value + ((k - 1) / k) * (x * value - previous)];
-      slope = (n * (x * value - previous)) / (x * x - 1);
+      let rise = 0; // of the polynomial over the one of a degree less
+      for (let k = 0; k < n; k++) {
+        rise = (k * rise - (2 * k + 1) * t * value) / (k + 1);
+        value += rise;
+      }
+      slope = (n * (rise - t * value)) / (t * (2 - t));
       const step = value / slope;
-      x -= step;
-      if (Math.abs(step) < 1e-15) break;
+      t -= step;
+      if (Math.abs(step) < 1e-15 * t) break;
     }
-    if (2 * i + 1 === n) x = 0;
-    nodes[i] = (1 - x) / 2;
-    nodes[n - 1 - i] = (1 + x) / 2;
-    weights[i] = weights[n - 1 - i] = 1 / ((1 - x * x) * slope * slope);
+    if (2 * i + 1 === n) t = 1;
+    nodes[i] = t / 2;
+    nodes[n - 1 - i] = 1 - t / 2;
+    weights[i] = weights[n - 1 - i] = 1 / (t * (2 - t) * slope * slope);
   }
   return { nodes, weights };
 }

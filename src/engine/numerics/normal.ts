@@ -67,15 +67,15 @@ export function normalQuantile(p: number): number {
  * @param u  any number
  * @returns G(u) = phi(u) - u (1 - Phi(u)), >= 0, relative error below 1e-14 for u <= 37
  * @throws {DomainError} u is not finite
- * @source Raiffa & Schlaifer (1961), Applied Statistical Decision Theory. Above 2, where the two terms cancel, the continued
+ * @source Raiffa & Schlaifer (1961), Applied Statistical Decision Theory. Above 3, where the two terms cancel, the continued
  *   fraction of the repeated integrals, G/(1 - Phi) = 1/(u + 2/(u + 3/(u + ...))).
  */
 export function unitNormalLoss(u: number): number {
   requireDomain(Number.isFinite(u), "Standardised break-even distance", u, "a finite number");
-  if (u <= 2) return normalDensity(u) - u * normalDistribution(-u);
+  if (u <= 3) return normalDensity(u) - u * normalDistribution(-u);
   let denominator = u;
-  // The error falls as exp(-2 u sqrt(2 k)); this many terms bring it below the last digit.
-  for (let k = Math.ceil(200 / (u * u)) + 2; k >= 2; k--) denominator = u + k / denominator;
+  // So many terms bring the error below the last digit; found by trial from 3 to 37.
+  for (let k = Math.ceil(420 / (u * u)) + 10; k >= 2; k--) denominator = u + k / denominator;
   return normalDistribution(-u) / denominator;
 }
 

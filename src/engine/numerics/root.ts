@@ -17,7 +17,8 @@ import { DomainError } from "./domain-error.js";
 export function bracketedRoot(f: (x: number) => number, low: number, high: number, tolerance = 0): number {
   let a = low, b = high;
   let fa = f(a), fb = f(b);
-  if (!(fa * fb <= 0)) throw new DomainError(`No root between ${low} and ${high}: the function is ${fa} and ${fb} at the ends.`);
+  const bracketed = (fa <= 0 && fb >= 0) || (fa >= 0 && fb <= 0);
+  if (!bracketed) throw new DomainError(`No root between ${low} and ${high}: the function is ${fa} and ${fb} at the ends.`);
   let c = a, fc = fa;
   let step = b - a, before = step;
   for (;;) {
