@@ -11,7 +11,6 @@ import { holeCovariance } from "./hole-covariance.js";
 import { preparedSite } from "./prepared-site.js";
 import type { Problem } from "./problem.js";
 import { Remembered } from "./remembered.js";
-import { standardDraws } from "./standard-draws.js";
 
 /**
  * Relative scatter of the fast failure cost about finite elements, and the part of it that does not cancel between two counts of
@@ -141,8 +140,7 @@ function outcomeOf(problem: Problem, count: number, keep: boolean): Outcome {
   const site = preparedSite(problem);
   const law = site.design(count);
   const holes = holeCovariance(site.model, site.layout(count), law);
-  const piles = problem.building.piles.length;
-  return expectedOutcome(problem, site.model, holes, law, standardDraws(piles, problem.delay.foundShare > 0, problem.seed), keep);
+  return expectedOutcome(problem, site.model, holes, law, keep);
 }
 
 function requireCount(count: number): void {

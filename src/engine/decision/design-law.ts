@@ -58,7 +58,7 @@ export function nearestLaw(single: DesignDistribution, between: Float64Array, ho
  * for several a quasi-random set.
  */
 export function outerNodes(law: DesignLaw, seed: string): OuterNodes {
-  if (law.size === 0) return { normals: new Float64Array(0), weights: Float64Array.of(1), drawsPerNode: totalDraws / 8 };
+  if (law.size === 0) return { normals: new Float64Array(0), weights: Float64Array.of(1), drawsPerNode: totalDraws };
   if (law.size === 1) {
     const normals = Float64Array.from({ length: commonNodes }, (_, k) => spread * normalQuantile((k + 0.5) / commonNodes));
     const weights = normals.map((value) => Math.exp(-(value ** 2) / 2 + (value / spread) ** 2 / 2));

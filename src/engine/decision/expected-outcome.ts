@@ -1,13 +1,14 @@
 import { damageShare } from "../costs/damage.js";
 import { foundationCost } from "../costs/prices.js";
 import { gaussLegendre } from "../numerics/gauss-legendre.js";
-import { lnDesignValues, outerNodes, totalDraws, type DesignLaw } from "./design-law.js";
+import { lnDesignValues, outerNodes, type DesignLaw } from "./design-law.js";
 import type { HoleCovariance } from "./hole-covariance.js";
 import { nodeMoments } from "./node-moments.js";
-import { chanceTooSoft, expectedLnStiffness, lengthLaws, type LengthLaws } from "./needed-length.js";
-import { damageThreshold, drawDistortions, type FoundSurprises } from "./node-draws.js";
+import { chanceTooSoft, expectedLnStiffness, lengthLaws, trialLength, type LengthLaws, type TrialLength } from "./needed-length.js";
+import { damageThreshold, distortionDraws, type FoundSurprises } from "./node-draws.js";
 import { designLengths } from "./design-lengths.js";
 import type { Problem } from "./problem.js";
+import { standardDraws } from "./standard-draws.js";
 import type { SiteModel } from "./site-model.js";
 
 /** Blocks of draws whose scatter gives the standard error. */
@@ -36,11 +37,10 @@ export interface Outcome {
  * @param model    ground under the piles
  * @param holes    what the design values say of it
  * @param law      of the design values
- * @param draws    standard normals, dimension by dimension: 2 a pile, then uniforms, 1 a pile, where surprises are found
  * @param keep     whether each draw's cost is kept
  */
 export function expectedOutcome(
-  problem: Problem, model: SiteModel, holes: HoleCovariance, law: DesignLaw, draws: Float64Array, keep: boolean,
+  problem: Problem, model: SiteModel, holes: HoleCovariance, law: DesignLaw, keep: boolean,
 ): Outcome {
   const { plan } = model;
   const n = plan.piles.length;
@@ -50,8 +50,10 @@ export function expectedOutcome(
   const kept = keep ? nodes.weights.length * drawsPerNode : 0;
   const costs = new Float64Array(kept);
   const weights = new Float64Array(kept);
-  const distortion = new Float64Array(drawsPerNode);
-  const foundCount = new Float64Array(drawsPerNode);
+  const finds = delay.foundShare > 0;
+  const draws = standardDraws(n, finds, drawsPerNode, problem.seed);
+  const width = (finds ? 3 : 2) * n * drawsPerNode;
+  const { distortion, foundCount, draw } = distortionDraws(plan, drawsPerNode);
   const threshold = damageThreshold(building.damage);
   const needed = Float64Array.from(plan.piles, (p) => Math.log(p.load / building.allowableSettlement));
   const sum = { foundation: 0, failure: 0, delay: 0, failureChance: 0, surprises: 0, tooShort: 0, metres: 0 };
@@ -67,19 +69,12 @@ export function expectedOutcome(
     sum.foundation += weight * foundation;
     sum.metres += weight * metres;
     if (!allowable) sum.tooShort += weight;
-    let surprises = 0;
-    let extension = 0;
-    for (let i = 0; i < n; i++) {
-      const at = surpriseOf(problem, lengths[i], (length) => chanceTooSoft(laws, model, holes, i, length, normals, needed[i]));
-      surprises += at.chance;
-      extension += at.extension;
-    }
+    const { surprises, extension } = surprisesAt(problem, model, laws, lengths, (trial, i) => chanceTooSoft(trial, model.slopes.length, holes, i, normals), needed);
     sum.surprises += weight * surprises;
     const perFound = delay.daysPerSurprise * delay.dayCost;
     const nodeDelay = delay.foundShare * (surprises * perFound + extension * prices.perPileMetre);
     sum.delay += weight * nodeDelay;
-    const found = delay.foundShare > 0 ? foundSurprises(problem, moments.lengths, laws, needed) : undefined;
-    drawDistortions(plan, moments, { values: draws, count: totalDraws, first: node * drawsPerNode, size: drawsPerNode }, found, distortion, foundCount);
+    draw(moments, draws.subarray(node * width, (node + 1) * width), finds ? foundSurprises(problem, moments.lengths, laws, needed) : undefined);
     const each = surprises > 0 ? nodeDelay / (delay.foundShare * surprises || 1) : 0;
     for (let m = 0; m < drawsPerNode; m++) {
       const loss = distortion[m] > threshold ? building.value * damageShare(building.damage, distortion[m]) : 0;
@@ -88,7 +83,7 @@ export function expectedOutcome(
       if (loss > 0) sum.failureChance += share;
       replicate[Math.floor((m * replicates) / drawsPerNode)] += share * replicates * loss;
       if (keep) {
-        costs[node * drawsPerNode + m] = foundation + loss + (found === undefined ? 0 : foundCount[m] * each);
+        costs[node * drawsPerNode + m] = foundation + loss + foundCount[m] * each;
         weights[node * drawsPerNode + m] = share;
       }
     }
@@ -101,22 +96,32 @@ export function expectedOutcome(
   };
 }
 
-/** Chance that a pile is a surprise, and the metres by which it would be lengthened. */
-function surpriseOf(problem: Problem, length: number, tooSoft: (length: number) => number): { chance: number; extension: number } {
+/** Expected number of surprises, and the metres by which they would be lengthened, at one set of design lengths. */
+function surprisesAt(
+  problem: Problem, model: SiteModel, laws: LengthLaws, lengths: Float64Array, tooSoft: (trial: TrialLength, pile: number) => number, needed: Float64Array,
+): { surprises: number; extension: number } {
   const { longest } = problem.piles;
-  const from = length + problem.delay.surpriseTolerance;
-  // A pile at the longest length cannot be lengthened: nothing on site tells it from the others.
-  const chance = from < longest ? tooSoft(from) : 0;
-  if (problem.delay.foundShare === 0 || chance < 1e-9) return { chance, extension: 0 };
-  return { chance, extension: problem.delay.surpriseTolerance * chance + integral(from, longest, tooSoft) };
-}
-
-/** Six-point Gauss rule in length. */
-function integral(from: number, to: number, value: (length: number) => number): number {
+  const { surpriseTolerance, foundShare } = problem.delay;
   const { nodes, weights } = gaussLegendre(6);
-  let sum = 0;
-  for (let k = 0; k < nodes.length; k++) sum += weights[k] * value(from + (to - from) * nodes[k]);
-  return sum * (to - from);
+  let surprises = 0;
+  let extension = 0;
+  const trials = new Map<number, { length: number; at: TrialLength[] }>();
+  for (let i = 0; i < lengths.length; i++) {
+    const from = lengths[i] + surpriseTolerance;
+    // A pile at the longest length cannot be lengthened: nothing on site tells it from the others.
+    if (from >= longest) continue;
+    let trial = trials.get(needed[i]);
+    if (trial === undefined || trial.length !== lengths[i]) {
+      const steps = foundShare > 0 ? Array.from(nodes, (node) => from + (longest - from) * node) : [];
+      trials.set(needed[i], (trial = { length: lengths[i], at: [from, ...steps].map((length) => trialLength(laws, model, length, needed[i])) }));
+    }
+    const chance = tooSoft(trial.at[0], i);
+    surprises += chance;
+    if (foundShare === 0 || chance < 1e-9) continue;
+    extension += surpriseTolerance * chance;
+    for (let q = 0; q < nodes.length; q++) extension += weights[q] * (longest - from) * tooSoft(trial.at[q + 1], i);
+  }
+  return { surprises, extension };
 }
 
 function foundSurprises(problem: Problem, lengths: Float64Array, laws: LengthLaws, needed: Float64Array): FoundSurprises {
@@ -131,6 +136,5 @@ function foundSurprises(problem: Problem, lengths: Float64Array, laws: LengthLaw
       return trial < longest ? gain(i, trial) : Infinity;
     }),
     toLongest: Float64Array.from({ length: n }, (_, i) => gain(i, longest)),
-    dimension: 2 * n,
   };
 }

@@ -72,49 +72,63 @@ export function expectedLnStiffness(laws: LengthLaws, length: number): number {
   return (1 - t) * laws.base[at] + t * laws.base[at + 1];
 }
 
+/** The law at one trial length, with the place of the length among the family's. */
+export interface TrialLength {
+  readonly start: number;
+  readonly weights: Float64Array;
+  /** ln stiffness at which the pile would be just right, in terms of Z; NaN-free: -Infinity where none is needed, Infinity where none is enough */
+  readonly threshold: number;
+  readonly variance: number;
+  readonly restVariance: number;
+}
+
 /**
- * Chance that a pile is softer than needed at a trial length, given the design values.
+ * The law at a trial length against a needed stiffness; the same for all piles of one load.
  *
- * @param laws       of the site
- * @param model      ground under the piles
- * @param holes      what the design values say of it
- * @param pile       index of the pile
- * @param length     trial length, m
- * @param normals    the normals behind the design values
- * @param needed     ln stiffness that makes the settlement allowable
+ * @param laws    of the site
+ * @param model   ground under the piles
+ * @param length  trial length, m
+ * @param needed  ln stiffness that makes the settlement allowable
  */
-export function chanceTooSoft(
-  laws: LengthLaws, model: SiteModel, holes: HoleCovariance, pile: number, length: number, normals: Float64Array, needed: number,
-): number {
+export function trialLength(laws: LengthLaws, model: SiteModel, length: number, needed: number): TrialLength {
   const { at, t } = place(laws, length);
   const along = (values: Float64Array): number => (1 - t) * values[at] + t * values[at + 1];
-  const total = along(laws.variance);
+  const variance = along(laws.variance);
   const curve = along(laws.curve);
-  let mean = 0;
-  let variance = total;
-  const { size } = holes;
-  if (size > 0) {
-    const grid = model.family.logLengths;
-    const { start, weights } = lagrangeWeights(grid, clamp(Math.log(length), grid[0], grid[grid.length - 1]));
-    for (let s = 0; s < size; s++) {
-      let toNormal = 0;
-      for (let q = 0; q < 4; q++) toNormal += weights[q] * holes.design[(pile * grid.length + start + q) * size + s];
-      mean += toNormal * normals[s];
-      variance -= toNormal ** 2;
-    }
-    variance = Math.max(variance, 0);
-  }
-  const gap = needed - along(laws.base) - curve * total;
+  const gap = needed - along(laws.base) - curve * variance;
   let threshold = gap;
   if (Math.abs(curve) > 1e-9) {
     // Lower root of gap = z - curve z^2: beyond the parabola's top no ground is stiff enough.
     const root = 1 - 4 * curve * gap;
-    if (root <= 0) return curve > 0 ? 1 : 0;
-    threshold = (1 - Math.sqrt(root)) / (2 * curve);
+    threshold = root <= 0 ? (curve > 0 ? Infinity : -Infinity) : (1 - Math.sqrt(root)) / (2 * curve);
   }
-  const spread = Math.sqrt(variance + along(laws.restVariance));
-  if (spread === 0) return mean < threshold ? 1 : 0;
-  return normalDistribution((threshold - mean) / spread);
+  const grid = model.family.logLengths;
+  const { start, weights } = lagrangeWeights(grid, clamp(Math.log(length), grid[0], grid[grid.length - 1]));
+  return { start, weights, threshold, variance, restVariance: along(laws.restVariance) };
+}
+
+/**
+ * Chance that a pile is softer than needed at a trial length, given the design values.
+ *
+ * @param trial    of `trialLength`
+ * @param lengths  number of lengths of the family
+ * @param holes    what the design values say of the ground
+ * @param pile     index of the pile
+ * @param normals  the normals behind the design values
+ */
+export function chanceTooSoft(trial: TrialLength, lengths: number, holes: HoleCovariance, pile: number, normals: Float64Array): number {
+  const { size } = holes;
+  let mean = 0;
+  let variance = trial.variance;
+  for (let s = 0; s < size; s++) {
+    let toNormal = 0;
+    for (let q = 0; q < 4; q++) toNormal += trial.weights[q] * holes.design[(pile * lengths + trial.start + q) * size + s];
+    mean += toNormal * normals[s];
+    variance -= toNormal ** 2;
+  }
+  const spread = Math.sqrt(Math.max(variance, 0) + trial.restVariance);
+  if (spread === 0 || !Number.isFinite(trial.threshold)) return mean < trial.threshold ? 1 : 0;
+  return normalDistribution((trial.threshold - mean) / spread);
 }
 
 function place(laws: LengthLaws, length: number): { at: number; t: number } {

@@ -2,7 +2,7 @@ import { choleskyInPlace } from "../numerics/cholesky.js";
 import { lagrangeWeights } from "../numerics/lagrange.js";
 import type { HoleCovariance } from "./hole-covariance.js";
 import type { SiteModel } from "./site-model.js";
-import { ranks } from "./structure-tables.js";
+import { secondOrderTerms } from "./second-order-terms.js";
 
 /** The piles at one node: moments of Z and the quadratic that stands for Q, all given the design values. */
 export interface NodeMoments {
@@ -14,14 +14,11 @@ export interface NodeMoments {
   readonly covariance: Float64Array;
   /** its lower Cholesky factor */
   readonly factor: Float64Array;
-  /** second-order term given the deviations xi of the pile and its neighbours: constant, linear, quadratic (see `quadraticWidth`) */
+  /** second-order term given the deviations xi of the pile and its neighbours: constant, linear, quadratic (piles x `quadraticWidth`) */
   readonly quadratic: Float64Array;
   /** standard deviation of what the quadratic leaves out, one a pile */
   readonly residual: Float64Array;
 }
-
-/** A pile and up to four neighbours: 1 + 5 + 15 coefficients. */
-export const quadraticWidth = 21;
 
 /**
  * Moments of all piles given the design values.
@@ -68,7 +65,7 @@ export function nodeMoments(model: SiteModel, holes: HoleCovariance, normals: Fl
   if (bend !== 0) bendCovariance(covariance, holes, bend, starts, weights, n, count);
   const factor = Float64Array.from(covariance);
   choleskyInPlace(factor, n, 1e-9);
-  const { quadratic, residual } = secondOrder(model, holes, normals, lengths, starts, weights, c, covariance);
+  const { quadratic, residual } = secondOrderTerms(model, holes, { lengths, starts, weights, toNormals: c, normals, covariance });
   return { lengths, means, covariance, factor, quadratic, residual };
 }
 
@@ -117,94 +114,4 @@ function bendCovariance(covariance: Float64Array, holes: HoleCovariance, q: numb
       covariance[j * n + i] = covariance[i * n + j];
     }
   }
-}
-
-/** E[Q | deviations of the pile and its neighbours, design value] as a quadratic, and the standard deviation of the rest. */
-function secondOrder(
-  model: SiteModel, holes: HoleCovariance, normals: Float64Array, lengths: Float64Array, starts: Int32Array, weights: Float64Array,
-  c: Float64Array, covariance: Float64Array,
-): { quadratic: Float64Array; residual: Float64Array } {
-  const { plan, family } = model;
-  const { size } = holes;
-  const n = plan.piles.length;
-  const count = family.lengths.length;
-  const forms = family.formIndices.length;
-  const quadratic = new Float64Array(n * quadraticWidth);
-  const residual = new Float64Array(n);
-  const formGrid = family.formLogLengths;
-  for (let i = 0; i < n; i++) {
-    const near = plan.nearby[i];
-    const m = near.length;
-    const local = new Float64Array(m * m);
-    for (let a = 0; a < m; a++) for (let b = 0; b <= a; b++) local[a * m + b] = covariance[near[a] * n + near[b]];
-    choleskyInPlace(local, m, 1e-9);
-    const form = lagrangeWeights(formGrid, Math.min(Math.max(Math.log(lengths[i]), formGrid[0]), formGrid[forms - 1]));
-    const at = i * quadraticWidth;
-    let restVariance = 0;
-    const t = new Float64Array(m);
-    for (let b = 0; b < 2; b++) {
-      const { tables } = model.nodes[b];
-      const cross = model.curveCovariance[b];
-      for (let f = 0; f < forms; f++) {
-        const share = model.shares[b] * form.weights[f];
-        let rest = model.groundVariance * tables.traces[f] + model.regionalVariance * tables.uniformForms[f];
-        restVariance += share * model.groundVariance ** 2 * tables.restVariances[f];
-        for (let r = 0; r < ranks; r++) {
-          const value = tables.values[f * ranks + r];
-          const sum = tables.curveSums[f * ranks + r];
-          const own = model.groundVariance + model.regionalVariance * sum ** 2;
-          rest -= value * own;
-          const curve = ((i * forms + f) * ranks + r) * size;
-          let shift = 0;
-          let known = 0;
-          for (let s = 0; s < size; s++) {
-            const covarianceWithNormal = holes.curves[b][curve + s];
-            shift += covarianceWithNormal * normals[s];
-            known += covarianceWithNormal ** 2;
-          }
-          for (let a = 0; a < m; a++) {
-            const j = near[a];
-            const base = ((plan.distanceOf[i * n + j] * forms + f) * ranks + r) * count + starts[j];
-            let covarianceWithZ = 0;
-            for (let q = 0; q < 4; q++) covarianceWithZ += weights[j * 4 + q] * cross[base + q];
-            for (let s = 0; s < size; s++) covarianceWithZ -= holes.curves[b][curve + s] * c[j * size + s];
-            t[a] = covarianceWithZ;
-          }
-          const explained = solveInPlace(local, m, t);
-          const left = Math.max(own - known - explained, 0);
-          const factor = share * value;
-          quadratic[at] += factor * (shift ** 2 + left);
-          let next = at + 6;
-          for (let a = 0; a < m; a++) {
-            quadratic[at + 1 + a] += 2 * factor * shift * t[a];
-            for (let e = 0; e < a; e++) quadratic[next++] += 2 * factor * t[a] * t[e];
-            quadratic[next++] += factor * t[a] ** 2;
-          }
-          restVariance += share * value ** 2 * (2 * left ** 2 + 4 * left * Math.max(own - left, 0));
-        }
-        quadratic[at] += share * rest;
-      }
-    }
-    residual[i] = Math.sqrt(Math.max(restVariance, 0));
-  }
-  return { quadratic, residual };
-}
-
-/** Replaces t by A^-1 t with A's factor (zero pivots give zero) and returns t' A^-1 t. */
-function solveInPlace(factor: Float64Array, m: number, t: Float64Array): number {
-  let explained = 0;
-  for (let a = 0; a < m; a++) {
-    let sum = t[a];
-    for (let e = 0; e < a; e++) sum -= factor[a * m + e] * t[e];
-    const pivot = factor[a * m + a];
-    t[a] = pivot > 0 ? sum / pivot : 0;
-    explained += t[a] ** 2;
-  }
-  for (let a = m - 1; a >= 0; a--) {
-    let sum = t[a];
-    for (let e = a + 1; e < m; e++) sum -= factor[e * m + a] * t[e];
-    const pivot = factor[a * m + a];
-    t[a] = pivot > 0 ? sum / pivot : 0;
-  }
-  return explained;
 }

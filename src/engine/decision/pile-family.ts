@@ -1,7 +1,7 @@
 import { metres, kilopascals, type Kilopascals, type Metres } from "../../units/quantities.js";
 import { pileResponse } from "../piles/pile-stiffness.js";
 import { projectLevels } from "../piles/project-levels.js";
-import type { PileResponse } from "../piles/pile-response.js";
+import type { PileGeometry, PileResponse } from "../piles/pile-response.js";
 import { levelGrid } from "./level-grid.js";
 
 /** Lengths at which piles are analysed; between them four-point interpolation in ln length. */
@@ -39,6 +39,10 @@ export interface PileFamily {
   readonly formLogLengths: Float64Array;
   readonly rings: Float64Array;
   readonly levelBounds: Float64Array;
+  /** the pile at one of the lengths */
+  geometry(index: number): PileGeometry;
+  /** median modulus over the reference modulus at a depth in m */
+  shape(depth: number): number;
   /** node number j stands at the pile modulus over nodeRatio^j */
   node(j: number): FamilyNode;
   /** the node below a reference modulus, and how far the modulus lies towards the next stiffer one in ln modulus, 0 to 1 */
@@ -63,12 +67,15 @@ export function pileFamily(key: FamilyKey): PileFamily {
   const longest = Math.max(key.longest, 1.5 * key.shortest);
   const lengths = geometricLengths(key.shortest, longest, lengthCount);
   const logLengths = lengths.map(Math.log);
+  const geometry = (length: number): PileGeometry => ({
+    diameter: key.diameter, pileModulus: key.pileModulus, poissonRatio: key.poissonRatio, length: metres(length),
+  });
   const nodes = new Map<number, FamilyNode>();
   const analyse = (j: number): FamilyNode => {
     const modulus = key.pileModulus / nodeRatio ** j;
     const responses = Array.from(lengths, (length, i) =>
       pileResponse(
-        { diameter: key.diameter, pileModulus: key.pileModulus, poissonRatio: key.poissonRatio, length: metres(length) },
+        geometry(length),
         (depth) => kilopascals(modulus * key.shape(depth)),
         { withForm: formIndices.some((index) => index === i) },
       ),
@@ -76,7 +83,7 @@ export function pileFamily(key: FamilyKey): PileFamily {
     return { modulus, responses, weights: responses.map((r) => projectLevels(r.weights, r.rings.length, r.levelBounds, levelBounds)) };
   };
   const probe = pileResponse(
-    { diameter: key.diameter, pileModulus: key.pileModulus, poissonRatio: key.poissonRatio, length: metres(longest) },
+    geometry(longest),
     (depth) => kilopascals((key.pileModulus / 1000) * key.shape(depth)),
     { withForm: false },
   );
@@ -88,6 +95,8 @@ export function pileFamily(key: FamilyKey): PileFamily {
     formLogLengths: Float64Array.from(formIndices, (i) => logLengths[i]),
     rings: probe.rings,
     levelBounds,
+    geometry: (index) => geometry(lengths[index]),
+    shape: key.shape,
     node(j) {
       let node = nodes.get(j);
       if (node === undefined) nodes.set(j, (node = analyse(j)));

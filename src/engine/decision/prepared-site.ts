@@ -9,12 +9,11 @@ import { requireDomain } from "../numerics/domain-error.js";
 import { groundProfile } from "./ground-profile.js";
 import { commonLaw, nearestLaw, type DesignLaw } from "./design-law.js";
 import { layoutTables, type LayoutTables } from "./layout.js";
-import { pileFamily, type FamilyKey, type PileFamily } from "./pile-family.js";
+import { pileFamily, type PileFamily } from "./pile-family.js";
 import { sortedPlan, type Plan } from "./plan.js";
 import type { Problem } from "./problem.js";
 import { Remembered } from "./remembered.js";
 import { nodeTables, siteModel, type NodeTables, type SiteModel } from "./site-model.js";
-import { slopeLosses } from "./slope-loss.js";
 import { structureTables } from "./structure-tables.js";
 
 /** A problem with everything that does not depend on the count made ready. */
@@ -32,7 +31,6 @@ export interface PreparedSite {
 // Dear things first: a family holds finite-element solutions, tables depend on it and on scales, the rest is sums.
 const families = new Remembered<PileFamily>(8);
 const tables = new Remembered<NodeTables>(48);
-const losses = new Remembered<Float64Array>(24);
 const layouts = new Remembered<readonly [LayoutTables, LayoutTables]>(400);
 const sums = new Remembered<ReadingSums>(400);
 const sites = new Remembered<PreparedSite>(200);
@@ -52,11 +50,12 @@ export function preparedSite(problem: Problem): PreparedSite {
   function prepare(): PreparedSite {
     const depths = readingDepths(investigation.readingSpacing, investigation.holeDepth);
     requireDomain(depths.length > 0, "Reading spacing", `${investigation.readingSpacing} m`, "at most the hole depth");
-    const key: FamilyKey = {
-      diameter: piles.diameter, pileModulus: piles.modulus, poissonRatio: ground.poissonRatio,
-      shortest: piles.shortest, longest: piles.longest, shape: profile.shape,
-    };
-    const family = families.get(familyKey, () => pileFamily(key));
+    const family = families.get(familyKey, () =>
+      pileFamily({
+        diameter: piles.diameter, pileModulus: piles.modulus, poissonRatio: ground.poissonRatio,
+        shortest: piles.shortest, longest: piles.longest, shape: profile.shape,
+      }),
+    );
     const plan = plans.get(planKey, () => sortedPlan(building.piles));
     const { j, fraction } = family.locate(profile.modulus);
     const terms = separableTerms(ground);
@@ -65,12 +64,8 @@ export function preparedSite(problem: Problem): PreparedSite {
     const tablesKey = `${familyKey}${structureKey}${planKey}${reach}`;
     const node = (at: number): NodeTables => tables.get(`${at}${tablesKey}`, () => nodeTables(structureTables(family, family.node(at), structure), plan, family));
     const nodes: [NodeTables, NodeTables] = [node(j), node(j - 1)];
-    const lossAt = (at: number): Float64Array => losses.get(`${at}${familyKey}${structureKey}`, () => slopeLosses(family, key, family.node(at), structure));
-    const soft = lossAt(j);
-    const stiff = lossAt(j - 1);
-    const slopeLoss = soft.map((value, k) => (1 - fraction) * value + fraction * stiff[k]);
     const model = siteModel(plan, family, nodes, fraction, {
-      modulus: profile.modulus, groundVariance: profile.groundVariance, regionalVariance: profile.regionalVariance, slopeLoss,
+      modulus: profile.modulus, groundVariance: profile.groundVariance, regionalVariance: profile.regionalVariance,
     });
     const correlation = fieldCorrelation(ground);
     const relativeSd = depths.map((z) => profile.relativeSd(z));

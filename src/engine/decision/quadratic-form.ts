@@ -99,7 +99,7 @@ function leadingEigen(a: Float64Array, n: number, ranks: number): { values: Floa
   for (let k = 0; k < n; k++) {
     for (let r = 0; r < Math.min(ranks, width); r++) {
       let sum = 0;
-      for (let i = 0; i < width; i++) sum += block[k * width + i] * eigen.vectors[i * width + order[r]];
+      for (let i = 0; i < width; i++) sum += block[k * width + i] * eigen.vectors[order[r] * width + i];
       vectors[k * ranks + r] = sum;
     }
   }

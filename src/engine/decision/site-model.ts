@@ -1,3 +1,5 @@
+import { lagrangeWeights } from "../numerics/lagrange.js";
+import { regressionSlope } from "../piles/slope-loss.js";
 import { rowAtDistance } from "./distance-interpolation.js";
 import { nodeStep, type PileFamily } from "./pile-family.js";
 import type { Plan } from "./plan.js";
@@ -54,8 +56,6 @@ export interface GroundLevel {
   readonly modulus: number;
   readonly groundVariance: number;
   readonly regionalVariance: number;
-  /** loss of the regression slope for each unit of ground variance, one a length */
-  readonly slopeLoss: Float64Array;
 }
 
 /** Scales the unit tables to one problem. Sums and products only: this is what a change of COV or mean costs. */
@@ -74,7 +74,10 @@ export function siteModel(plan: Plan, family: PileFamily, nodes: readonly [NodeT
     const b = stiff.responses[k];
     lnStiffness[k] = hermite(a.lnStiffness, b.lnStiffness, a.weightSum * nodeStep, b.weightSum * nodeStep, fraction);
     weightSums[k] = shares[0] * a.weightSum + shares[1] * b.weightSum;
-    slopes[k] = 1 / (1 + level.slopeLoss[k] * groundVariance);
+    const form = lagrangeWeights(family.formLogLengths, family.logLengths[k]).weights;
+    let loss = 0;
+    for (let f = 0; f < form.length; f++) loss += form[f] * (shares[0] * nodes[0].tables.slopeLosses[f] + shares[1] * nodes[1].tables.slopeLosses[f]);
+    slopes[k] = regressionSlope(loss, groundVariance);
   }
   const classes = plan.distances.length;
   const covariance = new Float64Array(classes * lengths * lengths);

@@ -1,10 +1,12 @@
 import { pointRingTable, ringTables } from "../ground/ring-average.js";
 import type { SeparableTerm } from "../ground/separable-terms.js";
+import { kilopascals } from "../../units/quantities.js";
+import { slopeLoss } from "../piles/slope-loss.js";
 import { lowRankForm } from "./quadratic-form.js";
 import type { FamilyNode, PileFamily } from "./pile-family.js";
 
 /** Parts kept of the second-order form at each length. */
-export const ranks = 8;
+export const ranks = 4;
 /** Groups of readings in depth that a hole's covariances are kept for. */
 export const readingGroups = 8;
 const distanceNodes = 28;
@@ -33,6 +35,8 @@ export interface StructureTables {
   readonly restVariances: Float64Array;
   /** the form for a ground that is stiffer everywhere: one a form */
   readonly uniformForms: Float64Array;
+  /** loss of the regression slope of ln stiffness for each unit of ground variance: one a form */
+  readonly slopeLosses: Float64Array;
   /** readings of each depth group over all readings of a hole */
   readonly groupShares: Float64Array;
 }
@@ -72,9 +76,10 @@ export function structureTables(family: PileFamily, node: FamilyNode, ground: St
     traces: new Float64Array(forms),
     restVariances: new Float64Array(forms),
     uniformForms: new Float64Array(forms),
+    slopeLosses: new Float64Array(forms),
     groupShares: Float64Array.from(groups, (g) => g.length / ground.readingDepths.length),
   };
-  const curves = family.formIndices.map((k, f) => curveOf(node, k, f, ground, tables));
+  const curves = family.formIndices.map((k, f) => curveOf(family, node, k, f, ground, tables));
   const coarse = curves[0].radii;
   const rg = coarse.length;
   const radii = Float64Array.from([...fine, ...coarse]);
@@ -138,7 +143,7 @@ interface Curve {
 }
 
 /** The second-order form of one length by its largest parts; fills the tables' scalars. */
-function curveOf(node: FamilyNode, k: number, f: number, ground: StructureGround, tables: StructureTables): Curve {
+function curveOf(family: PileFamily, node: FamilyNode, k: number, f: number, ground: StructureGround, tables: StructureTables): Curve {
   const form = node.responses[k].form;
   if (form === undefined) throw new Error("The second-order form was not made at this length.");
   const bands = form.levelBounds.length - 1;
@@ -159,16 +164,15 @@ function curveOf(node: FamilyNode, k: number, f: number, ground: StructureGround
   }
   for (let i = 0; i < n; i++) for (let j = 0; j < i; j++) covariance[j * n + i] = covariance[i * n + j];
   const low = lowRankForm(form.matrix, covariance, n, ranks);
-  let kept = 0;
   let keptVariance = 0;
   for (let r = 0; r < ranks; r++) {
     tables.values[f * ranks + r] = low.values[r];
-    kept += low.values[r];
     keptVariance += 2 * low.values[r] ** 2;
     let sum = 0;
     for (let i = 0; i < n; i++) sum += low.functionals[r * n + i];
     tables.curveSums[f * ranks + r] = sum;
   }
+  tables.slopeLosses[f] = slopeLoss(family.geometry(k), (depth) => kilopascals(node.modulus * family.shape(depth)), covariance);
   tables.traces[f] = low.trace;
   tables.restVariances[f] = Math.max(low.variance - keptVariance, 0);
   tables.uniformForms[f] = form.matrix.reduce((sum, value) => sum + value, 0);
@@ -199,7 +203,7 @@ function cellValues(bounds: Float64Array, value: (depth: number) => number): Flo
 }
 
 /** Covariance of the depth part between cells of two grids: cells x cells. */
-export function cellCovariance(a: Float64Array, b: Float64Array, term: SeparableTerm): Float64Array {
+function cellCovariance(a: Float64Array, b: Float64Array, term: SeparableTerm): Float64Array {
   const rows = a.length - 1;
   const columns = b.length - 1;
   const out = new Float64Array(rows * columns);
