@@ -29,7 +29,7 @@ export function attempt<T>(faults: Fault[], about: Omit<Fault, "sentence">, read
     return read();
   } catch (error) {
     if (!(error instanceof InputError)) throw error;
-    if (faults.length < MOST_FAULTS) faults.push({ ...about, row: error.row ?? about.row, id: (error.id as InputId | undefined) ?? about.id, sentence: error.message });
+    if (faults.length < MOST_FAULTS) faults.push({ ...about, row: error.id === undefined ? error.row ?? about.row : error.row, id: (error.id as InputId | undefined) ?? about.id, sentence: error.message });
     return undefined;
   }
 }

@@ -4,6 +4,7 @@ import { CATALOGUE, SECTIONS, type CatalogueEntry } from "./catalogue.js";
 const SAME_WORD: Readonly<Record<string, string>> = { meter: "metre", metres: "metre", meters: "metre", mobilization: "mobilisation", poissons: "poisson", "&": "and" };
 
 const ENTRIES = new Map(CATALOGUE.map((entry) => [normaliseLabel(entry.label), entry]));
+const FOUND = new Map<string, CatalogueEntry>();
 const TITLES = new Map(SECTIONS.map((section) => [normaliseLabel(section), section]));
 const SEARCHED = CATALOGUE.map((entry) => ({ label: entry.label, plain: normaliseLabel(entry.label), sorted: sortedWords(normaliseLabel(entry.label)) }));
 
@@ -25,7 +26,13 @@ export function normaliseLabel(text: string): string {
  * @returns     its entry in the catalogue, or undefined
  */
 export function entryLabelled(text: string): CatalogueEntry | undefined {
-  return ENTRIES.get(normaliseLabel(text));
+  let entry = FOUND.get(text);
+  if (entry === undefined) {
+    entry = ENTRIES.get(normaliseLabel(text));
+    // the same few spellings come at each call, and comparing them anew was half the work of reading a block
+    if (entry !== undefined && FOUND.size < 500) FOUND.set(text, entry);
+  }
+  return entry;
 }
 
 /**

@@ -104,7 +104,7 @@ function requireBlock(cells: unknown): number {
 /** Width first, then all cells, so that ranges of another shape never look alike. */
 function flatten(cells: readonly (readonly unknown[])[], width: number): Cell[] {
   const flat: Cell[] = [width];
-  for (const row of cells) for (let column = 0; column < width; column++) flat.push(plainCell((row as readonly unknown[] | undefined)?.[column]));
+  for (const row of cells) for (let column = 0; column < width; column++) flat.push(plainCell(Array.isArray(row) ? (row as readonly unknown[])[column] : null));
   return flat;
 }
 

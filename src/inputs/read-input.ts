@@ -1,5 +1,5 @@
 import type { CatalogueEntry } from "./catalogue.js";
-import { amount, found, isBlankOrZero, isError, type Cell } from "./cells.js";
+import { amount, found, isBlankOrZero, isError, looksLikeNumber, type Cell } from "./cells.js";
 import { LARGEST_COUNT } from "./limits.js";
 import { nearestWord, normaliseLabel } from "./labels.js";
 import { inWords, refusal, type Place } from "./place.js";
@@ -88,7 +88,7 @@ export function choiceText(entry: CatalogueEntry, value: string): string {
  * @returns      whole numbers from 0 to the largest that can be priced, growing
  * @throws {InputError} anything else
  */
-export function readCounts(cell: Cell, place: Place): readonly number[] {
+function readCounts(cell: Cell, place: Place): readonly number[] {
   const accepted = `write the largest number of holes (12), from and to (0 to 12) or all numbers (0, 1, 2, 4, 8), none above ${LARGEST_COUNT}`;
   if (isBlankOrZero(cell)) throw refusal(place, `is blank or zero; ${accepted}`);
   if (typeof cell === "number") {
@@ -97,6 +97,7 @@ export function readCounts(cell: Cell, place: Place): readonly number[] {
     throw refusal(place, `is ${amount(cell)}${date}; ${accepted}`);
   }
   if (typeof cell !== "string" || isError(cell) || cell.length > 400) throw refusal(place, `is ${found(cell)}; ${accepted}`);
+  if (looksLikeNumber(cell) && !/[,;]/.test(cell)) throw refusal(place, `is ${found(cell)}, a number stored as text; ${accepted}`);
   const range = /^\s*(\d{1,3})\s*(?:to|-|\u2013|\.\.)\s*(\d{1,3})\s*$/i.exec(cell);
   const counts = range === null ? cell.split(/[,;]/).map((part) => (/^\s*\d{1,3}\s*$/.test(part) ? Number(part) : NaN)) : upTo(Number(range[1]), Number(range[2]));
   const sorted = [...new Set(counts)].sort((a, b) => a - b);
@@ -137,7 +138,7 @@ function readSeed(cell: Cell, unit: UnitReading, place: Place): Given {
 function spellings(entry: CatalogueEntry): ReadonlyMap<string, string> {
   const known = SPELLINGS.get(entry);
   if (known !== undefined) return known;
-  const map = new Map(entry.choices!.flatMap(({ value, text, also }) => [text, ...also].map((word) => [normaliseLabel(word), value] as const)));
+  const map = new Map(entry.choices!.flatMap(({ value, text, also }) => [value, text, ...also].map((word) => [normaliseLabel(word), value] as const)));
   SPELLINGS.set(entry, map);
   return map;
 }

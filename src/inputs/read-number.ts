@@ -42,6 +42,7 @@ export function readNumber(rule: NumberRule, cell: Cell, unit: UnitReading, plac
   const inner = (value * unit.multiply) / unit.divide;
   const least = (rule.minimum * range.multiply) / range.divide;
   const most = (rule.maximum * range.multiply) / range.divide;
+  if (isMoney(rule) && inner <= 0) throw refusal(place, `${written}; a price above zero is needed, or the word none if it costs nothing`);
   if (inner < least || inner > most) throw refusal(place, `${written}; it must be ${rangeInWords(rule, range.symbol)}${hint(rule, value, unit, least, most)}`);
   if (rule.whole === true && !Number.isInteger(value)) throw refusal(place, `${written}; a whole number ${rangeInWords(rule, "")} is needed`);
   return inner;
@@ -54,14 +55,14 @@ export function readNumber(rule: NumberRule, cell: Cell, unit: UnitReading, plac
  * @param symbol  the unit of the ends
  * @returns       such as "from 0.1 m to 4 m"
  */
-export function rangeInWords(rule: Pick<NumberRule, "minimum" | "maximum" | "usual">, symbol: string): string {
+function rangeInWords(rule: Pick<NumberRule, "minimum" | "maximum" | "usual">, symbol: string): string {
   const unit = symbol === "" ? "" : ` ${symbol}`;
   return `from ${amount(rule.minimum)}${unit} to ${amount(rule.maximum)}${unit}${rule.usual === undefined ? "" : ` (common practice ${rule.usual})`}`;
 }
 
 function readBlank(rule: NumberRule, place: Place): number {
   if (rule.zero === "accepted") return 0;
-  const nothing = rule.kind === "money" || rule.kind === "moneyPerLength" ? "the word none if it costs nothing" : "the word none for a deliberate zero";
+  const nothing = isMoney(rule) ? "the word none if it costs nothing" : "the word none for a deliberate zero";
   const write = rule.zero === "none" ? `write a number, or ${nothing}` : "write a number";
   throw refusal(place, `is blank or zero; ${write}${rule.fallbackWords === undefined ? "" : `, or take the row out for the default (${rule.fallbackWords})`}`);
 }
@@ -83,13 +84,19 @@ function readText(rule: NumberRule, cell: string, unit: UnitReading, place: Plac
 }
 
 function needed(rule: NumberRule, unit: UnitReading): string {
-  return `a ${rule.whole === true ? "whole number" : "number"}${unit.symbol === "" || rule.kind === "money" ? "" : ` in ${unit.symbol.replace(/^\//, "money/")}`}`;
+  if (isMoney(rule)) return "a number";
+  return `a ${rule.whole === true ? "whole number" : "number"}${unit.symbol === "" ? "" : ` in ${unit.symbol}`}`;
+}
+
+function isMoney({ kind }: NumberRule): boolean {
+  return kind === "money" || kind === "moneyPerLength";
 }
 
 /** Where the number would fit in another usual unit, that unit was probably meant. */
 function hint(rule: NumberRule, value: number, unit: UnitReading, least: number, most: number): string {
-  if (rule.kind === "money" || rule.kind === "moneyPerLength") return "";
-  const meant = commonUnits(rule.kind).find(({ symbol, multiply, divide }) => {
+  const { kind } = rule;
+  if (kind === "money" || kind === "moneyPerLength") return "";
+  const meant = commonUnits(kind).find(({ symbol, multiply, divide }) => {
     const inner = (value * multiply) / divide;
     return symbol !== unit.symbol && symbol !== "ratio" && inner >= least && inner <= most;
   });

@@ -81,7 +81,7 @@ function readMoney(kind: "money" | "moneyPerLength", text: string, place: Place,
   if (kind === "moneyPerLength") {
     const multiply = pricesPerMetre(unit.per);
     if (multiply === undefined) throw refusal(place, `has the unit ${found(text)}; ${accepted(kind)}`);
-    return { symbol: `${currency}/${multiply === 1 ? "m" : "ft"}`, multiply, divide: 1, currency, assumed: text !== "" && unit.per === "" };
+    return { symbol: `${currency === "" ? "per " : `${currency}/`}${multiply === 1 ? "m" : "ft"}`, multiply, divide: 1, currency, assumed: text !== "" && unit.per === "" };
   }
   if (unit.per !== "" && !(WORDS_OF_ONE_PRICE[per ?? ""] ?? []).includes(unit.per)) {
     throw refusal(place, `has the unit ${found(text)}; ${accepted(kind)}${per === "hole" || per === "pile" || per === "reading" || per === "day" ? ` or EUR/${per}` : ""}`);

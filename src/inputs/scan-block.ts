@@ -1,4 +1,4 @@
-import { entryOf, type CatalogueEntry, type InputId } from "./catalogue.js";
+import type { CatalogueEntry, InputId } from "./catalogue.js";
 import { found, isBlankOrZero, isEmpty, isError, looksLikeNumber, type Cell } from "./cells.js";
 import { attempt, MOST_FAULTS, type Fault } from "./fault.js";
 import { InputError } from "./input-error.js";
@@ -77,11 +77,11 @@ class BlockScan {
       return true;
     }
     if (!this.belongsToList(list, first, cells)) return false;
-    if (this.gap !== undefined) {
-      // damage of nothing at no distortion is a harmless first row; elsewhere zeros may be a pile or hole at (0, 0) half filled in
-      if (!(list.entry.id === "damageList" && list.rows.length === 0)) this.refuseGap(list, this.gap);
-      this.gap = undefined;
-    }
+    const firstOfDamage = list.entry.id === "damageList" && list.rows.length === 0;
+    if (firstOfDamage && first === 0 && isBlankOrZero(cells[1] ?? null)) return true; // no damage at no distortion says nothing new
+    // elsewhere zeros may be a pile or a hole at (0, 0) half filled in
+    if (this.gap !== undefined && !firstOfDamage) this.refuseGap(list, this.gap);
+    this.gap = undefined;
     list.rows.push({ row, cells });
     return true;
   }
@@ -173,16 +173,4 @@ function readAutomatic(entry: CatalogueEntry, value: string): true | undefined {
 /** The head of the columns: Input, Value, Unit, Note. */
 function isHeadRow(label: string, value: Cell): boolean {
   return typeof value === "string" && normaliseLabel(value) === "value" && ["input", "inputs", "label"].includes(normaliseLabel(label));
-}
-
-/**
- * The place in the block of an input, for sentences that speak of two inputs.
- *
- * @param block  as read
- * @param id     the input
- * @returns      such as "Pile list (row 20 of the site block)"
- */
-export function inputWithRow(block: Block, id: InputId): string {
-  const row = block.rows.get(id);
-  return `${entryOf(id).label}${row === undefined ? "" : ` (${rowWords(row)})`}`;
 }

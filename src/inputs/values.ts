@@ -11,7 +11,7 @@ import type { Block } from "./scan-block.js";
 export type Source = "block" | "formula" | "default" | "refused";
 
 /** An input that others need was itself refused: its own sentence says why, so this one is never shown. */
-export class Unavailable extends Error {
+class Unavailable extends Error {
   override readonly name = "Unavailable";
 }
 

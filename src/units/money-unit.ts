@@ -16,7 +16,8 @@ export interface MoneyUnit {
  * @returns     currency and what the price is for, or undefined where the text holds digits or is a unit of something else
  */
 export function readMoneyUnit(text: string): MoneyUnit | undefined {
-  const clean = text.slice(0, 60).normalize("NFKC").replace(/\s+/g, " ").trim();
+  if (text.length > 60) return undefined; // no unit is that long
+  const clean = text.normalize("NFKC").replace(/\s+/g, " ").trim();
   const cut = /\/|\bper\b/i.exec(clean);
   const currency = (cut === null ? clean : clean.slice(0, cut.index)).replace(/\beach$/i, "").trim();
   const per = cut === null ? "" : plainSpelling(clean.slice(cut.index + cut[0].length));

@@ -104,8 +104,8 @@ export function fromInner(value: number, unit: Unit): number {
  * @returns     the spelling by which units are found
  */
 export function plainSpelling(text: string): string {
-  return text.slice(0, 60).normalize("NFKC").toLowerCase()
-    .replace(/[\u2018\u2019\u2032]/g, "'").replace(/[\u201c\u201d\u2033]/g, '"')
+  if (text.length > 60) return ""; // no unit is that long, and no time is spent on it
+  return text.replace(/[\u2018\u2019\u2032]/g, "'").replace(/[\u201c\u201d\u2033]/g, '"').normalize("NFKC").toLowerCase() // NFKC would split a double prime
     .replace(/\bper\b/g, "/").replace(/[\s^()[\]]/g, "").replace(/\.$/, "");
 }
 
