@@ -15,7 +15,6 @@ export function countRow(count: number, total: number, change: Partial<CountRow>
     carbon: 1000,
     surprises: 0,
     tooShortChance: 0,
-    overDesign: 0,
     chanceCheapest: 0,
     notDistinguishable: false,
     ...change,

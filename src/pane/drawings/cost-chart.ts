@@ -6,6 +6,8 @@ import { countTicks, niceTicks } from "../model/ticks.js";
 export type AxisWriter = (value: number) => string;
 
 const SIDES = { marginLeft: 46, marginRight: 10, className: "pane-plot" } as const;
+/** gap between two counts as a share of their distance */
+const PADDING = 0.24;
 
 /**
  * Draws the total with its band against the count, on an axis that shows differences rather than zero.
@@ -23,6 +25,8 @@ export function drawTotals(drawing: CostDrawing, width: number, write: AxisWrite
   const within = points.filter((point) => !point.above);
   const best = points.filter((point) => point.cheapest);
   const floor = drawing.totalAxis[0];
+  // Neighbouring counts of the set are drawn as one field, so each takes half of the gap on either side.
+  const gap = -((width - SIDES.marginLeft - SIDES.marginRight) / (counts.length + PADDING)) * (PADDING / 2) - 0.5;
   return hidden(
     plot({
       ...SIDES,
@@ -30,10 +34,10 @@ export function drawTotals(drawing: CostDrawing, width: number, write: AxisWrite
       height: 168,
       marginTop: 22,
       marginBottom: 8,
-      x: { type: "band", domain: [...counts], axis: null, padding: 0.24 },
+      x: { type: "band", domain: [...counts], axis: null, padding: PADDING },
       y: { domain: [...drawing.totalAxis], label: null },
       marks: [
-        barY(set, { x: "count", y1: () => floor, y2: () => drawing.totalAxis[1], fill: "var(--pane-set)", insetLeft: -2, insetRight: -2 }),
+        barY(set, { x: "count", y1: () => floor, y2: () => drawing.totalAxis[1], fill: "var(--pane-set)", insetLeft: gap, insetRight: gap }),
         gridY(ticks, { stroke: "var(--pane-line)", strokeOpacity: 1 }),
         axisY(ticks, { tickSize: 0, tickFormat: write, color: "var(--pane-soft)" }),
         areaY(within, { x: "count", y1: "low", y2: "high", fill: "var(--pane-band)" }),
@@ -67,7 +71,7 @@ export function drawParts(drawing: CostDrawing, width: number, write: AxisWriter
       height: 150,
       marginTop: 8,
       marginBottom: 32,
-      x: { type: "band", domain: [...drawing.counts], label: null, padding: 0.24 },
+      x: { type: "band", domain: [...drawing.counts], label: null, padding: PADDING },
       y: { domain: [...drawing.partAxis], label: null },
       marks: [
         gridY(ticks, { stroke: "var(--pane-line)", strokeOpacity: 1 }),

@@ -26,7 +26,9 @@ export function textTable(table: TextTable, caption: string, look: TableLook): H
       ...row.map((text, column) => (column === 0 ? element("th", { scope: "row" }, text) : element("td", {}, text))),
     ),
   );
-  const made = element("table", { class: "figures" }, element("caption", { id }, caption), element("thead", {}, head), element("tbody", {}, ...body));
-  if (!look.scrolls) return made;
-  return element("div", { class: "table-frame", role: "region", "aria-labelledby": id, tabindex: 0 }, made);
+  const made = element("table", { class: "figures", "aria-labelledby": id }, element("thead", {}, head), element("tbody", {}, ...body));
+  // The caption stands outside the frame: inside it would scroll away with the columns.
+  const words = element("p", { id, class: "caption" }, caption);
+  const frame = look.scrolls ? element("div", { class: "table-frame", role: "region", "aria-labelledby": id, tabindex: 0 }, made) : made;
+  return element("div", {}, words, frame);
 }

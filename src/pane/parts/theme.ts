@@ -44,7 +44,7 @@ export function themeSwitch(root: HTMLElement, tell: (sentence: string) => void)
   let choice = remembered();
   const shape = drawn("path", { class: "theme-shape" });
   const glyph = drawn("svg", { viewBox: "0 0 16 16", width: 16, height: 16, "aria-hidden": "true" }, shape);
-  const button = element("fluent-button", { appearance: "subtle", size: "small", class: "theme-switch", "icon-only": true }, glyph);
+  const button = element("fluent-button", { role: "button", appearance: "subtle", size: "small", class: "theme-switch", "icon-only": true }, glyph);
   const apply = (): void => {
     const around = document.documentElement.dataset["theme"] ?? (system.matches ? "dark" : "light");
     const dark = (choice === "around" ? around : choice) === "dark";

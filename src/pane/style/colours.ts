@@ -72,7 +72,7 @@ export const COLOURS = `
     --pane-pile: CanvasText;
     --pane-hole: Highlight;
     --pane-band: color-mix(in srgb, CanvasText 35%, Canvas);
-    --pane-set: color-mix(in srgb, CanvasText 20%, Canvas);
+    --pane-set: color-mix(in srgb, CanvasText 14%, Canvas);
     --pane-part-edge: CanvasText;
     --pane-part-foundation: url(#probeworth-hatch-foundation);
     --pane-part-failure: url(#probeworth-hatch-failure);

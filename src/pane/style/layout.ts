@@ -89,7 +89,7 @@ export const LAYOUT = `
 .probeworth .caution p + p { margin-top: 6px; }
 .probeworth .table-frame { overflow-x: auto; }
 .probeworth .figures { border-collapse: collapse; width: 100%; font-size: 12px; font-variant-numeric: tabular-nums; overflow-wrap: normal; }
-.probeworth .figures caption { padding: 2px 0 4px; color: var(--pane-soft); text-align: start; }
+.probeworth .caption { margin: 2px 0 4px; color: var(--pane-soft); font-size: 12px; }
 .probeworth .figures th, .probeworth .figures td { padding: 3px 6px; text-align: end; font-weight: 400; white-space: nowrap; border-top: 1px solid var(--pane-line); }
 .probeworth .figures thead th { white-space: normal; vertical-align: bottom; color: var(--pane-soft); border-top: 0; }
 .probeworth .figures th:first-child { padding-inline-start: 2px; text-align: start; }
@@ -118,7 +118,8 @@ export const LAYOUT = `
 }
 @media (forced-colors: active) {
   .probeworth .check-refused, .probeworth .refusal { border: 2px solid CanvasText; }
-  .probeworth .numeral { border: 2px solid Highlight; }
+  .probeworth .numeral { border: 2px solid Highlight; forced-color-adjust: none; }
+  .probeworth fluent-tab::after, .probeworth fluent-tablist::after { display: none; }
   .probeworth fluent-tab[aria-selected="true"] { border-block-end: 3px solid Highlight; border-radius: 0; }
   .probeworth .figures-of-results.old > section { opacity: 1; border-style: dashed; }
 }

@@ -42,8 +42,8 @@ export function costPanel(store: ResultsStore, writer: NumberWriter): HTMLElemen
     const axis = moneyAxis(drawing.partAxis[1], writer);
     const unit = [axis.unit, shorten(money, 12)].filter((word) => word !== "").join(" ");
     const inUnit = unit === "" ? "" : `, ${unit}`;
-    totalTitle.textContent = `Expected total${inUnit} \u2014 axis not from zero`;
-    partTitle.textContent = `Its parts${inUnit}, from zero`;
+    totalTitle.textContent = `Total${inUnit}; axis not from zero`;
+    partTitle.textContent = `Its parts${inUnit}; from zero`;
     totals.replaceChildren(drawTotals(drawing, width, axis.write));
     parts.replaceChildren(drawParts(drawing, width, axis.write, drawing.parts.map(fillOf)));
   };
@@ -80,7 +80,7 @@ function keyOfTotals(drawing: CostDrawing): HTMLElement[] {
 function figuresOf(table: PricedTable, writer: NumberWriter): HTMLElement {
   const step = tableStep(table.rows);
   const money = (value: number): string => writer.money(value, step);
-  const head = ["Holes", "Total", "\u00b1 2 s.e.", "Investi\u00adgation", "Founda\u00adtion", "Failure", "Delay", "Chance of damage", "Chance cheapest"];
+  const head = ["Holes", "Total", "Give or take", "Investi\u00adgation", "Founda\u00adtion", "Failure", "Delay", "Chance of damage", "Chance cheapest"];
   const rows = table.rows.map((row) => [
     String(row.count),
     money(row.total),
@@ -93,5 +93,5 @@ function figuresOf(table: PricedTable, writer: NumberWriter): HTMLElement {
     writer.percent(row.chanceCheapest),
   ]);
   const strong = table.rows.flatMap((row, k) => (row.count === table.cheapest ? [k] : []));
-  return textTable({ head, rows }, "Expected costs by number of holes, in the currency of the prices", { strong, scrolls: true });
+  return textTable({ head, rows }, `Expected costs by number of holes${table.money === "" ? ", in the currency of the prices" : `, ${shorten(table.money, 12)}`}; give or take is two standard errors`, { strong, scrolls: true });
 }

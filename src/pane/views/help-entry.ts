@@ -1,4 +1,5 @@
 import type { HelpEntry } from "../model/help-entries.js";
+import { button } from "../parts/button.js";
 import { element } from "../parts/element.js";
 
 /** What the buttons of an example do. */
@@ -36,25 +37,19 @@ function inside(entry: HelpEntry, actions: ExampleActions): HTMLElement {
 
 function example(id: string, formula: string, actions: ExampleActions): HTMLElement {
   const shown = element("code", { class: "formula", tabindex: -1 }, formula);
-  const copy = element("fluent-button", { size: "small", appearance: "outline", "aria-label": `Copy the example of ${id}` }, "Copy");
-  copy.addEventListener("click", () => {
-    void actions.copy(formula).then((copied) => {
-      if (copied) actions.tell("Copied. Paste it into a cell.");
-      else {
-        // Without leave to use the clipboard the person copies by hand; the text is already marked for that.
-        window.getSelection()?.selectAllChildren(shown);
-        shown.focus();
-        actions.tell("The clipboard is closed to this pane. The formula is marked; copy it with the keyboard.");
-      }
-    });
-  });
-  const buttons = element("div", { class: "row" }, copy);
-  if (actions.insert !== undefined) {
-    const insert = actions.insert;
-    const button = element("fluent-button", { size: "small", appearance: "outline", "aria-label": `Put the example of ${id} on a new sheet` }, "Put on a new sheet");
-    button.addEventListener("click", () => insert(id, formula));
-    buttons.append(button);
-  }
+  const copy = async (): Promise<void> => {
+    if (await actions.copy(formula)) {
+      actions.tell("Copied. Paste it into a cell.");
+      return;
+    }
+    // Without leave to use the clipboard the person copies by hand; the text is already marked for that.
+    window.getSelection()?.selectAllChildren(shown);
+    shown.focus();
+    actions.tell("The clipboard is closed to this pane. The formula is marked; copy it with the keyboard.");
+  };
+  const buttons = element("div", { class: "row" }, button("Copy", () => void copy(), { name: `Copy the example of ${id}` }));
+  const { insert } = actions;
+  if (insert !== undefined) buttons.append(button("Put on a new sheet", () => insert(id, formula), { name: `Put the example of ${id} on a new sheet` }));
   return element("div", { class: "example" }, shown, buttons);
 }
 

@@ -23,7 +23,7 @@ export function planPanel(store: SiteStore, writer: NumberWriter): HTMLElement {
   const words = element("figcaption", { class: "unseen" });
   const picture = element("div", { class: "picture" });
   const number = element("input", { id: typed, class: "field field-count", type: "number", min: 0, step: 1, inputmode: "numeric" });
-  const slider = element("fluent-slider", { min: 0, max: MOST_AUTOMATIC, value: "1", "aria-label": "Number of holes shown" }) as FluentSlider;
+  const slider = element("fluent-slider", { role: "slider", min: 0, max: MOST_AUTOMATIC, value: "1", "aria-label": "Number of holes shown" }) as FluentSlider;
   slider.valueTextFormatter = (value) => holesInWords(Number(value));
   const panel = element(
     "section",

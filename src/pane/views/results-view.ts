@@ -1,5 +1,5 @@
-import type { NumberWriter } from "../model/numbers.js";
 import { numberWriter } from "../model/numbers.js";
+import { button } from "../parts/button.js";
 import { element, freshId } from "../parts/element.js";
 import type { ResultsState, ResultsStore } from "../results-store.js";
 import { IS, IS_NOT, SMALL_SUMS } from "../model/cautions.js";
@@ -14,7 +14,7 @@ import { lengthPanel } from "./length-panel.js";
  * @param locale  language of the numbers
  */
 export function resultsView(store: ResultsStore, locale: string | undefined): HTMLElement {
-  const writer: NumberWriter = numberWriter(locale);
+  const writer = numberWriter(locale);
   const figures = element("div", { class: "figures-of-results" }, answerPanel(store, writer), costPanel(store, writer), lengthPanel(store, writer));
   store.subscribe((state) => {
     figures.hidden = state.table === undefined;
@@ -24,15 +24,14 @@ export function resultsView(store: ResultsStore, locale: string | undefined): HT
 }
 
 function runPanel(store: ResultsStore): HTMLElement {
-  const button = element("fluent-button", { size: "small", appearance: "outline" }, "Price now");
+  const run = button("Price now", () => (store.state.phase === "running" ? store.cancel() : void store.run()));
   const words = element("p", { class: "run-words" });
   const bar = element("fluent-progress-bar", { "aria-label": "Counts priced", min: 0, max: 1, value: 0 });
-  button.addEventListener("click", () => (store.state.phase === "running" ? store.cancel() : void store.run()));
-  const panel = element("section", { class: "run", "aria-label": "Pricing" }, element("div", { class: "row" }, words, button), bar);
+  const panel = element("section", { class: "run", "aria-label": "Pricing" }, element("div", { class: "row" }, words, run), bar);
   store.subscribe((state) => {
     const running = state.phase === "running";
     // One button with two names: it keeps the keyboard's place when the run ends by itself.
-    button.textContent = running ? "Cancel" : state.table === undefined ? "Price now" : "Price again";
+    run.textContent = running ? "Cancel" : state.table === undefined ? "Price now" : "Price again";
     bar.hidden = !running;
     bar.setAttribute("max", String(Math.max(1, state.of)));
     bar.setAttribute("value", String(state.done));

@@ -1,3 +1,4 @@
+import { button } from "../parts/button.js";
 import { element, freshId } from "../parts/element.js";
 import type { SiteState, SiteStore, Source } from "../site-store.js";
 
@@ -21,14 +22,12 @@ export function sourcePanel(store: SiteStore, actions: SourceActions): HTMLEleme
   const id = freshId("source");
   const choice = element("select", { id, class: "field" });
   const place = element("p", { class: "place" });
-  const again = element("fluent-button", { size: "small", appearance: "outline" }, "Read again");
-  const insert = element("fluent-button", { size: "small", appearance: "outline" }, "Insert the template");
+  const again = button("Read again", actions.readAgain);
+  const insert = button("Insert the template", actions.insertTemplate);
   choice.addEventListener("change", () => {
     if (choice.value === SELECTION) actions.choose({ kind: "selection" });
     else if (choice.value.startsWith(NAME)) actions.choose({ kind: "name", name: choice.value.slice(NAME.length) });
   });
-  again.addEventListener("click", actions.readAgain);
-  insert.addEventListener("click", actions.insertTemplate);
   let offered: string | undefined;
   store.subscribe((state) => {
     const now = JSON.stringify([state.names, state.source === undefined]);
