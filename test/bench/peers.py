@@ -28,7 +28,30 @@ def band_solve(band, load, n, half):
     return work
 
 
-PEERS = {"band_solve": band_solve}
+def draws(means, factor, residual, constant, linear, triangle, near, normals, weights, loads, pairs, damage, value, piles, block):
+    """Joint draws of all piles at all nodes at once, their settlements, the largest distortion and its damage."""
+    n, nodes = piles, len(weights)
+    values = normals.reshape(nodes, 2 * n, block)
+    factor = np.tril(factor.reshape(nodes, n, n))
+    means, residual, constant = (a.reshape(nodes, n, 1) for a in (means, residual, constant))
+    linear, triangle = linear.reshape(nodes, n, 5, 1), triangle.reshape(nodes, n, 5, 5)
+    near = near.astype(int).reshape(n, 5)
+    first, second = pairs.reshape(-1, 3)[:, :2].astype(int).T
+    distance = pairs.reshape(-1, 3)[:, 2][:, None]
+    at, share = damage.reshape(-1, 2).T
+
+    def work():
+        xi = factor @ values[:, :n]
+        around = xi[:, near]
+        second_order = constant + np.sum(around * (linear + triangle @ around), axis=2)
+        settlement = loads[:, None] * np.exp(-(means + xi + residual * values[:, n:] + second_order))
+        distortion = np.max(np.abs(settlement[:, first] - settlement[:, second]) / distance, axis=1)
+        return np.array([value * np.sum(weights * np.mean(np.interp(distortion, at, share, left=0.0), axis=1))])
+
+    return work
+
+
+PEERS = {"band_solve": band_solve, "draws": draws}
 
 
 def decoded(value):

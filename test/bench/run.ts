@@ -1,10 +1,14 @@
 import type { BenchCase } from "./bench-case.js";
 import { bandSolve } from "./cases/band-solve.js";
+import { draws } from "./cases/draws.js";
+import { costTable, firstCall, newPiles, oneCount, sensitivity } from "./cases/prices.js";
 import { PeerProcess, peersAvailable } from "./peer-process.js";
 
 // Times every case, each alternately with its peer, and prints medians, ratios and their share of the target.
 
-const CASES: readonly BenchCase<never, never>[] = [bandSolve as unknown as BenchCase<never, never>];
+/** A list of cases cannot name the state of each; each is handed its own and no other's. */
+type AnyCase = BenchCase<never, never>;
+const CASES = [oneCount, costTable, firstCall, newPiles, sensitivity, draws, bandSolve] as unknown as readonly AnyCase[];
 
 interface Spread {
   readonly low: number;
@@ -18,10 +22,10 @@ function spread(values: readonly number[]): Spread {
   return { low: at(0.25), median: at(0.5), high: at(0.75) };
 }
 
-const figures = (value: number): string => (value === 0 ? "0" : value.toPrecision(3));
+const figures = (value: number): string => (value >= 1000 ? String(Math.round(value)) : value.toPrecision(3));
 const range = ({ low, median, high }: Spread, unit: string): string => `${figures(median)}${unit} (${figures(low)}-${figures(high)})`;
 
-async function time(bench: BenchCase<never, never>, withPeers: boolean): Promise<string[]> {
+async function time(bench: AnyCase, withPeers: boolean): Promise<string[]> {
   const state = bench.setup();
   const peer = withPeers && bench.peer !== undefined ? new PeerProcess() : undefined;
   const ours: number[] = [];
@@ -45,7 +49,7 @@ async function time(bench: BenchCase<never, never>, withPeers: boolean): Promise
   return report(bench, spread(ours), ratios.length === 0 ? undefined : spread(ratios));
 }
 
-function report({ name, size, target, peer }: BenchCase<never, never>, ours: Spread, ratio: Spread | undefined): string[] {
+function report({ name, size, target, peer }: AnyCase, ours: Spread, ratio: Spread | undefined): string[] {
   const lines = [`${name} - ${size}`, `  time      ${range(ours, " ms")}`];
   if (target.milliseconds !== undefined) lines[1] += `, ${share(ours.median, target.milliseconds)} of ${target.milliseconds} ms`;
   if (ratio !== undefined) {
