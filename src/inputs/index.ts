@@ -5,6 +5,7 @@ export { requireCount } from "./count.js";
 export { DEMONSTRATION } from "./demonstration.js";
 export type { Choice } from "./entry.js";
 export { GROUND_KINDS } from "./ground-kinds.js";
+export type { TypicalRange } from "./ground-kinds.js";
 export { InputError } from "./input-error.js";
 export { LARGEST_COUNT } from "./limits.js";
 export { METHODS } from "./methods.js";
