@@ -22,6 +22,7 @@ interface Frame {
   /** it reads its own value in a workbook that iterates */
   iterates: boolean;
   readonly wrongGuesses: FormulaCell[];
+  cellsRead: number;
 }
 
 /** The cell must be calculated before the formulas that are open, which lie too deep within each other. */
@@ -36,6 +37,7 @@ class WrongGuess extends Error {}
 
 // one formula within another takes some thirty calls of the ten thousand that the stack holds
 const DEEPEST = 60;
+const MOST_READ = 5_000_000;
 /** A formula that stands in no cell counts as standing beyond all of them. */
 const NOWHERE = { row: ROWS - 1, column: COLUMNS - 1 };
 
@@ -119,6 +121,8 @@ export class Calculation {
   private read(place: Place): CellValue {
     const { sheet, row, column } = place;
     const state = this.sheets[sheet];
+    const frame = this.frames[this.frames.length - 1];
+    if (frame !== undefined && ++frame.cellsRead > MOST_READ) throw new UnsupportedFormula(`The formula reads more than ${MOST_READ} cells, which the formula line does not do.`, "#NUM!");
     if (state === undefined) return new ErrorValue("#REF!");
     const entry = state.formulaAt(row, column);
     let value = entry === undefined ? state.valueAt(row, column) : this.valueOf(entry, place);
@@ -149,7 +153,7 @@ export class Calculation {
   }
 
   private within<T>(place: Place, entry: FormulaCell | undefined, isGuess: boolean, work: () => T): T {
-    this.frames.push({ place, entry, isGuess, readError: undefined, iterates: false, wrongGuesses: [] });
+    this.frames.push({ place, entry, isGuess, readError: undefined, iterates: false, wrongGuesses: [], cellsRead: 0 });
     try {
       return work();
     } finally {
@@ -164,7 +168,10 @@ export class Calculation {
       const values = this.engine.calculate(text, place);
       if (values === undefined) throw new UnsupportedFormula("The formula cannot be read.", "#NAME?", false);
       if (frame?.iterates === true) throw new UnsupportedFormula("The formula reads its own value and the workbook iterates, which the formula line does not.", CIRCULAR);
-      const shown = (isSingle ? [[values[0]?.[0] ?? null]] : values).map((row) => row.map((value) => value ?? 0));
+      const isTable = values.length > 1 || (values[0]?.length ?? 0) > 1;
+      // a blank cell shows as 0 in a sheet; a printed table keeps it apart from a zero
+      const blank = frame?.entry === undefined && isTable ? null : 0;
+      const shown = (isSingle ? [[values[0]?.[0] ?? null]] : values).map((row) => row.map((value) => value ?? blank));
       return { values: shown, isKept: false, isChanging, ...this.whyError(shown, place, text) };
     } catch (reason) {
       if (reason instanceof CellFirst || reason instanceof WrongGuess) throw reason;

@@ -1,10 +1,10 @@
 import { CellValueType, LocaleType, LogLevel, ObjectMatrix, Univer, UniverInstanceType, type ICellData, type IObjectArrayPrimitiveType, type IRowData } from "@univerjs/core";
 import {
-  AstTreeBuilder, IDefinedNamesService, IFormulaCurrentConfigService, IFormulaRuntimeService, IFunctionService, Interpreter, ISheetRowFilteredService, Lexer, LexerNode,
-  UniverFormulaEnginePlugin, type BaseFunction, type BaseReferenceObject, type BaseValueObject, type ISheetData,
+  AstTreeBuilder, BaseFunction, IDefinedNamesService, IFormulaCurrentConfigService, IFormulaRuntimeService, IFunctionService, Interpreter, ISheetRowFilteredService, Lexer, LexerNode, NumberValueObject,
+  UniverFormulaEnginePlugin, type ArrayValueObject, type BaseReferenceObject, type BaseValueObject, type FunctionVariantType, type ISheetData,
 } from "@univerjs/engine-formula";
 import { COLUMNS, ROWS } from "./addresses.js";
-import type { Book } from "./book.js";
+import type { Book, BookSheet } from "./book.js";
 import { ErrorValue, type CellValue } from "./cell-value.js";
 import { sheetAlias } from "./reference-writer.js";
 import type { Place } from "./table-references.js";
@@ -37,7 +37,7 @@ export class FormulaEngine {
     const injector = this.univer.__getInjector();
     this.univer.createUnit(UniverInstanceType.UNIVER_SHEET, snapshot(book, this.unit));
     const known = injector.get(IFunctionService);
-    known.registerExecutors(...functions.map(([Made, name]) => new Made(name)));
+    known.registerExecutors(new RowsOf("ROWS"), new ColumnsOf("COLUMNS"), ...functions.map(([Made, name]) => new Made(name)));
     this.functions = new Set([...known.getExecutors().keys()].map((name) => String(name).toUpperCase()));
     this.lexer = injector.get(Lexer);
     this.trees = injector.get(AstTreeBuilder);
@@ -74,17 +74,48 @@ export class FormulaEngine {
   }
 }
 
+/** The engine's own ROWS reads every cell of its range, which for a whole column takes seconds. */
+class RowsOf extends BaseFunction {
+  override needsReferenceObject = true;
+  override minParams = 1;
+  override maxParams = 1;
+
+  override calculate(range: FunctionVariantType): FunctionVariantType {
+    if (range.isError()) return range;
+    return NumberValueObject.create(this.lengthOf(range));
+  }
+
+  protected lengthOf(range: FunctionVariantType): number {
+    if (range.isReferenceObject()) return (range as BaseReferenceObject).getRowCount();
+    return range.isArray() ? (range as ArrayValueObject).getRowCount() : 1;
+  }
+}
+
+class ColumnsOf extends RowsOf {
+  protected override lengthOf(range: FunctionVariantType): number {
+    if (range.isReferenceObject()) return (range as BaseReferenceObject).getColumnCount();
+    return range.isArray() ? (range as ArrayValueObject).getColumnCount() : 1;
+  }
+}
+
 /** Asks for a cell whenever a formula reads one. */
 class AskedCells extends ObjectMatrix<ICellData> {
+  private readonly subtotals: ReadonlySet<number>;
+
   constructor(
     private readonly sheet: number,
+    { cells }: BookSheet,
     private readonly read: ReadCell,
   ) {
     super({});
+    this.subtotals = new Set(cells.filter(({ formula }) => formula !== undefined && /\b(?:SUBTOTAL|AGGREGATE)\(/i.test(formula)).map(({ row, column }) => row * COLUMNS + column));
   }
 
   override getValue(row: number, column: number): ICellData {
-    return engineCell(this.read(this.sheet, row, column)) as ICellData;
+    const cell = engineCell(this.read(this.sheet, row, column));
+    // by the formula the engine knows the subtotals that another subtotal leaves out
+    if (cell !== undefined && this.subtotals.has(row * COLUMNS + column)) cell.f = "=SUBTOTAL()";
+    return cell as ICellData;
   }
 }
 
@@ -119,7 +150,7 @@ function cellValue(value: BaseValueObject | null | undefined | void): CellValue 
 function sheetData(book: Book, read: ReadCell): ISheetData {
   return Object.fromEntries(book.sheets.map((sheet, index) => {
     const hidden: IObjectArrayPrimitiveType<Partial<IRowData>> = Object.fromEntries([...(sheet.hiddenRows ?? [])].map((row) => [row, { hd: 1 }]));
-    return [String(index), { cellData: new AskedCells(index, read), rowCount: ROWS, columnCount: COLUMNS, rowData: hidden, columnData: {} }];
+    return [String(index), { cellData: new AskedCells(index, sheet, read), rowCount: ROWS, columnCount: COLUMNS, rowData: hidden, columnData: {} }];
   }));
 }
 
@@ -129,14 +160,9 @@ function sheetNames(book: Book): Record<string, string> {
   return Object.fromEntries([...aliases, ...book.sheets.map(({ name }, index) => [name, String(index)] as const)]);
 }
 
-/** What the engine looks up in the workbook itself: sizes, and which cells hold subtotals that another subtotal leaves out. */
+/** The sizes of the sheets, which some functions look up in the workbook itself. */
 function snapshot(book: Book, unit: string): object {
-  const sheets = book.sheets.map(({ name, cells }, index) => {
-    const subtotals = cells.filter(({ formula }) => formula !== undefined && /\b(?:SUBTOTAL|AGGREGATE)\(/i.test(formula));
-    const cellData: Record<number, Record<number, { f: string }>> = {};
-    for (const { row, column, formula } of subtotals) (cellData[row] ??= {})[column] = { f: `=${formula ?? ""}` };
-    return [String(index), { id: String(index), name, rowCount: ROWS, columnCount: COLUMNS, cellData }];
-  });
+  const sheets = book.sheets.map(({ name }, index) => [String(index), { id: String(index), name, rowCount: ROWS, columnCount: COLUMNS, cellData: {} }]);
   return { id: unit, name: unit, appVersion: "", locale: LocaleType.EN_US, styles: {}, sheetOrder: book.sheets.map((_, index) => String(index)), sheets: Object.fromEntries(sheets) };
 }
 

@@ -1,7 +1,7 @@
+import { nearestWord } from "../inputs/labels.js";
 import { moved, readReference, type Area } from "./addresses.js";
 import type { Book } from "./book.js";
 import { CHANGING, COUNTING_DAYS, functionName, OUT_OF_REACH } from "./function-names.js";
-import { nearest } from "./nearest.js";
 import { ReferenceWriter, type Level } from "./reference-writer.js";
 import { shortForms } from "./short-forms.js";
 import { tableReference, type Place } from "./table-references.js";
@@ -83,7 +83,7 @@ class PlainWriter {
     if (kind === "name") this.name(token, list[k + 1], false);
     else if (kind === "table") this.area(token, false);
     else if (kind === "open") this.open("(", undefined, "");
-    else if (kind === "close") this.written += `)${this.levels.pop()?.after ?? ""}`;
+    else if (kind === "close") this.close();
     else if (kind === "comma") this.comma();
     else if (kind === "space") throw new UnsupportedFormula("The formula takes the cells that two ranges share, which the formula line does not calculate.", "#NULL!");
     else if (kind === "unknown") throw notReadable(text === '"' ? "a text has no closing quotation mark" : `the sign ${text} has no meaning there`);
@@ -189,6 +189,12 @@ class PlainWriter {
     this.levels.push({ name, argument: 0, after });
   }
 
+  private close(): void {
+    const level = this.levels.pop();
+    if (level === undefined) throw notReadable("a closing bracket has no opening one");
+    this.written += `)${level.after}`;
+  }
+
   private comma(): void {
     const level = this.levels[this.levels.length - 1];
     if (level?.name === undefined) throw new UnsupportedFormula("The formula joins several ranges with commas, which the formula line does not calculate.", "#VALUE!");
@@ -202,12 +208,12 @@ function notReadable(what: string): UnsupportedFormula {
 }
 
 function unknownFunction(name: string, functions: ReadonlySet<string>): UnsupportedFormula {
-  const near = nearest(name, name.startsWith("PROBE.") ? [...functions].filter((known) => known.startsWith("PROBE.")) : functions);
+  const near = name.startsWith("PROBE.") ? nearestWord(name, [...functions].filter((known) => known.startsWith("PROBE."))) : undefined;
   return new UnsupportedFormula(`No function named ${name} is known${near === undefined ? "" : `; the nearest is ${near}`}.`);
 }
 
 function unknownName(name: string, sheet: string | undefined, book: Book): UnsupportedFormula {
-  const near = nearest(name, book.names.map((entry) => entry.name));
+  const near = nearestWord(name, book.names.map((entry) => entry.name));
   const where = sheet === undefined ? "The workbook" : `The sheet ${sheet}`;
   return new UnsupportedFormula(`${where} has no name ${name}${near === undefined ? "" : `; the nearest is ${near}`}.`, "#NAME?", sheet?.includes("[") === true);
 }

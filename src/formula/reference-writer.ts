@@ -1,6 +1,6 @@
+import { nearestWord } from "../inputs/labels.js";
 import { columnLetters, COLUMNS, ROWS, type Area } from "./addresses.js";
 import { ABOUT_RANGES, wantsOneValue } from "./function-names.js";
-import { nearest } from "./nearest.js";
 import type { Surroundings } from "./plain-formula.js";
 import type { Place } from "./table-references.js";
 import { UnsupportedFormula } from "./unsupported.js";
@@ -40,7 +40,7 @@ export class ReferenceWriter {
     const index = names.findIndex((name) => name.toLowerCase() === written.toLowerCase());
     if (index >= 0) return index;
     if (written.includes(":")) throw new UnsupportedFormula(`The formula takes cells from several sheets at once (${written}), which the formula line does not calculate.`, "#REF!");
-    const near = nearest(written, names);
+    const near = nearestWord(written, names);
     throw new UnsupportedFormula(`The workbook has no sheet named ${written}${near === undefined ? `; it has ${names.join(", ")}.` : `; the nearest is ${near}.`}`, "#REF!", false);
   }
 

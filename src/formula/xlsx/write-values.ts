@@ -12,8 +12,8 @@ export interface Calculated {
   readonly outcome: Outcome;
 }
 
-/** Values this near to each other are the same: programs round the last digits differently. */
-const SAME = 1e-12;
+/** Values this near are the same: engines differ in the last digits of statistical functions, and a stored figure may be the better one. */
+const SAME = 1e-8;
 
 /**
  * Writes calculated values back into a workbook. Formulas that could not be calculated and circles of cells keep what is
