@@ -32,6 +32,9 @@ describe("packages", () => {
   it("refuses an address in the lock file", () => {
     expect(locked("node_modules/planted", { version: "1.0.0", resolved: "https://example.invalid/planted.tgz" })).toContain("names the machine");
   });
+  it("refuses a lock file that lacks a package, an optional one too", () => {
+    expect(locked("node_modules/planted", { version: "1.0.0", optionalDependencies: { "for-another-system": "^0.1.0" } })).toContain("wants for-another-system, which the lock file lacks");
+  });
   it("refuses a package that wants a later Node", () => {
     expect(locked("node_modules/planted", { version: "1.0.0", engines: { node: ">=22.12.0" } })).toContain("wants Node >=22.12.0");
   });

@@ -7,7 +7,16 @@ interface Manifest {
 }
 
 interface Lock {
-  packages: Record<string, { version?: string; license?: string; resolved?: string; engines?: { node?: string } | string[]; dependencies?: Record<string, string> }>;
+  packages: Record<string, Locked>;
+}
+
+interface Locked {
+  version?: string;
+  license?: string;
+  resolved?: string;
+  engines?: { node?: string } | string[];
+  dependencies?: Record<string, string>;
+  optionalDependencies?: Record<string, string>;
 }
 
 /** Code that only a browser runs: what it wants of Node concerns its own build, not ours. */
@@ -37,7 +46,11 @@ export function packageFaults(manifest: string, lock: string): string[] {
       if (packages[`node_modules/${name}`]?.version !== version) faults.push(`${name} ${version} is not what the lock file holds.`);
     }
   }
-  for (const [path, { resolved, engines, license, dependencies }] of Object.entries(packages)) {
+  for (const [path, { resolved, engines, license, dependencies, optionalDependencies }] of Object.entries(packages)) {
+    for (const name of Object.keys({ ...dependencies, ...optionalDependencies })) {
+      // npm ci refuses the whole lock file, even where the missing package is for another system
+      if (!reaches(packages, path, name)) faults.push(`${path} wants ${name}, which the lock file lacks.`);
+    }
     if (/univerjs-pro/.test(path + Object.keys(dependencies ?? {}).join())) faults.push(`${path} brings a proprietary package of the grid.`);
     if (license !== undefined && /^(UNLICENSED|SEE LICENSE)/.test(license) && !BROWSER_ONLY.includes(path)) faults.push(`${path} has no open licence.`);
     if (resolved !== undefined) faults.push(`${path} names the machine that it came from.`);
@@ -45,4 +58,12 @@ export function packageFaults(manifest: string, lock: string): string[] {
     if (path !== "" && node !== undefined && !satisfies(NODE, node) && !BROWSER_ONLY.includes(path)) faults.push(`${path} wants Node ${node}.`);
   }
   return faults;
+}
+
+/** Whether a package finds another from where it stands, in its own node_modules or in one above. */
+function reaches(packages: Lock["packages"], path: string, name: string): boolean {
+  for (let from = path; ; from = from.slice(0, Math.max(from.lastIndexOf("/node_modules/"), 0))) {
+    if (`${from === "" ? "" : `${from}/`}node_modules/${name}` in packages) return true;
+    if (from === "") return false;
+  }
 }
