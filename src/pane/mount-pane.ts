@@ -55,7 +55,7 @@ export function mountPane(host: HTMLElement, workbook: Workbook | undefined, opt
   const { line, tell } = statusLine();
   const theme = themeSwitch(root, tell);
   const working = workbook === undefined ? undefined : workingViews(workbook, options, tell);
-  const views = tabs([...(working?.views ?? []), helpTab(workbook, options, tell)]);
+  const views = tabs([...(working?.views ?? []), helpTab(workbook, working?.siteName ?? (() => "Site"), options, tell)]);
   const header = element("header", { class: "header" }, element("h1", {}, toolMark(), "Probeworth"), theme.button);
   root.append(hatchPatterns(), element("div", { class: "top" }, header, views.list), element("main", { class: "main" }, ...views.panels), line);
   return {
@@ -67,7 +67,7 @@ export function mountPane(host: HTMLElement, workbook: Workbook | undefined, opt
   };
 }
 
-function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence: string) => void): { readonly views: TabView[]; readonly close: () => void } {
+function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence: string) => void): { readonly views: TabView[]; readonly siteName: () => string; readonly close: () => void } {
   const site = new SiteStore(workbook);
   const pricing = new Pricing(options.startWorker ?? startCountsWorker);
   const results = new ResultsStore(pricing, tell);
@@ -90,6 +90,7 @@ function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence:
       { name: "Site", content: () => siteView(site, actions, options.locale) },
       { name: "Results", content: () => resultsView(results, options.locale), seen: (visible) => results.look(visible) },
     ],
+    siteName: () => (site.state.source?.kind === "name" ? site.state.source.name : "Site"),
     close: () => {
       site.close();
       pricing.close();
@@ -97,7 +98,7 @@ function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence:
   };
 }
 
-function helpTab(workbook: Workbook | undefined, options: PaneOptions, tell: (sentence: string) => void): TabView {
+function helpTab(workbook: Workbook | undefined, siteName: () => string, options: PaneOptions, tell: (sentence: string) => void): TabView {
   const versions = [
     { part: "Pane", version: PRODUCT_VERSION },
     { part: "Cell functions", version: options.functionsVersion ?? PRODUCT_VERSION },
@@ -106,7 +107,7 @@ function helpTab(workbook: Workbook | undefined, options: PaneOptions, tell: (se
     const inserted = workbook === undefined ? undefined : await addSheet(workbook, exampleSheet(id, formula), tell);
     if (inserted !== undefined) tell(`The example stands on the new sheet ${inserted.sheet}.`);
   };
-  const content = { functions: options.functions?.functions, namespace: options.namespace ?? "PROBE", versions };
+  const content = { functions: options.functions?.functions, namespace: options.namespace ?? "PROBE", siteName, versions };
   const actions = { copy: copyText, insert: workbook === undefined ? undefined : (id: string, formula: string) => void insert(id, formula), tell };
   return { name: "Help", content: () => helpView(content, actions) };
 }

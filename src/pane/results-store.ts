@@ -45,7 +45,7 @@ export class ResultsStore {
    * @param tell     says a sentence aloud
    */
   constructor(
-    private readonly pricing: Pricing,
+    private readonly pricing: Pick<Pricing, "price" | "lengths" | "cancel">,
     private readonly tell: (sentence: string) => void,
   ) {}
 

@@ -14,5 +14,6 @@ export function exampleSheet(id: string, formula: string): SheetPlan {
       { row: 1, column: 0, value: `The formula reads ${formula.slice(1)}`, style: "note" },
       { row: 3, column: 0, formula, style: "result" },
     ],
+    columnWidths: Array.from({ length: 9 }, () => 120),
   };
 }

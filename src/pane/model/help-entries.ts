@@ -21,8 +21,8 @@ export interface HelpEntry {
   /** the call with all its arguments, optional ones in brackets */
   readonly call: string;
   readonly parameters: readonly { readonly name: string; readonly description: string; readonly need: string }[];
-  /** a formula that can be typed as it stands, given a site block named Site; undefined where no sample value is known */
-  readonly example: string | undefined;
+  /** a formula that can be typed as it stands, given the name of a site block; undefined where no sample value is known */
+  readonly example: (siteName: string) => string | undefined;
 }
 
 /**
@@ -30,11 +30,10 @@ export interface HelpEntry {
  *
  * @param functions  the list in functions.json
  * @param namespace  what stands before the full stop, such as "PROBE"
- * @param siteName   defined name of the site block for the examples
  * @returns          entries in the order of the alphabet
  */
-export function helpEntries(functions: readonly FunctionMetadata[], namespace: string, siteName: string): HelpEntry[] {
-  return functions.map((entry) => describe(entry, namespace, siteName)).sort((a, b) => a.id.localeCompare(b.id, "en"));
+export function helpEntries(functions: readonly FunctionMetadata[], namespace: string): HelpEntry[] {
+  return functions.map((entry) => describe(entry, namespace)).sort((a, b) => a.id.localeCompare(b.id, "en"));
 }
 
 /**
@@ -51,7 +50,7 @@ export function searchHelp(entries: readonly HelpEntry[], search: string): HelpE
   });
 }
 
-function describe(entry: FunctionMetadata, namespace: string, siteName: string): HelpEntry {
+function describe(entry: FunctionMetadata, namespace: string): HelpEntry {
   const call = entry.parameters.map((parameter) => {
     const name = parameter.repeating ? `${parameter.name}, \u2026` : parameter.name;
     return parameter.optional || parameter.repeating ? `[${name}]` : name;
@@ -65,7 +64,7 @@ function describe(entry: FunctionMetadata, namespace: string, siteName: string):
       description: parameter.description ?? "",
       need: parameter.repeating ? "optional, may be repeated" : parameter.optional ? "optional" : "required",
     })),
-    example: example(entry, namespace, siteName),
+    example: (siteName) => example(entry, namespace, siteName),
   };
 }
 

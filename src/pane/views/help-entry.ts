@@ -14,25 +14,27 @@ export interface ExampleActions {
 /**
  * One function, folded; its inside is made when it is first opened, because there are many.
  *
- * @param entry    the function
- * @param actions  what the buttons do
+ * @param entry     the function
+ * @param siteName  the name under which the example finds the site block, asked each time the entry is opened
+ * @param actions   what the buttons do
  */
-export function helpEntry(entry: HelpEntry, actions: ExampleActions): HTMLElement {
+export function helpEntry(entry: HelpEntry, siteName: () => string, actions: ExampleActions): HTMLElement {
   const head = element("summary", {}, element("span", { class: "function-name" }, entry.id), element("span", { class: "function-words" }, entry.description));
   const made = element("details", { class: "group function" }, head);
   made.addEventListener("toggle", () => {
-    if (made.open && made.childElementCount === 1) made.append(inside(entry, actions));
+    if (made.open) made.replaceChildren(head, inside(entry, siteName(), actions));
   });
   return made;
 }
 
-function inside(entry: HelpEntry, actions: ExampleActions): HTMLElement {
+function inside(entry: HelpEntry, siteName: string, actions: ExampleActions): HTMLElement {
+  const formula = entry.example(siteName);
   const parameters = entry.parameters.flatMap((parameter) => [
     element("dt", {}, element("code", {}, parameter.name), parameter.need === "required" ? undefined : element("span", { class: "need" }, ` ${parameter.need}`)),
     element("dd", {}, parameter.description),
   ]);
   const list = parameters.length === 0 ? element("p", {}, "It takes no arguments.") : element("dl", { class: "parameters" }, ...parameters);
-  return element("div", { class: "function-body" }, element("p", { class: "call" }, element("code", {}, breakable(entry.call))), list, entry.example === undefined ? undefined : example(entry.id, entry.example, actions));
+  return element("div", { class: "function-body" }, element("p", { class: "call" }, element("code", {}, breakable(entry.call))), list, formula === undefined ? undefined : example(entry.id, formula, actions));
 }
 
 function example(id: string, formula: string, actions: ExampleActions): HTMLElement {

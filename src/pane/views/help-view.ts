@@ -8,6 +8,8 @@ export interface HelpContent {
   /** the list in functions.json; undefined where it could not be read */
   readonly functions: readonly FunctionMetadata[] | undefined;
   readonly namespace: string;
+  /** the name under which the examples find the site block */
+  readonly siteName: () => string;
   /** each part of the program with its version; they can differ for a day after an update */
   readonly versions: readonly { readonly part: string; readonly version: string }[];
 }
@@ -33,8 +35,8 @@ function functionsPanel(content: HelpContent, actions: ExampleActions): HTMLElem
     panel.append(element("p", { class: "refusal" }, "The list of functions could not be read. Close the pane and open it again; if it stays away, the program is not completely installed."));
     return panel;
   }
-  const entries = helpEntries(content.functions, content.namespace, "Site");
-  const made = new Map<HelpEntry, HTMLElement>(entries.map((entry) => [entry, helpEntry(entry, actions)]));
+  const entries = helpEntries(content.functions, content.namespace);
+  const made = new Map<HelpEntry, HTMLElement>(entries.map((entry) => [entry, helpEntry(entry, content.siteName, actions)]));
   const show = (): void => {
     const kept = searchHelp(entries, search.value);
     for (const [entry, node] of made) node.hidden = !kept.includes(entry);
