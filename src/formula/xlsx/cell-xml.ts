@@ -38,7 +38,7 @@ function typeAttribute(value: CellValue): string {
 function valueXml(prefix: string, value: CellValue): string {
   if (value === null) return "";
   const text = value instanceof ErrorValue ? (STORED_ERRORS.has(value.code) ? value.code : "#VALUE!") : typeof value === "boolean" ? (value ? "1" : "0") : typeof value === "number" ? String(value) : withCodes(value);
-  const keepsSpace = typeof value === "string" && value !== value.trim() ? ' xml:space="preserve"' : "";
+  const keepsSpace = typeof value === "string" && text !== text.trim() ? ' xml:space="preserve"' : "";
   return `<${prefix}v${keepsSpace}>${escaped(text)}</${prefix}v>`;
 }
 

@@ -27,16 +27,20 @@ const DAMAGED = "The workbook is damaged or cut short: ";
  * and all, so nothing in it can change.
  */
 export class ZipFile {
+  private readonly bytes: Uint8Array;
   private readonly entries: readonly Entry[];
   private readonly directoryOffset: number;
   private readonly tail: Uint8Array;
   private bytesRead = 0;
 
   /**
-   * @param bytes  the whole file
+   * @param file  its bytes
    * @throws {FormulaLineError} for anything that is not a sound zip file of ordinary size
    */
-  constructor(private readonly bytes: Uint8Array) {
+  constructor(file: Uint8Array) {
+    // slice() of a Buffer would share its bytes instead of copying them
+    const bytes = new Uint8Array(file.buffer, file.byteOffset, file.byteLength);
+    this.bytes = bytes;
     const view = viewOf(bytes);
     const end = directoryEnd(bytes, view);
     const count = view.getUint16(end + 10, true);
