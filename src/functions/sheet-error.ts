@@ -13,7 +13,8 @@ export class SheetError extends Error {
 }
 
 interface ExcelRuntime {
-  readonly Error: new (code: string, message: string) => Error;
+  /** absent where a page has only the part that registers functions */
+  readonly Error?: new (code: string, message: string) => Error;
   readonly ErrorCode: { readonly invalidValue: string; readonly notAvailable: string };
 }
 
@@ -25,7 +26,7 @@ interface ExcelRuntime {
  * @returns         an object with that code and that message, to be thrown
  */
 export function sheetError(code: SheetErrorCode, sentence: string): Error {
-  const excel = (globalThis as unknown as { CustomFunctions?: Partial<ExcelRuntime> }).CustomFunctions;
-  if (excel?.Error === undefined || excel.ErrorCode === undefined) return new SheetError(code, sentence);
+  const excel = (globalThis as unknown as { CustomFunctions?: ExcelRuntime }).CustomFunctions;
+  if (excel?.Error === undefined) return new SheetError(code, sentence);
   return new excel.Error(code === "#N/A" ? excel.ErrorCode.notAvailable : excel.ErrorCode.invalidValue, sentence);
 }

@@ -32,7 +32,7 @@ export function costTable(rows: readonly CountRow[], units: UnitSystem, money = 
 }
 
 /** Says in which money a table is. */
-export const MONEY_NOTE = "Money is in the currency of the prices; every figure is an expectation.";
+const MONEY_NOTE = "Money is in the currency of the prices; every figure is an expectation.";
 
 /** Says how far the small figures go, which the fast model has measured. */
-export const ROUNDING_NOTE = "A failure cost below 1 % of the building value may be off by a fifth: round it to one or two figures.";
+const ROUNDING_NOTE = "A failure cost below 1 % of the building value may be off by a fifth: round it to one or two figures.";

@@ -6,5 +6,5 @@ export { groundKindTable } from "./ground-kind-table.js";
 export { layoutTable } from "./layout-table.js";
 export { lengthTable } from "./length-table.js";
 export { methodTable } from "./method-table.js";
-export { columnHead, tableCells, type ResultColumn, type ResultTable } from "./result-table.js";
+export { tableCells } from "./result-table.js";
 export { PRODUCT_VERSION } from "./version.js";

@@ -16,7 +16,7 @@ export interface ResultTable {
 }
 
 /** The column's head line: "Carbon (kg CO2e)". */
-export function columnHead(column: ResultColumn): string {
+function columnHead(column: ResultColumn): string {
   return column.unit === "" ? column.label : `${column.label} (${column.unit})`;
 }
 

@@ -59,7 +59,7 @@ describe("refusals of field theory", () => {
     ["VARIANCEFACTOR", [1, null], "Scale is blank; it must be a scale of fluctuation above 0 m."],
     ["VARIANCEFACTOR", ["4 m", 2], 'Length is "4 m", which is text; it must be a length of 0 m or more.'],
     ["CORRELATION", [1, -2], "Scale is -2; it must be a scale of fluctuation above 0 m."],
-    ["CORRELATION", [1, 2, "linear"], 'Model is "linear"; it must be one of markov, ellipsoidal, gaussian, spherical, markov2.'],
+    ["CORRELATION", [1, 2, "linear"], 'Model is "linear"; it must be one of markov, ellipsoidal, gaussian, spherical, markov2, triangular.'],
     ["CORRELATION", ["#REF!", 2], "Lag holds the error #REF!; clear that error first."],
   ])("%s%j", (id, args, sentence) => {
     expect(refusal(() => callFunction(id, args))).toEqual(["#VALUE!", sentence]);

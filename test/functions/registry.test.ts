@@ -24,6 +24,16 @@ describe("calling a function as a worksheet writes it", () => {
     }
   });
 
+  it("begins to gather right after the last argument before the pairs", async () => {
+    const { functions } = await functionsMetadata();
+    const gathering = functions.filter(({ parameters }) => parameters.at(-1)?.repeating === true);
+    expect(gathering).toHaveLength(14);
+    for (const { id, parameters } of gathering) {
+      const given = [demonstration(), ...parameters.slice(1, -1).map(() => null), "Wishful COV", 1];
+      expect([id, spoken(id, given)]).toEqual([id, expect.stringMatching(/label of pair 1 of the formula is .{1,2}Wishful COV/)]);
+    }
+  });
+
   it("gives what Excel's own form of the call gives", () => {
     const site = demonstration();
     const asExcel = FUNCTIONS.get("TOTALCOST")?.(site, 3, ["Stiffness COV", 0.45], { address: "Bid!B3" }); // Excel always adds its invocation object
@@ -39,7 +49,7 @@ describe("calling a function as a worksheet writes it", () => {
   it("refuses a function that does not exist, and too many arguments", () => {
     expect(refusal(() => callFunction("TOTALPRICE", []))).toEqual(["#VALUE!", "PROBE has no function TOTALPRICE."]);
     expect(refusal(() => callFunction("constructor", []))).toEqual(["#VALUE!", "PROBE has no function constructor."]);
-    expect(refusal(() => callFunction("LAYOUT", [demonstration(), 3, "Seed", 2]))).toEqual(["#VALUE!", "LAYOUT takes 2 arguments; 4 were given."]);
+    expect(refusal(() => callFunction("LAYOUT", [demonstration(), 3, "Seed"]))).toEqual(["#VALUE!", "LAYOUT takes 2 arguments; 3 were given."]);
   });
 });
 
