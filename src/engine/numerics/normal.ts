@@ -41,7 +41,7 @@ export function normalDistribution(x: number): number {
  */
 export function normalCentralChance(x: number): number {
   if (Math.abs(x) <= CENTRE) return x * ratio(CENTRE_ABOVE, CENTRE_BELOW, x * x);
-  return x < 0 ? normalDistribution(x) - 0.5 : 0.5 - normalDistribution(-x);
+  return 0.5 - normalDistribution(-x);
 }
 
 /**

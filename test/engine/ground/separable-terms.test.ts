@@ -18,6 +18,7 @@ describe.each(SEPARABLE)("separableTerms, %s", (model) => {
     const terms = separableTerms(structure);
     expect(terms.length).toBe(1);
     const exact = fieldCorrelation(structure);
+    expect(exact(12, 0)).toBe(exact(0, -3)); // one scale off either way
     for (const [r, z] of [[0, 0], [5, 0], [0, 2], [7, -1.5], [20, 6]]) expect(terms[0].weight * terms[0].plan(r) * terms[0].vertical(z)).toBe(exact(r, z));
   });
 
@@ -50,6 +51,7 @@ describe("separableTerms, ellipsoidal", () => {
         const r = 8 * t * Math.cos(angle);
         const z = 2 * t * Math.sin(angle);
         expect(Math.abs(sum(terms, (term) => term.plan(r) * term.vertical(z)) - Math.exp(-2 * t))).toBeLessThan(2.5e-4);
+        expect(fieldCorrelation(structure)(r, -z)).toBeCloseTo(Math.exp(-2 * t), 14);
       }
     }
   });
