@@ -4,39 +4,14 @@ import { cellAddress, COLUMNS, readReference, ROWS, type Area } from "./addresse
 import type { Book } from "./book.js";
 import { CIRCULAR, errorInWords, ErrorValue, type CellValue } from "./cell-value.js";
 import { FormulaEngine } from "./formula-engine.js";
-import { plainFormula, type Surroundings } from "./plain-formula.js";
+import { CellFirst, Frames, WrongGuess } from "./frames.js";
+import { plainFormula } from "./plain-formula.js";
 import { SheetState, type FormulaCell, type Outcome } from "./sheet-state.js";
 import { filledInto } from "./spills.js";
+import type { Surroundings } from "./surroundings.js";
 import type { Place } from "./table-references.js";
 import { UnsupportedFormula } from "./unsupported.js";
 
-/** A formula that is being calculated. */
-interface Frame {
-  readonly place: Place;
-  /** undefined for a formula that stands in no cell */
-  readonly entry: FormulaCell | undefined;
-  /** calculated only because its table might fill a blank cell that was read */
-  readonly isGuess: boolean;
-  /** the first error value that it read */
-  readError: { source: string; reason: string } | undefined;
-  /** it reads its own value in a workbook that iterates */
-  iterates: boolean;
-  readonly wrongGuesses: FormulaCell[];
-  cellsRead: number;
-}
-
-/** The cell must be calculated before the formulas that are open, which lie too deep within each other. */
-class CellFirst extends Error {
-  constructor(readonly place: Place) {
-    super();
-  }
-}
-
-/** A guess led into a circle, which is none: the table does not reach the cell that was read. */
-class WrongGuess extends Error {}
-
-// one formula within another takes some thirty calls of the ten thousand that the stack holds
-const DEEPEST = 60;
 const MOST_READ = 5_000_000;
 /** A formula that stands in no cell counts as standing beyond all of them. */
 const NOWHERE = { row: ROWS - 1, column: COLUMNS - 1 };
@@ -47,7 +22,7 @@ export class Calculation {
   private readonly engine: FormulaEngine;
   private readonly reasons = new CellReasons();
   private readonly around: Surroundings;
-  private readonly frames: Frame[] = [];
+  private readonly frames = new Frames();
   private waiting: Place[] = [];
 
   /**
@@ -72,7 +47,7 @@ export class Calculation {
   formula(formula: string, sheet: number): Outcome {
     const place = { sheet, ...NOWHERE };
     this.reasons.startRun();
-    return this.inTurn(() => this.within(place, undefined, false, () => this.calculate(formula.replace(/^\s*=/, ""), place, false)));
+    return this.inTurn(() => this.frames.within(place, undefined, false, () => this.calculate(formula.replace(/^\s*=/, ""), place, false)));
   }
 
   /**
@@ -121,7 +96,7 @@ export class Calculation {
   private read(place: Place): CellValue {
     const { sheet, row, column } = place;
     const state = this.sheets[sheet];
-    const frame = this.frames[this.frames.length - 1];
+    const frame = this.frames.top;
     if (frame !== undefined && ++frame.cellsRead > MOST_READ) throw new UnsupportedFormula(`The formula reads more than ${MOST_READ} cells, which the formula line does not do.`, "#NUM!");
     if (state === undefined) return new ErrorValue("#REF!");
     const entry = state.formulaAt(row, column);
@@ -138,10 +113,10 @@ export class Calculation {
 
   /** Calculates a cell's formula and places its table. */
   private open(entry: FormulaCell, place: Place, isGuess: boolean): Outcome {
-    if (this.frames.length >= DEEPEST) throw this.frames.some((frame) => frame.isGuess) ? new WrongGuess() : new CellFirst(place);
+    this.frames.refuseTooDeep(place);
     entry.isOpen = true;
     try {
-      return this.within(place, entry, isGuess, () => {
+      return this.frames.within(place, entry, isGuess, () => {
         const { placement } = entry.cell;
         const outcome = this.placed(entry, place, this.calculate(entry.formula, place, placement === undefined || placement.kind === "single"));
         entry.outcome = outcome;
@@ -152,17 +127,8 @@ export class Calculation {
     }
   }
 
-  private within<T>(place: Place, entry: FormulaCell | undefined, isGuess: boolean, work: () => T): T {
-    this.frames.push({ place, entry, isGuess, readError: undefined, iterates: false, wrongGuesses: [], cellsRead: 0 });
-    try {
-      return work();
-    } finally {
-      for (const guess of this.frames.pop()?.wrongGuesses ?? []) guess.wrongGuesses--;
-    }
-  }
-
   private calculate(formula: string, place: Place, isSingle: boolean): Outcome {
-    const frame = this.frames[this.frames.length - 1];
+    const frame = this.frames.top;
     try {
       const { text, isChanging } = plainFormula(formula, place, isSingle, this.around);
       const values = this.engine.calculate(text, place);
@@ -189,7 +155,7 @@ export class Calculation {
     if (!(error instanceof ErrorValue)) return {};
     const own = this.reasons.at(String(place.sheet), place.row, place.column);
     if (own.length > 0) return { reason: own.join(" ") };
-    const read = this.frames[this.frames.length - 1]?.readError ?? this.errorAmong(plain, error.code);
+    const read = this.frames.top?.readError ?? this.errorAmong(plain, error.code);
     return read ?? { reason: errorInWords(error.code) };
   }
 
@@ -234,28 +200,27 @@ export class Calculation {
       } catch (reason) {
         if (!(reason instanceof WrongGuess)) throw reason;
         entry.wrongGuesses++;
-        this.frames[this.frames.length - 1]?.wrongGuesses.push(entry);
+        this.frames.top?.wrongGuesses.push(entry);
       }
     }
     return candidates.length > 0;
   }
 
   private circle(entry: FormulaCell, place: Place): CellValue {
-    const from = this.frames.findIndex((frame) => frame.entry === entry);
-    const round = from < 0 ? this.frames : this.frames.slice(from);
+    const round = this.frames.since(entry);
     if (round.some(({ isGuess }) => isGuess)) throw new WrongGuess();
     if (this.book.iterates) {
       for (const frame of round) frame.iterates = true;
       return entry.cell.value;
     }
-    const way = [...(from < 0 ? [this.named(place)] : []), ...round.map((frame) => this.named(frame.place)), this.named(place)];
+    const way = [place, ...round.filter((frame) => frame.entry !== entry).map((frame) => frame.place), place].map((step) => this.named(step));
     const shown = way.length <= 8 ? way : [...way.slice(0, 4), "...", ...way.slice(-3)];
     for (const frame of round) frame.readError ??= { source: this.named(place), reason: `the cells refer to each other in a circle: ${shown.join(", ")}.` };
     return new ErrorValue(CIRCULAR);
   }
 
   private noteError(place: Place, code: string, outcome: Outcome | undefined): void {
-    const frame = this.frames[this.frames.length - 1];
+    const frame = this.frames.top;
     if (frame !== undefined) frame.readError ??= this.whyReadError(place, code, outcome);
   }
 

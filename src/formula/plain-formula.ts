@@ -1,23 +1,13 @@
 import { nearestWord } from "../inputs/labels.js";
-import { moved, readReference, type Area } from "./addresses.js";
+import { moved, readReference } from "./addresses.js";
 import type { Book } from "./book.js";
 import { CHANGING, COUNTING_DAYS, functionName, OUT_OF_REACH } from "./function-names.js";
 import { ReferenceWriter, type Level } from "./reference-writer.js";
 import { shortForms } from "./short-forms.js";
+import type { Surroundings } from "./surroundings.js";
 import { tableReference, type Place } from "./table-references.js";
 import { tokens, type Token } from "./tokens.js";
 import { UnsupportedFormula } from "./unsupported.js";
-
-/** What the writer of plain formulas asks of the calculation around it. */
-export interface Surroundings {
-  readonly book: Book;
-  /** the functions that can be calculated, in capitals */
-  readonly functions: ReadonlySet<string>;
-  /** rows and columns from the first on that hold something on any sheet, at least 1 */
-  used(): { rows: number; columns: number };
-  /** where the table went that the formula of this cell spilled; undefined without one */
-  spillOf(place: Place): Area | undefined;
-}
 
 /** A formula without names, tables, prefixes and short forms. */
 export interface PlainFormula {

@@ -1,7 +1,7 @@
 import { nearestWord } from "../inputs/labels.js";
 import { columnLetters, COLUMNS, ROWS, type Area } from "./addresses.js";
 import { ABOUT_RANGES, wantsOneValue } from "./function-names.js";
-import type { Surroundings } from "./plain-formula.js";
+import type { Surroundings } from "./surroundings.js";
 import type { Place } from "./table-references.js";
 import { UnsupportedFormula } from "./unsupported.js";
 

@@ -44,9 +44,17 @@ function valueXml(prefix: string, value: CellValue): string {
 
 /** Signs that XML cannot hold become _x000B_; a text that looks like such a code gets its first sign written as one. */
 function withCodes(text: string): string {
-  const code = (sign: string): string => `_x${sign.charCodeAt(0).toString(16).toUpperCase().padStart(4, "0")}_`;
-  // eslint-disable-next-line no-control-regex -- these are the signs that must not reach the file
-  return text.replace(/_(?=x[0-9A-Fa-f]{4}_)/g, code).replace(/[\u0000-\u0008\u000b\u000c\u000d\u000e-\u001f\ufffe\uffff]/g, code);
+  const marked = text.replace(/_(?=x[0-9A-Fa-f]{4}_)/g, codeOf);
+  return Array.from(marked).some(needsCode) ? Array.from(marked, (sign) => (needsCode(sign) ? codeOf(sign) : sign)).join("") : marked;
+}
+
+function needsCode(sign: string): boolean {
+  const code = sign.charCodeAt(0);
+  return (code < 0x20 && sign !== "\t" && sign !== "\n") || code === 0xfffe || code === 0xffff;
+}
+
+function codeOf(sign: string): string {
+  return `_x${sign.charCodeAt(0).toString(16).toUpperCase().padStart(4, "0")}_`;
 }
 
 /** What a cell holds besides formula, value and inline string: extensions of other programs. */
