@@ -15,7 +15,7 @@ const small: FunctionMetadata[] = [
       { name: "site", description: "Site block" },
       { name: "count", description: "Holes" },
       { name: "rule", optional: true },
-      { name: "pairs", repeating: true, optional: true },
+      { name: "pairs", repeating: true },
     ],
   },
   { id: "ODD", name: "ODD", parameters: [{ name: "nobody_knows" }] },

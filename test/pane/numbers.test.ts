@@ -11,6 +11,7 @@ describe("numbers for people", () => {
     expect(english.money(12.345, 0.01)).toBe("12.35");
     expect(english.money(-1234, 1)).toBe("\u22121,234");
     expect(english.money(-0.2, 1)).toBe("0");
+    expect(english.plain(-0.2, 0)).toBe("0");
   });
 
   it("the language of the person decides on marks", () => {

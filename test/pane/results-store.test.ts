@@ -16,14 +16,18 @@ function bench() {
   const runs: Run[] = [];
   const lengths: { count: number; end: (end: PricingEnd<LengthTable>) => void }[] = [];
   const said: string[] = [];
+  let cancels = 0;
   const pricing: Pick<Pricing, "price" | "lengths" | "cancel" | "close"> = {
     price: (_problem, counts, progress) => new Promise((end) => runs.push({ counts, progress, end })),
     lengths: (_problem, count) => new Promise((end) => lengths.push({ count, end })),
-    cancel: () => runs.at(-1)?.end({ kind: "cancelled" }),
+    cancel: () => {
+      cancels++;
+      runs.at(-1)?.end({ kind: "cancelled" });
+    },
     close: () => undefined,
   };
   const store = new ResultsStore(pricing, (sentence) => said.push(sentence));
-  return { store, runs, lengths, said };
+  return { store, runs, lengths, said, cancels: () => cancels };
 }
 
 const state = (edition: number, site: Partial<Site> | undefined, refusal?: string): SiteState => ({
@@ -97,6 +101,15 @@ describe("results as the pane keeps them", () => {
     runs[2]!.end({ kind: "done", value: rows });
     await settled();
     expect(store.state).toMatchObject({ phase: "idle", old: false, table: { edition: 3 } });
+  });
+
+  it("ends a run for inputs that no longer stand although nobody is looking any more", () => {
+    const { store, cancels } = bench();
+    store.take(state(1, {}));
+    store.look(true);
+    store.look(false);
+    store.take(state(2, {}));
+    expect(cancels()).toBe(1);
   });
 
   it("does not start again by itself what was cancelled, until the inputs change or somebody asks", async () => {

@@ -15,6 +15,7 @@ export function countRow(count: number, total: number, change: Partial<CountRow>
     carbon: 1000,
     surprises: 0,
     tooShortChance: 0,
+    totalMetres: 100,
     chanceCheapest: 0,
     notDistinguishable: false,
     ...change,

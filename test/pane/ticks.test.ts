@@ -33,6 +33,7 @@ describe("ticks of an axis", () => {
 
   it("counts are all labelled while they fit, then every second, fifth and so on", () => {
     expect(countTicks([0, 1, 2, 3], 4)).toEqual([0, 1, 2, 3]);
+    expect(countTicks([0, 3, 7], 3)).toEqual([0, 3, 7]);
     expect(countTicks([0, 1, 2, 3, 4, 5, 6, 7, 8, 9, 10, 11, 12], 10)).toEqual([0, 2, 4, 6, 8, 10, 12]);
     expect(countTicks([1, 2, 3, 4, 5, 6], 3)).toEqual([5]);
   });

@@ -11,7 +11,7 @@ export function exampleSheet(id: string, formula: string): SheetPlan {
     name: `Example ${id}`.slice(0, 31), // the longest name that a sheet may bear
     cells: [
       { row: 0, column: 0, value: `Example of ${id}`, style: "title" },
-      { row: 1, column: 0, value: `The formula reads ${formula.slice(1)}`, style: "note" },
+      { row: 1, column: 0, value: `The formula below reads ${formula}`, style: "note" },
       { row: 3, column: 0, formula, style: "result" },
     ],
     columnWidths: Array.from({ length: 9 }, () => 120),
