@@ -1,8 +1,9 @@
 import { readdirSync } from "node:fs";
+import { dirname } from "node:path";
 import { fileURLToPath } from "node:url";
 
 /** The project's own folder. */
-export const ROOT = fileURLToPath(new URL("../..", import.meta.url)).replace(/\/$/, "");
+export const ROOT = dirname(dirname(dirname(fileURLToPath(import.meta.url))));
 
 /**
  * Every file below a folder.

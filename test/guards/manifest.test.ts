@@ -22,7 +22,7 @@ describe("the manifest", () => {
   it.each([
     ["an address that is not in the build", "/functions.json", "/functions-2.json", "is not in the build"],
     ["a resource that does not exist", '<LearnMoreUrl resid="Help.Url"', '<LearnMoreUrl resid="More.Url"', "More.Url is used and nowhere defined"],
-    ["a resource that nobody uses", 'id="Open.Tip"', 'id="Open.Tips"', "Open.Tips is defined and nowhere used"],
+    ["a resource that nobody uses", '<Description resid="Open.Tip"', '<Description resid="Open.Label"', "Open.Tip is defined and nowhere used"],
     ["a resource name above 32 characters", /Functions\.Script\.Url/g, "Functions.Script.Url.OfThisRelease", "longer than 32 characters"],
     ["a page outside the shared runtime", '<FunctionFile resid="Pane.Url"', '<FunctionFile resid="Help.Url"', "do not all name the runtime's page"],
     ["a runtime that ends with the pane", 'lifetime="long"', 'lifetime="short"', "not shared"],
