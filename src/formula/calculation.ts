@@ -1,6 +1,6 @@
 import type { BaseFunction } from "@univerjs/engine-formula";
 import { CellReasons } from "../practice/cell-reasons.js";
-import { cellAddress, COLUMNS, readReference, ROWS, type Area } from "./addresses.js";
+import { areaAddress, cellAddress, COLUMNS, readReference, ROWS, type Area } from "./addresses.js";
 import type { Book } from "./book.js";
 import { CIRCULAR, errorInWords, ErrorValue, type CellValue } from "./cell-value.js";
 import { FormulaEngine } from "./formula-engine.js";
@@ -12,7 +12,9 @@ import type { Surroundings } from "./surroundings.js";
 import type { Place } from "./table-references.js";
 import { UnsupportedFormula } from "./unsupported.js";
 
-const MOST_READ = 5_000_000;
+const MOST_READ = 2_000_000;
+/** The error values that our functions give, each with a sentence. */
+const OURS: ReadonlySet<string> = new Set(["#VALUE!", "#N/A"]);
 /** A formula that stands in no cell counts as standing beyond all of them. */
 const NOWHERE = { row: ROWS - 1, column: COLUMNS - 1 };
 
@@ -102,7 +104,7 @@ export class Calculation {
     const entry = state.formulaAt(row, column);
     let value = entry === undefined ? state.valueAt(row, column) : this.valueOf(entry, place);
     if (value === undefined && this.guessSpills(state, sheet, row, column)) value = state.valueAt(row, column);
-    if (value instanceof ErrorValue) this.noteError(place, value.code, entry?.outcome);
+    if (value instanceof ErrorValue && frame?.readErrors.has(value.code) === false) frame.readErrors.set(value.code, this.whyReadError(place, value.code, entry?.outcome));
     return value ?? null;
   }
 
@@ -153,9 +155,9 @@ export class Calculation {
   private whyError(values: readonly (readonly CellValue[])[], place: Place, plain: string): { reason?: string; source?: string } {
     const error = values.flat().find((value) => value instanceof ErrorValue);
     if (!(error instanceof ErrorValue)) return {};
-    const own = this.reasons.at(String(place.sheet), place.row, place.column);
+    const own = OURS.has(error.code) ? this.reasons.at(String(place.sheet), place.row, place.column) : [];
     if (own.length > 0) return { reason: own.join(" ") };
-    const read = this.frames.top?.readError ?? this.errorAmong(plain, error.code);
+    const read = this.frames.top?.readErrors.get(error.code) ?? this.errorAmong(plain, error.code);
     return read ?? { reason: errorInWords(error.code) };
   }
 
@@ -178,6 +180,8 @@ export class Calculation {
     const state = this.sheets[place.sheet];
     if (placement === undefined || placement.kind === "single" || state === undefined) return outcome;
     state.unspilled = state.unspilled.filter((other) => other !== entry);
+    // what the engine has read of these cells no longer holds
+    this.engine.forgetRanges();
     if (placement.kind === "fixed") {
       const values = filledInto(placement.area, outcome.values);
       state.addSpill({ area: placement.area, values });
@@ -186,7 +190,7 @@ export class Calculation {
     const area = { top: place.row, left: place.column, bottom: place.row + outcome.values.length - 1, right: place.column + (outcome.values[0]?.length ?? 1) - 1 };
     if (area.top === area.bottom && area.left === area.right) return outcome;
     const obstacle = state.obstacle(area);
-    if (obstacle !== undefined) return { ...outcome, values: [[new ErrorValue("#SPILL!")]], reason: `The formula gives a table of ${outcome.values.length} rows and ${outcome.values[0]?.length ?? 1} columns, and ${obstacle}.`, isKept: false };
+    if (obstacle !== undefined) return { ...outcome, values: [[new ErrorValue("#SPILL!")]], reason: `The formula gives a table over ${areaAddress(area)}, and ${obstacle}.`, isKept: false };
     state.addSpill({ area, values: outcome.values });
     return outcome;
   }
@@ -215,13 +219,9 @@ export class Calculation {
     }
     const way = [place, ...round.filter((frame) => frame.entry !== entry).map((frame) => frame.place), place].map((step) => this.named(step));
     const shown = way.length <= 8 ? way : [...way.slice(0, 4), "...", ...way.slice(-3)];
-    for (const frame of round) frame.readError ??= { source: this.named(place), reason: `the cells refer to each other in a circle: ${shown.join(", ")}.` };
+    const read = { source: this.named(place), reason: `the cells refer to each other in a circle: ${shown.join(", ")}.` };
+    for (const { readErrors } of round) if (!readErrors.has(CIRCULAR)) readErrors.set(CIRCULAR, read);
     return new ErrorValue(CIRCULAR);
-  }
-
-  private noteError(place: Place, code: string, outcome: Outcome | undefined): void {
-    const frame = this.frames.top;
-    if (frame !== undefined) frame.readError ??= this.whyReadError(place, code, outcome);
   }
 
   private whyReadError(place: Place, code: string, outcome: Outcome | undefined): { source: string; reason: string } {

@@ -1,6 +1,6 @@
 import { CellValueType, LocaleType, LogLevel, ObjectMatrix, Univer, UniverInstanceType, type ICellData, type IObjectArrayPrimitiveType, type IRowData } from "@univerjs/core";
 import {
-  AstTreeBuilder, BaseFunction, IDefinedNamesService, IFormulaCurrentConfigService, IFormulaRuntimeService, IFunctionService, Interpreter, ISheetRowFilteredService, Lexer, LexerNode, NumberValueObject,
+  AstTreeBuilder, BaseFunction, CELL_INVERTED_INDEX_CACHE, FORMULA_REF_TO_ARRAY_CACHE, IDefinedNamesService, IFormulaCurrentConfigService, IFormulaRuntimeService, IFunctionService, Interpreter, ISheetRowFilteredService, Lexer, LexerNode, NumberValueObject,
   UniverFormulaEnginePlugin, type ArrayValueObject, type BaseReferenceObject, type BaseValueObject, type FunctionVariantType, type ISheetData,
 } from "@univerjs/engine-formula";
 import { COLUMNS, ROWS } from "./addresses.js";
@@ -67,6 +67,12 @@ export class FormulaEngine {
     this.runtime.setCurrent(place.row, place.column, ROWS, COLUMNS, String(place.sheet), this.unit);
     const result = this.interpreter.execute({ node: tree, refOffsetX: 0, refOffsetY: 0 });
     return result.isReferenceObject() ? fromReference(result as BaseReferenceObject) : fromValue(result as BaseValueObject);
+  }
+
+  /** Lets go of ranges that were read, so that cells which have been filled since are read anew. */
+  forgetRanges(): void {
+    FORMULA_REF_TO_ARRAY_CACHE.clear();
+    CELL_INVERTED_INDEX_CACHE.clear();
   }
 
   dispose(): void {

@@ -8,8 +8,8 @@ export interface Frame {
   readonly entry: FormulaCell | undefined;
   /** calculated only because its table might fill a blank cell that was read */
   readonly isGuess: boolean;
-  /** the first error value that it read */
-  readError: { readonly source: string; readonly reason: string } | undefined;
+  /** of each error value the first that it read: where it began, and why */
+  readonly readErrors: Map<string, { readonly source: string; readonly reason: string }>;
   /** it reads its own value in a workbook that iterates */
   iterates: boolean;
   readonly wrongGuesses: FormulaCell[];
@@ -39,7 +39,7 @@ export class Frames {
 
   /** Does the work with one formula more open. */
   within<T>(place: Place, entry: FormulaCell | undefined, isGuess: boolean, work: () => T): T {
-    this.open.push({ place, entry, isGuess, readError: undefined, iterates: false, wrongGuesses: [], cellsRead: 0 });
+    this.open.push({ place, entry, isGuess, readErrors: new Map(), iterates: false, wrongGuesses: [], cellsRead: 0 });
     try {
       return work();
     } finally {

@@ -125,7 +125,7 @@ describe("tables that spill", () => {
     const calculation = calculationOf(bookOf({ Main: { A1: "=>SEQUENCE(3)", A3: "taken", B1: "=A1" } }));
     const { values, reason } = outcomeAt(calculation, "A1");
     expect(plain(values)).toEqual([["#SPILL!"]]);
-    expect(reason).toBe("The formula gives a table of 3 rows and 1 columns, and A3 is not empty.");
+    expect(reason).toBe("The formula gives a table over A1:A3, and A3 is not empty.");
     expect(plain(outcomeAt(calculation, "B1").values)).toEqual([["#SPILL!"]]);
   });
 
@@ -148,6 +148,12 @@ describe("errors and their reasons", () => {
     const calculation = calculationOf(bookOf({ Main: { A1: 1, A2: "=A1/0", B1: "=SUM(A1:A2)", B2: "=SUM(A1:A2)", C1: "=B1+B2", D1: "=SUM(Main!$E$1:E2)", E1: new ErrorValue("#N/A") } }));
     for (const address of ["B1", "B2", "C1"]) expect(outcomeAt(calculation, address).source).toBe("Main!A2");
     expect(outcomeAt(calculation, "D1")).toMatchObject({ source: "Main!E1", reason: "the cell holds the error value #N/A." });
+  });
+
+  it("does not blame an error that the formula has caught", () => {
+    const calculation = calculationOf(bookOf({ Main: { A1: new ErrorValue("#N/A"), B1: "=IFERROR(A1,0)/0", B2: "=IFERROR(1/0,A1)" } }));
+    expect(outcomeAt(calculation, "B1")).toEqual({ values: [[new ErrorValue("#DIV/0!")]], reason: "A number is divided by zero or by a blank cell.", isKept: false, isChanging: false });
+    expect(outcomeAt(calculation, "B2").source).toBe("Main!A1");
   });
 
   it("keeps the stored value of what it cannot calculate, with the reason", () => {
