@@ -105,14 +105,14 @@ function sampledLengths(problem: Problem, count: number): (percentiles: readonly
     return (percentiles, quantity) =>
       percentiles.map((p) => {
         // Soft readings make long piles: the percentile of length is the opposite one of the design value.
-        const { byLoad } = designedClasses(problem, plan, law.mean - (law.size === 0 ? 0 : normalQuantile(p / 100) * law.root[0]));
+        const { byLoad } = designedClasses(problem, plan, law.mean - (law.size === 0 ? 0 : normalQuantile(p / 100) * law.root[0]), "built");
         return quantity(Float64Array.from(plan.loadOf, (c) => byLoad[c]));
       });
   }
   const nodes = outerNodes(law, problem.seed);
   const designs = Array.from(nodes.weights, (_, node) => {
     const normals = nodes.normals.subarray(node * law.size, (node + 1) * law.size);
-    return designLengths(problem, plan, lnDesignValues(law, normals), law.ofPile).lengths;
+    return designLengths(problem, plan, lnDesignValues(law, normals), law.ofPile, "built").lengths;
   });
   return (percentiles, quantity) => {
     const values = designs.map(quantity);

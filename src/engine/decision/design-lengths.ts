@@ -1,4 +1,4 @@
-import { kilonewtons, kilopascals } from "../../units/quantities.js";
+import { kilonewtons, kilopascals, metres } from "../../units/quantities.js";
 import { designLength } from "../piles/design-length.js";
 import type { Plan } from "./plan.js";
 import type { Problem } from "./problem.js";
@@ -11,8 +11,14 @@ export interface DesignedClasses {
   readonly allowable: boolean;
 }
 
+/**
+ * How a length step is met: rounded up, as it is built; or by its mean, half a step, as expectations over a few design values need it
+ * (each of them would otherwise stand for a whole stretch of lengths with the rounding of one, and costs would jump from count to count).
+ */
+export type Rounding = "built" | "mean";
+
 /** Design lengths of the plan's loads at one design value (its logarithm, kPa). */
-export function designedClasses(problem: Problem, plan: Plan, lnDesignValue: number): DesignedClasses {
+export function designedClasses(problem: Problem, plan: Plan, lnDesignValue: number, rounding: Rounding): DesignedClasses {
   const { piles, building, ground } = problem;
   const byLoad = new Float64Array(plan.loads.length);
   let allowable = true;
@@ -31,9 +37,9 @@ export function designedClasses(problem: Problem, plan: Plan, lnDesignValue: num
       poisson: ground.poissonRatio,
       shortest: piles.shortest,
       longest: piles.longest,
-      step: piles.lengthStep,
+      step: metres(rounding === "built" ? piles.lengthStep : 0),
     });
-    byLoad[c] = found.length;
+    byLoad[c] = rounding === "built" || found.length <= piles.shortest ? found.length : Math.min(found.length + piles.lengthStep / 2, piles.longest);
     allowable &&= found.allowable;
   }
   return { byLoad, allowable };
@@ -44,11 +50,12 @@ export function designedClasses(problem: Problem, plan: Plan, lnDesignValue: num
  *
  * @param lnDesignValues  logarithms of the design values, kPa
  * @param ofPile          which of them each pile follows
+ * @param rounding        how the length step is met
  */
 export function designLengths(
-  problem: Problem, plan: Plan, lnDesignValues: Float64Array, ofPile: Int32Array,
+  problem: Problem, plan: Plan, lnDesignValues: Float64Array, ofPile: Int32Array, rounding: Rounding,
 ): { lengths: Float64Array; metres: number; allowable: boolean } {
-  const designed = Array.from(lnDesignValues, (value) => designedClasses(problem, plan, value));
+  const designed = Array.from(lnDesignValues, (value) => designedClasses(problem, plan, value, rounding));
   const lengths = Float64Array.from(plan.loadOf, (c, i) => designed[ofPile[i]].byLoad[c]);
   return { lengths, metres: lengths.reduce((sum, l) => sum + l, 0), allowable: designed.every((d) => d.allowable) };
 }

@@ -62,7 +62,7 @@ export function expectedOutcome(
   for (let node = 0; node < nodes.weights.length; node++) {
     const weight = nodes.weights[node];
     const normals = nodes.normals.subarray(node * law.size, (node + 1) * law.size);
-    const { lengths, metres, allowable } = designLengths(problem, plan, lnDesignValues(law, normals), law.ofPile);
+    const { lengths, metres, allowable } = designLengths(problem, plan, lnDesignValues(law, normals), law.ofPile, "mean");
     const bend = law.bend === 0 ? 0 : (law.bend * normals[0]) / law.root[0];
     const moments = nodeMoments(model, holes, normals, lengths, bend);
     const foundation = foundationCost(prices, n, metres);

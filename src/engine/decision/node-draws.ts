@@ -45,15 +45,12 @@ export function distortionDraws(plan: Plan, block: number): DistortionDraws {
     draw(moments, values, found) {
       const { means, factor, residual } = moments;
       foundCount.fill(0);
+      xi.fill(0);
+      for (let i = 0; i < n; i++) addRows(xi, i * block, factor, i * n, i + 1, values, block);
       for (let i = 0; i < n; i++) {
-        const out = xi.fill(0, i * block, (i + 1) * block).subarray(i * block, (i + 1) * block);
-        for (let k = 0; k <= i; k++) addScaled(out, factor[i * n + k], values, k * block);
-      }
-      for (let i = 0; i < n; i++) {
-        lnStiffness.fill(means[i]);
-        addScaled(lnStiffness, 1, xi, i * block);
-        addScaled(lnStiffness, residual[i], values, (n + i) * block);
-        addQuadratic(lnStiffness, row, moments.quadratic, i, plan.nearby[i], xi);
+        const constant = means[i] + moments.quadratic[i * quadraticWidth];
+        for (let m = 0, a = i * block, z = (n + i) * block; m < block; m++, a++, z++) lnStiffness[m] = constant + xi[a] + residual[i] * values[z];
+        addQuadratic(lnStiffness, row, moments, i, plan.nearby[i], xi);
         const { load } = plan.piles[i];
         const at = i * block;
         for (let m = 0; m < block; m++) settlement[at + m] = load * Math.exp(-lnStiffness[m]);
@@ -79,22 +76,43 @@ export function distortionDraws(plan: Plan, block: number): DistortionDraws {
   };
 }
 
-function addScaled(out: Float64Array, scale: number, values: Float64Array, from: number): void {
-  for (let m = 0; m < out.length; m++) out[m] += scale * values[from + m];
+/** Adds to a row of draws the rows of a table times as many factors, four at a time: each pass over the draws costs more than its sums. */
+function addRows(out: Float64Array, to: number, factors: Float64Array, first: number, count: number, table: Float64Array, block: number): void {
+  let k = 0;
+  for (; k + 3 < count; k += 4) {
+    const f0 = factors[first + k], f1 = factors[first + k + 1], f2 = factors[first + k + 2], f3 = factors[first + k + 3];
+    const z0 = k * block, z1 = z0 + block, z2 = z1 + block, z3 = z2 + block;
+    for (let m = 0; m < block; m++) out[to + m] += f0 * table[z0 + m] + f1 * table[z1 + m] + f2 * table[z2 + m] + f3 * table[z3 + m];
+  }
+  for (; k < count; k++) {
+    const f = factors[first + k];
+    for (let m = 0, z = k * block; m < block; m++) out[to + m] += f * table[z + m];
+  }
 }
 
-/** Adds the quadratic of a pile's and its neighbours' deviations. */
-function addQuadratic(out: Float64Array, row: Float64Array, quadratic: Float64Array, pile: number, near: readonly number[], xi: Float64Array): void {
+/** A term of the quadratic whose typical size is below this changes a settlement by less than 0.01 %. */
+const negligible = 1e-4;
+
+/** Adds the linear and quadratic terms of a pile's and its neighbours' deviations. */
+function addQuadratic(out: Float64Array, row: Float64Array, moments: NodeMoments, pile: number, near: readonly number[], xi: Float64Array): void {
+  const { quadratic, covariance, means } = moments;
+  const n = means.length;
   const block = out.length;
   const at = pile * quadraticWidth;
   let next = at + 6;
-  const constant = quadratic[at];
-  for (let m = 0; m < block; m++) out[m] += constant;
   for (let a = 0; a < near.length; a++) {
-    row.fill(quadratic[at + 1 + a]);
-    for (let e = 0; e <= a; e++) addScaled(row, quadratic[next++], xi, near[e] * block);
-    const from = near[a] * block;
-    for (let m = 0; m < block; m++) out[m] += row[m] * xi[from + m];
+    const variance = covariance[near[a] * n + near[a]];
+    const linear = quadratic[at + 1 + a];
+    let used = Math.abs(linear) * Math.sqrt(variance) > negligible;
+    row.fill(linear);
+    for (let e = 0; e <= a; e++) {
+      const factor = quadratic[next++];
+      if (Math.abs(factor) * Math.sqrt(variance * covariance[near[e] * n + near[e]]) <= negligible) continue;
+      used = true;
+      for (let m = 0, x = near[e] * block; m < block; m++, x++) row[m] += factor * xi[x];
+    }
+    if (!used) continue;
+    for (let m = 0, x = near[a] * block; m < block; m++, x++) out[m] += row[m] * xi[x];
   }
 }
 

@@ -119,6 +119,7 @@ export function preparedSite(problem: Problem): PreparedSite {
 }
 
 const plans = new Remembered<Plan>(40);
+const automatic = new Remembered<readonly Point[]>(400);
 
 /** Positions of a count's holes: the first rows of the list, or automatic. */
 export function positions(problem: Problem, count: number): readonly Point[] {
@@ -130,7 +131,7 @@ export function positions(problem: Problem, count: number): readonly Point[] {
   const { footprint, piles } = problem.building;
   const middle = (values: number[]): number => (Math.min(...values) + Math.max(...values)) / 2;
   const centre = { x: metres(middle(piles.map((p) => p.x))), y: metres(middle(piles.map((p) => p.y))) };
-  return automaticHoles({ centre, length: footprint.length, width: footprint.width }, count);
+  return automatic.get(JSON.stringify([centre, footprint, count]), () => automaticHoles({ centre, length: footprint.length, width: footprint.width }, count));
 }
 
 /** Greatest distance between any pile or hole, m; the same for all counts, so that tables are shared. */
