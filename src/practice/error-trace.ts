@@ -34,7 +34,7 @@ export function errorSource(grid: FUniver, reasons: CellReasons, sheet: FWorkshe
   let at = { sheet, row, column };
   const seen = new Set<string>();
   for (let depth = 0; depth < DEEPEST; depth++) {
-    const sentences = reasons.at(at.sheet.getSheetId(), at.row, at.column);
+    const sentences = ownSentences(reasons, at);
     const key = `${at.sheet.getSheetId()}:${at.row}:${at.column}`;
     const before = sentences.length > 0 || seen.has(key) ? undefined : failedPrecedent(grid, book, at);
     if (before === undefined) {
@@ -60,6 +60,13 @@ interface Place {
   readonly sheet: FWorksheet;
   readonly row: number;
   readonly column: number;
+}
+
+/** Sentences outlive the formula that they were said of: they count only where one of our functions stands and gave the error. */
+function ownSentences(reasons: CellReasons, { sheet, row, column }: Place): readonly string[] {
+  const cell = sheet.getRange(row, column);
+  const ours = /\bPROBE\.\w/i.test(cell.getFormula()) && /^#(VALUE!|N\/A)$/.test(String(cell.getValue() ?? ""));
+  return ours ? reasons.at(sheet.getSheetId(), row, column) : [];
 }
 
 function failedPrecedent(grid: FUniver, book: FWorkbook, at: Place): Place | undefined {

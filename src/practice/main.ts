@@ -10,6 +10,7 @@ import { workbookData } from "./grid-data.js";
 import { functionDescriptions } from "./grid-functions.js";
 import { paneDock } from "./pane-dock.js";
 import { PracticeWorkbook } from "./practice-workbook.js";
+import { closeStaleSuggestions } from "./stale-suggestions.js";
 import { themeSwitch } from "./theme-switch.js";
 
 function element<T extends HTMLElement>(id: string): T {
@@ -20,6 +21,7 @@ function element<T extends HTMLElement>(id: string): T {
 
 async function start(): Promise<void> {
   const metadata = (await (await fetch("functions.json")).json()) as { functions: FunctionMetadata[] };
+  closeStaleSuggestions();
   const reasons = new CellReasons();
   const theme = themeSwitch(element("theme-toggle"), (chosen) => grid.toggleDarkMode(chosen === "dark"));
   const grid = startGrid({

@@ -7,6 +7,8 @@ import { buildPractice } from "../../../src/build/practice-page.js";
 import { servePractice, type PracticeServer } from "../../../src/build/practice-server.js";
 import { launchBrowser } from "./browser.js";
 
+// a machine that is busy with other tests is slow, but a page that has not answered by then never will
+const WAIT = 45_000;
 const SCREENSHOTS = fileURLToPath(new URL("../out/", import.meta.url));
 
 /** The built page on a server of its own, with a browser to open it in. */
@@ -56,6 +58,7 @@ export class PracticePage {
       colorScheme: options.dark === true ? "dark" : "light",
     });
     const page = await context.newPage();
+    page.setDefaultTimeout(WAIT);
     const log: PageLog = { complaints: [], requests: [] };
     page.on("console", (message) => {
       if (message.type() === "error" || message.type() === "warning") log.complaints.push(`${message.type()}: ${message.text()}`);
@@ -103,7 +106,7 @@ export class PracticePage {
   async calculated(action: () => Promise<void>): Promise<void> {
     await this.page.evaluate(() => (document.body.dataset["state"] = "waiting"));
     await action();
-    await this.page.locator("body[data-state=ready]").waitFor({ timeout: 60_000 });
+    await this.page.locator("body[data-state=ready]").waitFor({ timeout: WAIT });
   }
 
   /** Selects a cell and reads the line under the grid. */
@@ -131,6 +134,23 @@ export class PracticePage {
     const lines: string[] = [];
     for (let row = first; row <= last; row++) lines.push((await this.read(`${column}${row}`)).value);
     return lines.join("\n");
+  }
+
+  /** Mean brightness, 0 to 255, of a blank part of the sheet: the grid is a picture and tells its look in no other way. */
+  async brightnessOfGrid(): Promise<number> {
+    const box = await this.page.locator("#grid canvas").last().boundingBox();
+    if (box === null) throw new Error("The grid draws nothing.");
+    const png = await this.page.screenshot({ clip: { x: box.x + box.width - 120, y: box.y + box.height - 60, width: 20, height: 10 } });
+    return this.page.evaluate(async (bytes) => {
+      const image = await createImageBitmap(new Blob([new Uint8Array(bytes)], { type: "image/png" }));
+      const canvas = new OffscreenCanvas(image.width, image.height);
+      const drawing = canvas.getContext("2d")!;
+      drawing.drawImage(image, 0, 0);
+      const { data } = drawing.getImageData(0, 0, image.width, image.height);
+      let sum = 0;
+      for (let k = 0; k < data.length; k += 4) sum += (data[k]! + data[k + 1]! + data[k + 2]!) / 3;
+      return (4 * sum) / data.length;
+    }, [...png]);
   }
 
   /** Keeps a picture for the eye; pictures are never compared. */
