@@ -113,8 +113,7 @@ export const LAYOUT = `
 .probeworth .versions dd { font-variant-numeric: tabular-nums; }
 .probeworth .status { flex: none; min-height: 26px; padding: 4px 12px; border-top: 1px solid var(--pane-line); background: var(--pane-surface); color: var(--pane-soft); font-size: 12px; }
 @media (pointer: coarse) {
-  .probeworth .field, .probeworth .group > summary, .probeworth fluent-button { min-height: 44px; }
-  .probeworth fluent-slider { min-height: 44px; }
+  .probeworth .field, .probeworth .group > summary, .probeworth fluent-button, .probeworth fluent-slider, .probeworth fluent-tab { min-height: 44px; }
 }
 @media (forced-colors: active) {
   .probeworth .check-refused, .probeworth .refusal { border: 2px solid CanvasText; }
