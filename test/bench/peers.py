@@ -51,7 +51,49 @@ def draws(means, factor, residual, constant, linear, triangle, near, normals, we
     return work
 
 
-PEERS = {"band_solve": band_solve, "draws": draws}
+def band_solve_many(band, loads, n, half):
+    """As band_solve, for loads n x columns."""
+    return band_solve(band, loads.reshape(n, -1), n, half)
+
+
+def cholesky(matrix, n, times):
+    matrix = matrix.reshape(n, n)
+
+    def work():
+        for _ in range(times):
+            factor = np.linalg.cholesky(matrix)
+        return factor
+
+    return work
+
+
+def product(factor, normals, n):
+    factor, normals = factor.reshape(n, n), normals.reshape(n, -1)
+    return lambda: factor @ normals
+
+
+def eigenvalues(matrix, n):
+    matrix = matrix.reshape(n, n)
+    return lambda: np.linalg.eigh(matrix).eigenvalues
+
+
+def sobol_normals(dimensions, count):
+    from scipy.special import ndtri
+    from scipy.stats import qmc
+
+    # a scrambled coordinate of 30 digits may be 0, whose normal is no number
+    return lambda: np.mean(ndtri(np.maximum(qmc.Sobol(dimensions, scramble=True).random(count), 2.0**-32)), axis=0)
+
+
+PEERS = {
+    "band_solve": band_solve,
+    "band_solve_many": band_solve_many,
+    "cholesky": cholesky,
+    "draws": draws,
+    "eigenvalues": eigenvalues,
+    "product": product,
+    "sobol_normals": sobol_normals,
+}
 
 
 def decoded(value):

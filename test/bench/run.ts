@@ -1,14 +1,17 @@
 import type { BenchCase } from "./bench-case.js";
 import { bandSolve } from "./cases/band-solve.js";
 import { draws } from "./cases/draws.js";
+import { matrices } from "./cases/matrices.js";
 import { costTable, firstCall, newPiles, oneCount, sensitivity } from "./cases/prices.js";
+import { quasiRandom } from "./cases/quasi-random.js";
+import { ringMeans } from "./cases/ring-means.js";
 import { PeerProcess, peersAvailable } from "./peer-process.js";
 
 // Times every case, each alternately with its peer, and prints medians, ratios and their share of the target.
 
 /** A list of cases cannot name the state of each; each is handed its own and no other's. */
 type AnyCase = BenchCase<never, never>;
-const CASES = [oneCount, costTable, firstCall, newPiles, sensitivity, draws, bandSolve] as unknown as readonly AnyCase[];
+const CASES = [oneCount, costTable, firstCall, newPiles, sensitivity, draws, bandSolve, ...matrices, quasiRandom, ringMeans] as unknown as readonly AnyCase[];
 
 interface Spread {
   readonly low: number;

@@ -33,7 +33,7 @@ function setup(): State {
   const { normals, weights, drawsPerNode } = outerNodes(law, problem.seed);
   const moments = Array.from(weights, (_, node) => {
     const here = normals.subarray(node * law.size, (node + 1) * law.size);
-    return nodeMoments(site.model, holes, here, designLengths(problem, plan, lnDesignValues(law, here), law.ofPile).lengths, 0);
+    return nodeMoments(site.model, holes, here, designLengths(problem, plan, lnDesignValues(law, here), law.ofPile, "mean").lengths, 0);
   });
   return { problem, plan, moments, weights, draws: standardDraws(plan.piles.length, false, drawsPerNode, problem.seed), block: drawsPerNode };
 }
