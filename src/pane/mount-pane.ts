@@ -58,6 +58,7 @@ export function mountPane(host: HTMLElement, workbook: Workbook | undefined, opt
   const views = tabs([...(working?.views ?? []), helpTab(workbook, working?.siteName ?? (() => "Site"), options, tell)]);
   const header = element("header", { class: "header" }, element("h1", {}, toolMark(), "Probeworth"), theme.button);
   root.append(hatchPatterns(), element("div", { class: "top" }, header, views.list), element("main", { class: "main" }, ...views.panels), line);
+  if (workbook === undefined) tell("No workbook is connected to this page, so only the help is shown.");
   return {
     unmount: () => {
       theme.stop();

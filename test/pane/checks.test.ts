@@ -17,8 +17,8 @@ describe("the checks", () => {
   });
 
   it("show value and unit together, and neither where there is none", () => {
-    const values = groupChecks([row("Depth", true), row("Depth", true, { value: "", unit: "" }), row("Depth", true, { value: "none", unit: "" })], section, write)[0]!.lines;
-    expect(values.map((line) => line.value)).toEqual(["<1>\u00a0m", "", "none"]);
+    const values = groupChecks([row("Depth", true), row("Depth", true, { value: "", unit: "" }), row("Depth", true, { value: "none" }), row("Depth", true, { value: "1/3" })], section, write)[0]!.lines;
+    expect(values.map((line) => line.value)).toEqual(["<1>\u00a0m", "", "none", "1/3\u00a0m"]);
   });
 
   it("cut texts from cells to what a pane bears", () => {

@@ -42,7 +42,7 @@ export function groupChecks(rows: readonly CheckLike[], sectionOf: (label: strin
   for (const row of rows) {
     const section = sectionOf(row.label) ?? UNPLACED;
     const value = typeof row.value === "number" ? write(row.value) : shorten(row.value, 60);
-    const line = { label: shorten(row.label, 60), value: [value, row.unit].filter((text) => text !== "").join("\u00a0"), verdict: reason(row), ok: row.ok };
+    const line = { label: shorten(row.label, 60), value: [value, unitOf(row)].filter((text) => text !== "").join("\u00a0"), verdict: reason(row), ok: row.ok };
     const lines = groups.get(section);
     if (lines === undefined) groups.set(section, [line]);
     else lines.push(line);
@@ -69,6 +69,11 @@ export function summariseChecks(rows: readonly CheckLike[]): string {
   const named = refused.slice(0, 3).map((row) => shorten(row.label, 40));
   const rest = refused.length - named.length;
   return `${refused.length} of ${rows.length} inputs cannot be used: ${joinWords(rest > 0 ? [...named, `${rest} more`] : named)}.`;
+}
+
+/** A word such as "none" or "automatic" has no unit, whatever stands in the unit column. */
+function unitOf(row: CheckLike): string {
+  return typeof row.value === "string" && !/\d/.test(row.value) ? "" : row.unit;
 }
 
 /** The mark beside the line already says refused or used, so the words need not. */

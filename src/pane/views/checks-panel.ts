@@ -78,6 +78,7 @@ function lineOf(line: CheckLine): HTMLElement {
 
 /** The sentence with its label made to stand out; most sentences begin with it. */
 function sentenceOf(line: CheckLine): (Node | string)[] {
+  if (line.verdict.startsWith('"')) return [line.verdict]; // a label that nobody knows, already quoted
   const label = element("strong", {}, line.label);
   return line.verdict.startsWith(line.label) ? [label, line.verdict.slice(line.label.length)] : [label, `: ${line.verdict}`];
 }
