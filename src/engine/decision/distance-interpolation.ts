@@ -1,5 +1,5 @@
 import { lagrangeWeights } from "../numerics/lagrange.js";
-import { distanceCoordinate } from "./structure-tables.js";
+import { distanceCoordinate } from "./distance-grid.js";
 
 /**
  * A row of a table whose leading index is a distance, at any distance.

@@ -1,7 +1,10 @@
+import { contract, times, timesTransposed } from "../numerics/products.js";
 import { pointRingTable, ringTables } from "../ground/ring-average.js";
 import type { SeparableTerm } from "../ground/separable-terms.js";
 import { kilopascals } from "../../units/quantities.js";
 import { slopeLoss } from "../piles/slope-loss.js";
+import { cellCovariance, cellValues, depthGroups, overBands, pointCellCovariance } from "./cell-tables.js";
+import { distanceCoordinate, distanceGrid } from "./distance-grid.js";
 import { lowRankForm } from "./quadratic-form.js";
 import type { FamilyNode, PileFamily } from "./pile-family.js";
 
@@ -9,7 +12,6 @@ import type { FamilyNode, PileFamily } from "./pile-family.js";
 export const ranks = 4;
 /** Groups of readings in depth that a hole's covariances are kept for. */
 export const readingGroups = 8;
-const distanceNodes = 28;
 
 /**
  * Covariances of the unit field as the piles and holes of one ground structure see it, by horizontal distance:
@@ -64,7 +66,7 @@ export function structureTables(family: PileFamily, node: FamilyNode, ground: St
   const rf = fine.length;
   const sd = cellValues(family.levelBounds, ground.relativeSd);
   const weights = node.weights.map((w) => w.map((value, i) => value * sd[i % cells]));
-  const groups = depthGroups(ground.readingDepths);
+  const groups = depthGroups(ground.readingDepths, readingGroups);
   const tables: StructureTables = {
     coordinates: distances.map(distanceCoordinate),
     pairs: new Float64Array(distances.length * lengths * lengths),
@@ -177,100 +179,4 @@ function curveOf(family: PileFamily, node: FamilyNode, k: number, f: number, gro
   tables.restVariances[f] = Math.max(low.variance - keptVariance, 0);
   tables.uniformForms[f] = form.matrix.reduce((sum, value) => sum + value, 0);
   return { radii: form.radii, bounds: form.levelBounds, sd, functionals: low.functionals };
-}
-
-/** Distances from 0 to the reach, even steps of ln(1 + distance / 0.5 m): close where kernels bend. */
-function distanceGrid(reach: number): Float64Array {
-  const top = Math.log1p(Math.max(reach, 1) / distanceScale);
-  return Float64Array.from({ length: distanceNodes }, (_, i) => distanceScale * Math.expm1((top * i) / (distanceNodes - 1)));
-}
-const distanceScale = 0.5;
-
-/** Place of a distance among the grid's nodes in its even coordinate. */
-export function distanceCoordinate(distance: number): number {
-  return Math.log1p(distance / distanceScale);
-}
-
-/** Readings shared among depth groups, in order. */
-function depthGroups(depths: Float64Array): Float64Array[] {
-  const groups = Math.min(readingGroups, depths.length);
-  return Array.from({ length: groups }, (_, g) => depths.subarray(Math.floor((g * depths.length) / groups), Math.floor(((g + 1) * depths.length) / groups)));
-}
-
-/** A function of depth at the middle of each cell. */
-function cellValues(bounds: Float64Array, value: (depth: number) => number): Float64Array {
-  return Float64Array.from({ length: bounds.length - 1 }, (_, i) => value((bounds[i] + bounds[i + 1]) / 2));
-}
-
-/** Covariance of the depth part between cells of two grids: cells x cells. */
-function cellCovariance(a: Float64Array, b: Float64Array, term: SeparableTerm): Float64Array {
-  const rows = a.length - 1;
-  const columns = b.length - 1;
-  const out = new Float64Array(rows * columns);
-  for (let i = 0; i < rows; i++) {
-    for (let j = 0; j < columns; j++) {
-      out[i * columns + j] = term.verticalCellAverage((b[j] + b[j + 1] - a[i] - a[i + 1]) / 2, a[i + 1] - a[i], b[j + 1] - b[j]);
-    }
-  }
-  return out;
-}
-
-/** Covariance of the depth part between the mean of some point readings, each with its relative standard deviation, and each cell. */
-function pointCellCovariance(depths: Float64Array, bounds: Float64Array, term: SeparableTerm, relativeSd: (depth: number) => number): Float64Array {
-  return Float64Array.from({ length: bounds.length - 1 }, (_, i) => {
-    let sum = 0;
-    for (const z of depths) sum += relativeSd(z) * term.verticalCellAverage((bounds[i] + bounds[i + 1]) / 2 - z, 0, bounds[i + 1] - bounds[i]);
-    return sum / depths.length;
-  });
-}
-
-/** Mean over bands of a quantity known on thinner cells, each cell sharing by overlap: rings x bands. */
-function overBands(values: Float64Array, rings: number, cells: Float64Array, bands: Float64Array): Float64Array {
-  const nc = cells.length - 1;
-  const nb = bands.length - 1;
-  const out = new Float64Array(rings * nb);
-  for (let b = 0; b < nb; b++) {
-    for (let c = 0; c < nc; c++) {
-      const overlap = Math.min(bands[b + 1], cells[c + 1]) - Math.max(bands[b], cells[c]);
-      if (overlap <= 0) continue;
-      const share = overlap / (bands[b + 1] - bands[b]);
-      for (let r = 0; r < rings; r++) out[r * nb + b] += share * values[r * nc + c];
-    }
-  }
-  return out;
-}
-
-/** A (n x m) times B (m x p). */
-function times(a: Float64Array, b: Float64Array, n: number, m: number, p: number): Float64Array {
-  const out = new Float64Array(n * p);
-  for (let i = 0; i < n; i++) {
-    for (let k = 0; k < m; k++) {
-      const factor = a[i * m + k];
-      if (factor === 0) continue;
-      for (let j = 0; j < p; j++) out[i * p + j] += factor * b[k * p + j];
-    }
-  }
-  return out;
-}
-
-/** A (n x m) times the transpose of B (p x m). */
-function timesTransposed(a: Float64Array, b: Float64Array, n: number, p: number, m: number): Float64Array {
-  const out = new Float64Array(n * p);
-  for (let i = 0; i < n; i++) {
-    for (let j = 0; j < p; j++) {
-      let sum = 0;
-      for (let k = 0; k < m; k++) sum += a[i * m + k] * b[j * m + k];
-      out[i * p + j] = sum;
-    }
-  }
-  return out;
-}
-
-/** Sum of the elementwise product of a block of a table and a matrix. */
-function contract(table: Float64Array, offset: number, stride: number, matrix: Float64Array, rows: number, columns: number): number {
-  let sum = 0;
-  for (let i = 0; i < rows; i++) {
-    for (let j = 0; j < columns; j++) sum += table[offset + i * stride + j] * matrix[i * columns + j];
-  }
-  return sum;
 }
