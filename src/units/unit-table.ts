@@ -7,7 +7,7 @@ export type UnitKind = "length" | "pressure" | "force" | "pressurePerLength" | "
 
 /**
  * One unit: value x multiply / divide is the value in the inner unit of its kind (m, kPa, kN, kPa/m, ratio, days, kg/m3).
- * Two numbers, because x / 1000 is rounded once and x * 0.001 twice: 35 mm must be the very number 0.035.
+ * Two numbers, because x / 1000 is rounded once and x * 0.001 twice: 9 mm must be the very number 0.009.
  */
 export interface Unit {
   readonly kind: UnitKind;

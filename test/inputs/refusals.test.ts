@@ -55,6 +55,7 @@ const NUMBERS: readonly Refusal[] = [
   ["blank COV", put(SMALL, "Stiffness COV", ""), "Stiffness COV (row 3 of the site block) is blank or zero; write a number, or the word none for a deliberate zero."],
   ["none where zero is impossible", put(SMALL, "Pile diameter", "none"), "Pile diameter (row 16 of the site block) is the word none, but it cannot be zero; a number in m is needed."],
   ["text", put(SMALL, "Mean stiffness", "soft"), 'Mean stiffness (row 2 of the site block) is the text "soft"; a number in MPa is needed.'],
+  ["text on two lines", put(SMALL, "Mean stiffness", "soft\r\n\t clay\u0000"), 'Mean stiffness (row 2 of the site block) is the text "soft clay"; a number in MPa is needed.'],
   ["text in a price", put(SMALL, "Price per hole", "ask Jo"), 'Price per hole (row 22 of the site block) is the text "ask Jo"; a number is needed.'],
   ["number with its unit", put(SMALL, "Mean stiffness", "8 MPa"), 'Mean stiffness (row 2 of the site block) is the text "8 MPa"; write the number alone, and its unit in the unit column.'],
   ["truth value", put(SMALL, "Mean stiffness", true), "Mean stiffness (row 2 of the site block) is TRUE; a number in MPa is needed."],

@@ -65,10 +65,10 @@ describe.each(DERIVED)("%s in %s", (kind, unit, value) => {
 });
 
 describe("powers of ten", () => {
-  // Source: definition of the prefixes. Exactly equal, so that 35 mm and 0.035 m are one and the same site.
+  // Source: definition of the prefixes. Exactly equal, so that 9 mm and 0.009 m are one and the same site; 9 x 0.001 would be 0.009000000000000001.
   it.each<[UnitKind, string, number, number]>([
-    ["length", "mm", 35, 0.035], ["length", "cm", 60, 0.6], ["pressure", "Pa", 7, 0.007], ["pressure", "MPa", 12.3, 12300],
-    ["pressure", "GPa", 30, 30e6], ["force", "N", 900, 0.9], ["force", "MN", 1.5, 1500], ["ratio", "%", 60, 0.6],
+    ["length", "mm", 9, 0.009], ["length", "mm", 35, 0.035], ["length", "cm", 35, 0.35], ["pressure", "Pa", 9, 0.009], ["pressure", "MPa", 12.3, 12300],
+    ["pressure", "GPa", 30, 30e6], ["force", "N", 9, 0.009], ["force", "MN", 1.5, 1500], ["ratio", "%", 35, 0.35],
     ["pressurePerLength", "MPa/m", 0.7, 700], ["pressurePerLength", "kPa/m", 500, 500], ["massPerVolume", "t/m3", 0.25, 250],
   ])("%s in %s: %s is %s", (kind, unit, written, inner) => {
     expect(toInner(written, readUnit(unit, kind)!)).toBe(inner);
