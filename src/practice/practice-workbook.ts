@@ -68,7 +68,7 @@ export class PracticeWorkbook implements Workbook {
 }
 
 /** Reads a range of a sheet, cut to the used part of the sheet. */
-export function read(sheet: FWorksheet, range: IRange): RangeText {
+function read(sheet: FWorksheet, range: IRange): RangeText {
   const startRow = range.startRow || 0;
   const startColumn = range.startColumn || 0;
   const endRow = Math.max(startRow, Math.min(Number.isNaN(range.endRow) ? Infinity : range.endRow, sheet.getLastRow()));
