@@ -59,3 +59,23 @@ export function designLengths(
   const lengths = Float64Array.from(plan.loadOf, (c, i) => designed[ofPile[i]].byLoad[c]);
   return { lengths, metres: lengths.reduce((sum, l) => sum + l, 0), allowable: designed.every((d) => d.allowable) };
 }
+
+/**
+ * Log design value below which even the longest pile under the heaviest load is predicted to settle too much.
+ *
+ * @param around  a log design value to start from, kPa
+ * @returns       within 1e-6; -Infinity or Infinity where no ground within a factor of e^12 either way is such a limit
+ */
+export function softestAllowable(problem: Problem, plan: Plan, around: number): number {
+  const enough = (value: number): boolean => designedClasses(problem, plan, value, "built").allowable;
+  let low = around - 12;
+  let high = around + 12;
+  if (enough(low)) return -Infinity;
+  if (!enough(high)) return Infinity;
+  while (high - low > 1e-6) {
+    const middle = (low + high) / 2;
+    if (enough(middle)) high = middle;
+    else low = middle;
+  }
+  return high;
+}

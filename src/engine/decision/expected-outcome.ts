@@ -1,12 +1,14 @@
 import { damageShare } from "../costs/damage.js";
 import { foundationCost } from "../costs/prices.js";
+import { normalDistribution } from "../numerics/normal.js";
 import { gaussLegendre } from "../numerics/gauss-legendre.js";
 import { lnDesignValues, outerNodes, type DesignLaw } from "./design-law.js";
 import type { HoleCovariance } from "./hole-covariance.js";
 import { nodeMoments } from "./node-moments.js";
 import { chanceTooSoft, expectedLnStiffness, lengthLaws, trialLength, type LengthLaws, type TrialLength } from "./needed-length.js";
 import { damageThreshold, distortionDraws, type FoundSurprises } from "./node-draws.js";
-import { designLengths } from "./design-lengths.js";
+import { designLengths, softestAllowable } from "./design-lengths.js";
+import type { Plan } from "./plan.js";
 import type { Problem } from "./problem.js";
 import { standardDraws } from "./standard-draws.js";
 import type { SiteModel } from "./site-model.js";
@@ -92,8 +94,15 @@ export function expectedOutcome(
   const scatter = replicate.reduce((total, value) => total + (value - mean) ** 2, 0) / (replicates * (replicates - 1));
   return {
     foundation: sum.foundation, failure: sum.failure, delay: sum.delay, failureChance: Math.min(sum.failureChance, 1), surprises: sum.surprises,
-    tooShortChance: Math.min(sum.tooShort, 1), totalMetres: sum.metres, samplingError: Math.sqrt(scatter), costs, weights,
+    tooShortChance: tooShort(problem, plan, law, Math.min(sum.tooShort, 1)), totalMetres: sum.metres, samplingError: Math.sqrt(scatter), costs, weights,
   };
+}
+
+/** Chance that the longest length is not enough: in closed form for one design value, where few nodes would give it in steps. */
+function tooShort(problem: Problem, plan: Plan, law: DesignLaw, sampled: number): number {
+  if (law.size !== 1) return sampled;
+  const limit = softestAllowable(problem, plan, law.mean);
+  return Number.isFinite(limit) ? normalDistribution((limit - law.mean) / law.root[0]) : limit > 0 ? 1 : 0;
 }
 
 /** Expected number of surprises, and the metres by which they would be lengthened, at one set of design lengths. */

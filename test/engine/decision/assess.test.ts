@@ -111,6 +111,14 @@ describe("certain ground", () => {
 });
 
 describe("lengths and contingency", () => {
+  // Identity: the longest pile is not enough exactly where the design length has no percentile below the longest.
+  it("the chance that the longest length is not enough is where the lengths reach it", () => {
+    const { tooShortChance } = assess(ninePiles(), 1);
+    expect(tooShortChance).toBeGreaterThan(0.02);
+    expect(pileLengthPercentile(ninePiles(), 1, 100 * (1 - tooShortChance) - 0.05, 5)).toBeLessThan(25);
+    expect(pileLengthPercentile(ninePiles(), 1, 100 * (1 - tooShortChance) + 0.05, 5)).toBe(25);
+  });
+
   // Identity: the mean length times the number of piles is the metres, at every percentile.
   it.each(["load", "one", "nearest"] as const)("mean length times piles is the total metres (%s)", (lengthRule) => {
     const table = pileLengthTable(ninePiles({ lengthRule }), 4, [5, 50, 95]);
