@@ -56,6 +56,9 @@ it("gives nothing from outside its folder, however the way is written", async ()
 
 it("ends while a browser still holds a connection open", async () => {
   const server = await servePractice(folder, 0);
+  const half = connect(Number(new URL(server.address).port), "127.0.0.1");
+  half.on("error", () => undefined);
+  await new Promise((resolve) => half.write("GET / HTTP/1.1\r\nHost: 127", resolve));
   await fetch(server.address);
   await server.close();
   await expect(fetch(server.address)).rejects.toThrow();

@@ -9,7 +9,8 @@ it("keeps the sentences of all functions of a cell, each once, and of no other c
   reasons.add("a", 1, 2, "Second.");
   reasons.add("a", 1, 2, "First.");
   expect(reasons.at("a", 1, 2)).toEqual(["First.", "Second."]);
-  for (const [sheet, row, column] of [["b", 1, 2], ["a", 2, 1], ["a", 12, 0]] as const) expect(reasons.at(sheet, row, column)).toEqual([]);
+  reasons.add("a", 12, 3, "Row 13.");
+  for (const [sheet, row, column] of [["b", 1, 2], ["a", 2, 1], ["a", 1, 23]] as const) expect(reasons.at(sheet, row, column)).toEqual([]);
 });
 
 it("drops a cell's sentences when the next run calculates it, and keeps those of a cell that the run leaves alone", () => {

@@ -30,6 +30,7 @@ it("offers every function under its dotted name", () => {
 it("gives a number from numbers, bare or as single cells", () => {
   for (const argument of [number(3), range([[3]])]) {
     const { result, reasons } = called("VARIANCEFACTOR", argument, number(3));
+    expect(result.isNumber()).toBe(true);
     expect(result.getValue()).toBeCloseTo((1 + Math.exp(-2)) / 2, 12);
     expect(reasons).toEqual([]);
   }
