@@ -77,6 +77,25 @@ def eigenvalues(matrix, n):
     return lambda: np.linalg.eigh(matrix).eigenvalues
 
 
+def pile_form(band, n, half, load, forces, shares):
+    """Second-order form of a pile: one band factor, the head load and the forces of the form's cells solved, M by the definition."""
+    from scipy.linalg import cho_solve_banded, cholesky_banded
+
+    rows = band.reshape(n, half + 1)
+    lower = np.zeros((half + 1, n))
+    for k in range(half + 1):
+        lower[k, : n - k] = rows[k:, half - k]
+    forces = forces.reshape(n, -1)
+
+    def work():
+        factor = (cholesky_banded(lower, lower=True, check_finite=False), True)
+        compliance = load @ cho_solve_banded(factor, load, check_finite=False)
+        product = forces.T @ cho_solve_banded(factor, forces, check_finite=False)
+        return (np.diag(shares) + np.outer(shares, shares)) / 2 - product / compliance
+
+    return work
+
+
 def sobol_normals(dimensions, count):
     from scipy.special import ndtri
     from scipy.stats import qmc
@@ -91,6 +110,7 @@ PEERS = {
     "cholesky": cholesky,
     "draws": draws,
     "eigenvalues": eigenvalues,
+    "pile_form": pile_form,
     "product": product,
     "sobol_normals": sobol_normals,
 }

@@ -2,6 +2,7 @@ import type { BenchCase } from "./bench-case.js";
 import { bandSolve } from "./cases/band-solve.js";
 import { draws } from "./cases/draws.js";
 import { matrices } from "./cases/matrices.js";
+import { pileFamilyCase, pileForm, pileSolve } from "./cases/pile-response.js";
 import { costTable, firstCall, newPiles, oneCount, sensitivity } from "./cases/prices.js";
 import { quasiRandom } from "./cases/quasi-random.js";
 import { ringMeans } from "./cases/ring-means.js";
@@ -11,7 +12,7 @@ import { PeerProcess, peersAvailable } from "./peer-process.js";
 
 /** A list of cases cannot name the state of each; each is handed its own and no other's. */
 type AnyCase = BenchCase<never, never>;
-const CASES = [oneCount, costTable, firstCall, newPiles, sensitivity, draws, bandSolve, ...matrices, quasiRandom, ringMeans] as unknown as readonly AnyCase[];
+const CASES = [oneCount, costTable, firstCall, newPiles, sensitivity, draws, bandSolve, pileSolve, pileForm, pileFamilyCase, ...matrices, quasiRandom, ringMeans] as unknown as readonly AnyCase[];
 
 interface Spread {
   readonly low: number;
