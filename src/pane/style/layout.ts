@@ -124,5 +124,6 @@ export const LAYOUT = `
 }
 @media (prefers-reduced-motion: reduce) {
   .probeworth *, .probeworth *::before, .probeworth *::after { transition: none !important; animation: none !important; }
+  .probeworth fluent-slider::part(thumb-container), .probeworth fluent-slider::part(track-container)::before { transition: none !important; }
 }
 `;
