@@ -14,6 +14,13 @@ module.exports = {
   forbidden: [
     ...upward,
     {
+      name: "decision-without-simulation",
+      comment: "Simulation builds on the decision's parts; cells must not wait for it.",
+      severity: "error",
+      from: { path: "^src/engine/decision/" },
+      to: { path: "^src/engine/simulation/" },
+    },
+    {
       name: "no-circle",
       comment: "Two files that need each other are one file, or a third is missing.",
       severity: "error",

@@ -5,6 +5,8 @@ import { rows } from "./rows.cjs";
 
 const PLANTED = {
   "src/engine/numerics/planted-upward.ts": 'import type { Problem } from "../decision/problem.js";\nexport const upward = (problem: Problem): string => problem.seed;\n',
+  "src/engine/decision/planted-simulation.ts": 'import { simulated } from "../simulation/planted-simulated.js";\nexport const decided = simulated;\n',
+  "src/engine/simulation/planted-simulated.ts": 'import type { Problem } from "../decision/problem.js";\nexport const simulated = (problem: Problem): string => problem.seed;\n',
   "src/engine/random/planted-circle-a.ts": 'import { b } from "./planted-circle-b.js";\nexport const a = (): number => b() + 1;\n',
   "src/engine/random/planted-circle-b.ts": 'import { a } from "./planted-circle-a.js";\nexport const b = (): number => a() - 1;\n',
   "src/engine/random/planted-types-a.ts": 'import type { B } from "./planted-types-b.js";\nexport interface A { b?: B }\n',
@@ -38,6 +40,7 @@ describe("the rows of the house", () => {
 
   it.each([
     ["an import from a later row", "src/engine/numerics/planted-upward.ts row-1-stays-below"],
+    ["a decision that waits for simulation", "src/engine/decision/planted-simulation.ts decision-without-simulation"],
     ["a circle", "src/engine/random/planted-circle-a.ts no-circle"],
     ["a circle of types alone", "src/engine/random/planted-types-a.ts no-circle"],
     ["an orphan", "src/engine/ground/planted-orphan.ts no-orphan"],

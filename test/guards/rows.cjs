@@ -5,7 +5,7 @@ exports.rows = [
   ["src/engine/numerics/", "src/engine/random/", "src/engine/costs/"],
   ["src/engine/ground/"],
   ["src/engine/investigation/", "src/engine/piles/"],
-  ["src/engine/decision/"],
+  ["src/engine/decision/", "src/engine/simulation/"],
   ["src/engine/index.ts"],
   ["src/inputs/", "src/results/", "src/jobs/"],
   ["src/functions/", "src/host/"],
