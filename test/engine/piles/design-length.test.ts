@@ -51,7 +51,7 @@ describe("designLength", () => {
         expect(found.length).toBeGreaterThanOrEqual(lengths[Math.max(first - 1, 0)] * (1 - 1e-9));
         expect(settlement(n, found.length)).toBeLessThanOrEqual(n.allowable * (1 + 1e-8));
       }),
-      { seed: 2, numRuns: 200 },
+      { seed: 2, numRuns: 200, endOnFailure: true },
     );
   });
 
@@ -116,8 +116,11 @@ describe("designLength", () => {
       expect(length - free).toBeLessThan(step);
     });
     it("does not add a step to a length that is a multiple already", () => {
-      const load = (1000 * 0.025) / settlement(usual, 8);
-      expect(design({ load, step: 0.5 }).length).toBeCloseTo(8, 9);
+      // some of these roots end a rounding error above the multiple, some below
+      for (let k = 1; k < 40; k++) {
+        const load = (1000 * 0.025) / settlement(usual, 3 + 0.5 * k);
+        expect(design({ load, step: 0.5 }).length).toBeCloseTo(3 + 0.5 * k, 8);
+      }
     });
     it("stops at the longest length", () => expect(design({ step: 7, longest: free + 0.1 }).length).toBe(free + 0.1));
     it("says so where rounding up passes the greatest stiffness", () => {
