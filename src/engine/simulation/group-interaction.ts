@@ -1,0 +1,104 @@
+import { requireDomain } from "../numerics/domain-error.js";
+import { lagrangeWeights } from "../numerics/lagrange.js";
+
+/** A pile about whose neighbours is asked. */
+export interface InteractingPile {
+  /** m */
+  readonly length: number;
+  /** shaft radius, m */
+  readonly radius: number;
+  /** shear modulus at the level of the tip, kPa */
+  readonly tipShearModulus: number;
+  /** average shear modulus along the shaft over that at the tip */
+  readonly averageRatio: number;
+  /** Poisson's ratio of the ground, 0 to 0.5 */
+  readonly poisson: number;
+  /** Young's modulus of the pile, kPa */
+  readonly pileModulus: number;
+}
+
+/**
+ * Interaction factor of two equal piles: what each settles more because the other carries the same load, over what it settles alone.
+ *
+ * The shaft's ground settles as ln(r_m / r), the base's as 2 r0 / (pi r): a pair is a single pile whose zeta is
+ * ln(r_m / r0) + ln(r_m / s) and whose base is softer by 1 + 2 r0 / (pi s), with the compressibility of the shaft as in the
+ * closed form of the single pile.
+ *
+ * @param pile     one of the two
+ * @param spacing  of the axes, m, at least two radii
+ * @returns        alpha, 0 to below 1
+ * @throws {DomainError} an argument is out of range
+ * @source Randolph & Wroth (1979), An analysis of the vertical deformation of pile groups, Geotechnique 29 (4)
+ */
+export function interactionFactor(pile: InteractingPile, spacing: number): number {
+  const { length, radius, averageRatio, poisson } = pile;
+  requireDomain(radius > 0 && length > 0 && length < Infinity, "Pile", `${length} m long with a radius of ${radius} m`, "longer and thicker than nothing");
+  requireDomain(spacing >= 2 * radius, "Spacing of piles", spacing, `at least the diameter, ${2 * radius} m`);
+  const reach = 2.5 * averageRatio * (1 - poisson) * length;
+  const zeta = Math.log(reach / radius);
+  requireDomain(zeta > 0, "Length over radius", length / radius, "large enough for the radius of influence to lie outside the shaft");
+  const together = stiffness(pile, zeta + Math.max(Math.log(reach / spacing), 0), 1 + (2 * radius) / (Math.PI * spacing));
+  return stiffness(pile, zeta, 1) / together - 1;
+}
+
+/** Head stiffness over the tip's shear modulus and the radius, for a given zeta and a base softened by a factor. */
+function stiffness({ length, radius, averageRatio, poisson, tipShearModulus, pileModulus }: InteractingPile, zeta: number, softening: number): number {
+  const lambda = pileModulus / tipShearModulus;
+  const muLength = (Math.sqrt(2 / (zeta * lambda)) * length) / radius;
+  const perShaft = (Math.tanh(muLength) / muLength) * (length / radius);
+  const base = 4 / ((1 - poisson) * softening);
+  return (base + ((2 * Math.PI * averageRatio) / zeta) * perShaft) / (1 + (base * perShaft) / (Math.PI * lambda));
+}
+
+/** How the piles of a plan settle each other. */
+export interface Interaction {
+  /**
+   * Settlements with what the other piles add.
+   *
+   * @param alone    settlement of each pile by its own load, m
+   * @param lengths  of the piles, m
+   * @returns        m; a new array
+   */
+  settle(alone: Float64Array, lengths: Float64Array): Float64Array;
+}
+
+/**
+ * Interaction of all piles of a plan by superposing pairs: s_i = sum over j of alpha_ij P_j / K_j. A pair of unequal lengths takes
+ * the factor of the length half way between in the logarithm, so that the factors are symmetric as reciprocity wants them.
+ *
+ * @param logLengths  even in the logarithm, at least 4
+ * @param pileOf      the pile at a length, m
+ * @param distances   distinct distances of the plan, m, 0 first
+ * @param distanceOf  class of each ordered pair, piles x piles
+ */
+export function groupInteraction(logLengths: Float64Array, pileOf: (length: number) => InteractingPile, distances: Float64Array, distanceOf: Int32Array): Interaction {
+  const count = logLengths.length;
+  const table = new Float64Array(distances.length * count);
+  for (let d = 1; d < distances.length; d++) {
+    for (let k = 0; k < count; k++) table[d * count + k] = interactionFactor(pileOf(Math.exp(logLengths[k])), distances[d]);
+  }
+  return {
+    settle(alone, lengths) {
+      const n = alone.length;
+      const settled = Float64Array.from(alone);
+      const logs = lengths.map(Math.log);
+      let last = Number.NaN;
+      let start = 0;
+      let weights: Float64Array = new Float64Array(4);
+      for (let i = 0; i < n; i++) {
+        for (let j = 0; j < i; j++) {
+          const between = (logs[i] + logs[j]) / 2;
+          if (between !== last) {
+            ({ start, weights } = lagrangeWeights(logLengths, between));
+            last = between;
+          }
+          const at = distanceOf[i * n + j] * count + start;
+          const alpha = weights[0] * table[at] + weights[1] * table[at + 1] + weights[2] * table[at + 2] + weights[3] * table[at + 3];
+          settled[i] += alpha * alone[j];
+          settled[j] += alpha * alone[i];
+        }
+      }
+      return settled;
+    },
+  };
+}
