@@ -28,6 +28,7 @@ import "@univerjs/sheets/facade";
 import "@univerjs/ui/facade";
 import type { CellReasons } from "./cell-reasons.js";
 import { gridFunctions } from "./grid-functions.js";
+import { sayWhyOnHover } from "./hover-reason.js";
 
 // the page stays awake during a long calculation: after so many formulas keys and pointer have their turn
 const FORMULAS_A_TURN = 25;
@@ -71,5 +72,6 @@ export function startGrid({ container, workbook, descriptions, reasons, dark }: 
   univer.createUnit(UniverInstanceType.UNIVER_SHEET, workbook);
   const grid = FUniver.newAPI(univer);
   grid.getFormula().calculationStart(() => reasons.startRun());
+  sayWhyOnHover(univer.__getInjector(), grid, reasons);
   return grid;
 }

@@ -75,6 +75,13 @@ it("fills a two-way sensitivity table down and across from one formula", async (
   expect(Math.round(corner)).not.toBe(Math.round(alone));
 });
 
+// Identity: blank cells beside and below the block hold no input.
+it("reads whole columns as it reads the block in them", async () => {
+  await sheet.showSheet("Site");
+  await sheet.type("F7", "=PROBE.TOTALCOST(A:D,2)-PROBE.TOTALCOST(Site,2)");
+  expect((await sheet.read("F7")).value).toBe("0");
+});
+
 it("says in a sentence why a cell cannot be priced, and passes it on to the cells behind", async () => {
   await sheet.showSheet("Site");
   const row = await rowOf("Price per hole");
@@ -91,6 +98,12 @@ it("says in a sentence why a cell cannot be priced, and passes it on to the cell
   await sheet.picture("error-sentence");
   await sheet.showSheet("Bid");
   expect((await sheet.read("E17")).reason).toMatch(/Price per hole/);
+  const grid = (await sheet.page.locator("#grid").boundingBox())!;
+  // row 17 of the unscrolled Bid sheet, column E: past the formula line, the heads, one title row and 15 rows of 22
+  await sheet.page.mouse.move(grid.x + 546, grid.y + 424, { steps: 4 });
+  await sheet.page.getByText(/E17, from D9/).waitFor();
+  expect(await sheet.page.getByText(/Price per hole \(row/).last().isVisible()).toBe(true);
+  await sheet.picture("error-hover");
   await sheet.showSheet("Check");
   expect(await sheet.columnText("D", 3, 80)).toMatch(/blank/i);
   await sheet.showSheet("Site");
