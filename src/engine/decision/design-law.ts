@@ -1,4 +1,4 @@
-import { choleskyInPlace } from "../numerics/cholesky.js";
+import { factorSemidefinite } from "../numerics/semidefinite-factor.js";
 import { normalQuantile } from "../numerics/normal.js";
 import { sobolNormals } from "../numerics/sobol.js";
 import { stream } from "../random/stream.js";
@@ -48,7 +48,7 @@ export function commonLaw(design: DesignDistribution, piles: number): DesignLaw 
 export function nearestLaw(single: DesignDistribution, between: Float64Array, holes: number, ofPile: Int32Array): DesignLaw {
   const root = Float64Array.from(between);
   for (let h = 0; h < holes; h++) root[h * holes + h] = single.variance;
-  choleskyInPlace(root, holes, 1e-12);
+  factorSemidefinite(root, holes, 1e-12);
   // Spread-based rules bend the covariance too, but for one value a hole that is left out: it is a small part of a small part.
   return { size: holes, mean: single.mean, root, ofPile, gain: single.gain, bend: 0 };
 }

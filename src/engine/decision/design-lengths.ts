@@ -1,5 +1,7 @@
-import { kilonewtons, kilopascals, metres } from "../../units/quantities.js";
-import { designLength } from "../piles/design-length.js";
+import { kilonewtons, kilopascals, metres, type Kilonewtons, type Metres } from "../../units/quantities.js";
+import { designLength, type DesignedLength } from "../piles/design-length.js";
+import { profileDesign } from "../piles/profile-design.js";
+import { groundProfile } from "./ground-profile.js";
 import type { Plan } from "./plan.js";
 import type { Problem } from "./problem.js";
 
@@ -19,7 +21,8 @@ export type Rounding = "built" | "mean";
 
 /** Design lengths of the plan's loads at one design value (its logarithm, kPa). */
 export function designedClasses(problem: Problem, plan: Plan, lnDesignValue: number, rounding: Rounding): DesignedClasses {
-  const { piles, building, ground } = problem;
+  const { piles, building } = problem;
+  const design = designerOf(problem);
   const byLoad = new Float64Array(plan.loads.length);
   let allowable = true;
   for (let c = 0; c < byLoad.length; c++) {
@@ -28,21 +31,30 @@ export function designedClasses(problem: Problem, plan: Plan, lnDesignValue: num
       byLoad[c] = byLoad[0];
       continue;
     }
-    const found = designLength({
-      load: kilonewtons(plan.loads[c]),
-      diameter: piles.diameter,
-      soilModulus: kilopascals(Math.exp(lnDesignValue)),
-      pileModulus: piles.modulus,
-      allowable: building.allowableSettlement,
-      poisson: ground.poissonRatio,
-      shortest: piles.shortest,
-      longest: piles.longest,
-      step: metres(rounding === "built" ? piles.lengthStep : 0),
-    });
+    const found = design(kilonewtons(plan.loads[c]), Math.exp(lnDesignValue), building.allowableSettlement, metres(rounding === "built" ? piles.lengthStep : 0));
     byLoad[c] = rounding === "built" || found.length <= piles.shortest ? found.length : Math.min(found.length + piles.lengthStep / 2, piles.longest);
     allowable &&= found.allowable;
   }
   return { byLoad, allowable };
+}
+
+type Designer = (load: Kilonewtons, modulus: number, allowable: Metres, step: Metres) => DesignedLength;
+const designers = new WeakMap<Problem, Designer>();
+
+/** The designer of a problem: the closed form in uniform ground, its layered form else. */
+function designerOf(problem: Problem): Designer {
+  let designer = designers.get(problem);
+  if (designer === undefined) {
+    const { piles, ground } = problem;
+    const { diameter, modulus: pileModulus, shortest, longest } = piles;
+    const poisson = ground.poissonRatio;
+    const profile = groundProfile(ground);
+    designer = profile.uniform
+      ? (load, modulus, allowable, step) => designLength({ load, diameter, soilModulus: kilopascals(modulus), pileModulus, allowable, poisson, shortest, longest, step })
+      : profileDesign({ diameter, pileModulus, poisson, shortest, longest, shape: profile.shape });
+    designers.set(problem, designer);
+  }
+  return designer;
 }
 
 /**

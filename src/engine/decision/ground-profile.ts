@@ -14,6 +14,10 @@ export interface GroundProfile {
   relativeSd(depth: number): number;
   readonly sdKey: string;
   readonly regionalVariance: number;
+  /** whether the median is the same at all depths */
+  readonly uniform: boolean;
+  /** ln of `modulus` */
+  readonly logModulus: number;
   /** ln of the median modulus at a depth (m), kPa */
   logMedian(depth: number): number;
 }
@@ -44,6 +48,8 @@ export function groundProfile(ground: Ground): GroundProfile {
     relativeSd: (depth) => relative[at(depth)],
     sdKey: relative.every((r) => r === 1) ? "even" : JSON.stringify([ground.layers.map((l) => l.top), relative]),
     regionalVariance,
+    uniform,
+    logModulus: surface,
     logMedian,
   };
 }

@@ -1,4 +1,4 @@
-import { choleskyInPlace } from "../numerics/cholesky.js";
+import { factorSemidefinite } from "../numerics/semidefinite-factor.js";
 import { lagrangeWeights } from "../numerics/lagrange.js";
 import type { HoleCovariance } from "./hole-covariance.js";
 import type { SiteModel } from "./site-model.js";
@@ -64,7 +64,7 @@ export function nodeMoments(model: SiteModel, holes: HoleCovariance, normals: Fl
   }
   if (bend !== 0) bendCovariance(covariance, holes, bend, starts, weights, n, count);
   const factor = Float64Array.from(covariance);
-  choleskyInPlace(factor, n, 1e-9);
+  factorSemidefinite(factor, n, 1e-9);
   const { quadratic, residual } = secondOrderTerms(model, holes, { lengths, starts, weights, toNormals: c, normals, covariance });
   return { lengths, means, covariance, factor, quadratic, residual };
 }

@@ -43,7 +43,7 @@ export function preparedSite(problem: Problem): PreparedSite {
   const structureKey = JSON.stringify([ground.correlation, ground.horizontalScale, ground.verticalScale, profile.sdKey, investigation.readingSpacing, investigation.holeDepth]);
   const planKey = JSON.stringify(building.piles);
   const listed = investigation.holes === undefined ? [building.footprint] : investigation.holes;
-  const siteKey = JSON.stringify([familyKey, structureKey, planKey, listed, ground, investigation, building.footprint]);
+  const siteKey = JSON.stringify([familyKey, piles.lengthRule, structureKey, planKey, listed, ground, investigation, building.footprint]);
   const known = sites.get(siteKey, () => prepare());
   return known.problem === problem ? known : { ...known, problem };
 
@@ -78,11 +78,10 @@ export function preparedSite(problem: Problem): PreparedSite {
       hole: Math.log1p(investigation.holeCov ** 2),
       method: Math.log1p(investigation.methodCov ** 2),
     };
-    const logMedians = depths.map((z) => profile.logMedian(z));
     const nearest = (places: readonly Point[]): DesignLaw => {
       const n = places.length;
       const alone = (hole: Point): ReadingSums => readingSums([hole], investigation.readingSpacing, relativeSd, correlation);
-      const single = designDistribution(investigation.designRule, alone(places[0]), logMedians, variances);
+      const single = designDistribution(investigation.designRule, alone(places[0]), profile.logModulus, variances);
       const between = new Float64Array(n * n);
       for (let a = 0; a < n; a++) {
         for (let b = 0; b < a; b++) {
@@ -111,7 +110,7 @@ export function preparedSite(problem: Problem): PreparedSite {
             }),
       design: (count) => {
         const rule = investigation.designRule;
-        if (piles.lengthRule !== "nearest" || count < 2) return commonLaw(designDistribution(rule, readings(count), logMedians, variances), building.piles.length);
+        if (piles.lengthRule !== "nearest" || count < 2) return commonLaw(designDistribution(rule, readings(count), profile.logModulus, variances), building.piles.length);
         return nearest(holes(count));
       },
     };

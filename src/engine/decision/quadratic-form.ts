@@ -1,4 +1,4 @@
-import { choleskyInPlace } from "../numerics/cholesky.js";
+import { factorSemidefinite } from "../numerics/semidefinite-factor.js";
 import { symmetricEigen } from "../numerics/symmetric-eigen.js";
 
 /** A quadratic form of a random field by its few largest parts: g' M g = sum of values_r (functionals_r ' g)^2 and a remainder. */
@@ -26,7 +26,7 @@ export interface LowRankForm {
  */
 export function lowRankForm(matrix: Float64Array, covariance: Float64Array, n: number, ranks: number): LowRankForm {
   const root = Float64Array.from(covariance);
-  choleskyInPlace(root, n, 1e-10);
+  factorSemidefinite(root, n, 1e-10);
   const whitened = whiten(matrix, root, n);
   let trace = 0;
   let square = 0;

@@ -28,11 +28,12 @@ export interface DesignDistribution {
 }
 
 /**
- * Distribution of the log design value that a rule makes from the readings of a layout.
+ * Distribution of the log design value that a rule makes from the readings of a layout. Where the assumed stiffness changes with depth,
+ * readings are taken over the assumed profile, so that the design value is a level: the modulus at the surface of a profile of known shape.
  *
  * @param rule       the rule; with `update` the normal-normal update of the log level, else the raw rule
  * @param sums       of the layout; undefined for no holes
- * @param logMedians ln of the median modulus (regional level at its median) at the readings' depths, kPa
+ * @param level      ln of the median modulus at the surface with the regional level at its median, kPa
  * @param variances  of the logarithms
  * @returns          mean, variance, gain and bend; variance 0 where nothing is random
  * @throws {DomainError} the rule needs more readings than there are
@@ -40,12 +41,10 @@ export interface DesignDistribution {
  *   lower quartile by the representation of Bahadur (1966, Ann. Math. Stat. 37) with plotting position of Blom (1958);
  *   the update is the conjugate normal-normal one (Raiffa and Schlaifer 1961)
  */
-export function designDistribution(rule: DesignRule, sums: ReadingSums | undefined, logMedians: Float64Array, variances: LogVariances): DesignDistribution {
-  const level = mean(logMedians);
-  const trendVariance = mean(logMedians.map((value) => (value - level) ** 2));
+export function designDistribution(rule: DesignRule, sums: ReadingSums | undefined, level: number, variances: LogVariances): DesignDistribution {
   if (sums === undefined || sums.holes === 0) {
     const spread = variances.ground + variances.regional;
-    return { mean: level + ruleOffset(rule, spread, logMedians, level, trendVariance), variance: 0, gain: 0, bend: 0 };
+    return { mean: level + ruleOffset(rule, spread), variance: 0, gain: 0, bend: 0 };
   }
   const n = sums.holes * sums.readings;
   const errors = variances.reading + variances.hole + variances.method;
@@ -53,8 +52,7 @@ export function designDistribution(rule: DesignRule, sums: ReadingSums | undefin
   if (rule.update && variances.regional > 0) {
     const gain = variances.regional / (variances.regional + noiseOfMean);
     const left = (1 - gain) * variances.regional;
-    const offset = ruleOffset(rule, variances.ground + left, logMedians, level, trendVariance);
-    return { mean: level + offset, variance: gain * variances.regional, gain, bend: 0 };
+    return { mean: level + ruleOffset(rule, variances.ground + left), variance: gain * variances.regional, gain, bend: 0 };
   }
   const meanOfLogs = level - errors / 2; // the multipliers have unit mean, so their logarithms lie below zero
   const varianceOfMean = noiseOfMean + variances.regional;
@@ -66,13 +64,12 @@ export function designDistribution(rule: DesignRule, sums: ReadingSums | undefin
     case "harmonic": {
       const sign = rule.name === "arithmetic" ? 1 : -1;
       const variance = Math.log1p(meanOfExponentials(sums, variances));
-      const trend = Math.log(mean(logMedians.map((value) => Math.exp(sign * (value - level)))));
-      return { mean: meanOfLogs + sign * (trend + (total - variance) / 2), variance, gain: 1, bend: -sign };
+      return { mean: meanOfLogs + (sign * (total - variance)) / 2, variance, gain: 1, bend: -sign };
     }
     case "quartile":
     case "lessdeviations": {
       requireDomain(n >= 2 || rule.name === "quartile", "number of readings", n, "at least 2 for a rule that takes off standard deviations");
-      const spread = sampleSpread(sums, variances, trendVariance);
+      const spread = sampleSpread(sums, variances);
       const below = rule.name === "lessdeviations" ? rule.deviations : quartileBelow(n, spread);
       const noise = rule.name === "lessdeviations" ? 0 : quantileNoise(sums, variances, below);
       const variance = varianceOfMean + below ** 2 * spread.varianceOfSd + noise;
@@ -83,19 +80,18 @@ export function designDistribution(rule: DesignRule, sums: ReadingSums | undefin
 }
 
 /** What the rule takes off (or adds to) the log median of a known population. */
-function ruleOffset(rule: DesignRule, spread: number, logMedians: Float64Array, level: number, trendVariance: number): number {
-  const trend = (sign: number): number => Math.log(mean(logMedians.map((value) => Math.exp(sign * (value - level)))));
+function ruleOffset(rule: DesignRule, spread: number): number {
   switch (rule.name) {
     case "geometric":
       return 0;
     case "arithmetic":
-      return spread / 2 + trend(1);
+      return spread / 2;
     case "harmonic":
-      return -spread / 2 - trend(-1);
+      return -spread / 2;
     case "quartile":
-      return normalQuantile(0.25) * Math.sqrt(spread + trendVariance);
+      return normalQuantile(0.25) * Math.sqrt(spread);
     case "lessdeviations":
-      return -rule.deviations * Math.sqrt(spread + trendVariance);
+      return -rule.deviations * Math.sqrt(spread);
   }
 }
 
@@ -124,7 +120,7 @@ interface SampleSpread {
 }
 
 /** Moments of the sample variance of correlated normal readings: E = tr(H C)/(n-1), Var = 2 tr(H C H C)/(n-1)^2, H the centring matrix. */
-function sampleSpread(sums: ReadingSums, v: LogVariances, trendVariance: number): SampleSpread {
+function sampleSpread(sums: ReadingSums, v: LogVariances): SampleSpread {
   const n = sums.holes * sums.readings;
   if (n < 2) return { meanSquare: 0, varianceOfSquare: 0, meanSd: 0, varianceOfSd: 0 };
   const m = sums.readings;
@@ -137,7 +133,7 @@ function sampleSpread(sums: ReadingSums, v: LogVariances, trendVariance: number)
   // A row's mean covariance is g r + hole m/n + reading/n: its square, averaged over the rows.
   const constant = (v.hole * m + v.reading) / n;
   const meanRowSquare = g * g * sums.meanRowSquare + 2 * g * sums.meanCovariance * constant + constant ** 2;
-  const trace = n * (diagonal - grandMean) + n * trendVariance;
+  const trace = n * (diagonal - grandMean);
   const traceOfSquare = n * n * (meanSquareOfAll - 2 * meanRowSquare + grandMean ** 2);
   const meanSquare = trace / (n - 1);
   const varianceOfSquare = (2 * Math.max(traceOfSquare, 0)) / (n - 1) ** 2;
@@ -201,10 +197,4 @@ function hermiteSquares(x: number, orders: number): Float64Array {
     current = next;
   }
   return squares;
-}
-
-function mean(values: Float64Array): number {
-  let sum = 0;
-  for (const value of values) sum += value;
-  return sum / values.length;
 }

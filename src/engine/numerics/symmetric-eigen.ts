@@ -48,8 +48,9 @@ function tridiagonalise(a: Float64Array, n: number, diagonal: Float64Array, besi
     const norm = first > 0 ? -Math.sqrt(square) : Math.sqrt(square);
     diagonal[k] = a[v + k];
     beside[k] = norm;
-    if (square === 0 || k === n - 2) {
-      beside[k] = first;
+    // Entries of size 1e-30 beside a largest of 1 are rounding of zeros; reflecting them divides by squares that vanish.
+    if (square < 1e-60 || k === n - 2) {
+      beside[k] = k === n - 2 ? first : 0;
       continue;
     }
     a[v + k + 1] = first - norm;

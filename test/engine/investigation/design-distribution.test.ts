@@ -28,9 +28,9 @@ describe.each(fixture.cases)("design value of $name", (c) => {
   const holes = c.layout.map(([x, y]) => ({ x: metres(x), y: metres(y) }));
   const sums = readingSums(holes, 0.5, new Float64Array(c.readings).fill(1), fieldCorrelation(c));
   const variances = { ground: v(c.cov), regional: v(c.regionalCov), reading: v(c.readingCov), hole: v(c.holeCov), method: v(c.methodCov) };
-  const logMedians = new Float64Array(c.readings).fill(Math.log(fixture.median) - v(c.regionalCov) / 2);
+  const level = Math.log(fixture.median) - v(c.regionalCov) / 2;
   it.each(Object.keys(accuracy) as DesignRuleName[])("%s", (name) => {
-    const found = designDistribution({ name, deviations: 0.5, update: false }, sums, logMedians, variances);
+    const found = designDistribution({ name, deviations: 0.5, update: false }, sums, level, variances);
     const drawn = c.rules[name];
     // Five standard errors of the draws fail by chance less than once in a million.
     expect(Math.abs(found.mean - drawn.mean)).toBeLessThan(accuracy[name].mean + 5 * drawn.meanError);

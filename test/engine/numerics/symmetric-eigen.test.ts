@@ -63,6 +63,19 @@ describe("symmetricEigen", () => {
     values.forEach((value, k) => expect(Math.abs(value - (2 - 2 * Math.cos(((k + 1) * Math.PI) / (n + 1))))).toBeLessThan(1e-14));
   });
 
+  // Identity: ground that does not vary in some cells gives rows of zeros; the others keep the eigenvalues that they have alone.
+  it("keeps the eigenvalues of a block beside rows of zeros", () => {
+    const n = 72;
+    const alive = Array.from({ length: n }, (_, i) => i).filter((i) => i % 18 > 13);
+    const whole = new Float64Array(n * n);
+    const block = new Float64Array(alive.length ** 2);
+    alive.forEach((i, a) => alive.forEach((j, b) => (whole[i * n + j] = block[a * alive.length + b] = Math.exp(-0.37 * Math.abs(i - j)) * (1 + 0.01 * ((i * j) % 7)))));
+    const found = symmetricEigen(whole, n);
+    const alone = symmetricEigen(block, alive.length);
+    expect(found.vectors.every(Number.isFinite)).toBe(true);
+    for (let k = 1; k <= 5; k++) expect(found.values[n - k]).toBeCloseTo(alone.values[alive.length - k], 10);
+  });
+
   it("leaves its argument alone and refuses what is not a matrix", () => {
     const a = Float64Array.of(2, 0, 1, 3);
     symmetricEigen(a, 2);

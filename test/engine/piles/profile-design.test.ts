@@ -1,0 +1,52 @@
+import { describe, expect, it } from "vitest";
+import { designLength } from "../../../src/engine/piles/design-length.js";
+import { profileDesign } from "../../../src/engine/piles/profile-design.js";
+import { randolphWroth } from "../../../src/engine/piles/randolph-wroth.js";
+import { pileResponse } from "../../../src/engine/piles/pile-stiffness.js";
+import { kilonewtons, kilopascals, metres } from "../../../src/units/quantities.js";
+
+const pile = { diameter: metres(0.6), pileModulus: kilopascals(30e6), poisson: 0.3, shortest: metres(4), longest: metres(28) };
+const allowable = metres(0.025);
+
+describe("design length in ground that changes with depth", () => {
+  // Identity: in uniform ground the layered form is the uniform one, solved there by another method.
+  it.each([400, 900, 1500])("agrees with the uniform design under %d kN", (load) => {
+    const layered = profileDesign({ ...pile, shape: () => 1 })(kilonewtons(load), 9000, allowable, metres(0));
+    const uniform = designLength({ ...pile, load: kilonewtons(load), soilModulus: kilopascals(9000), allowable });
+    expect(layered.allowable).toBe(uniform.allowable);
+    expect(Math.abs(layered.length - uniform.length)).toBeLessThan(1e-3);
+  });
+
+  // Closed form: Randolph & Wroth with stiffness growing linearly (rho = average over tip), evaluated at the answer, gives the allowable settlement.
+  it("settles as allowed at the answer where stiffness grows with depth", () => {
+    const shape = (z: number): number => 1 + 0.2 * z;
+    const { length } = profileDesign({ ...pile, shape })(kilonewtons(1800), 4000, allowable, metres(0));
+    expect(length).toBeGreaterThan(4);
+    const tip = shape(length);
+    const { stiffness } = randolphWroth({
+      length, radius: metres(0.3), baseRatio: 1, tipShearModulus: (4000 * tip) / 2.6, averageRatio: (1 + 0.1 * length) / tip,
+      baseStiffnessRatio: tip / (1 + 0.2 * (length + 0.6)), poisson: 0.3, pileModulus: 30e6,
+    });
+    expect(Math.abs((1800 / stiffness / 0.025) - 1)).toBeLessThan(1e-4);
+  });
+
+  // Independent method: finite elements in the same profile. The closed form is known to agree within about a tenth (common practice).
+  it.each([
+    ["stiffening", (z: number) => 1 + 0.2 * z],
+    ["two layers", (z: number) => (z < 6 ? 1 : 3)],
+  ])("predicts within 15 %% of finite elements: %s", (_, shape) => {
+    const { length } = profileDesign({ ...pile, shape })(kilonewtons(1500), 5000, allowable, metres(0));
+    const response = pileResponse({ diameter: pile.diameter, pileModulus: pile.pileModulus, poissonRatio: 0.3, length }, (z) => kilopascals(5000 * shape(z)), { withForm: false });
+    expect(Math.abs(1500 / Math.exp(response.lnStiffness) / 0.025 - 1)).toBeLessThan(0.15);
+  });
+
+  it("rounds up to the step and says when nothing is enough", () => {
+    const design = profileDesign({ ...pile, shape: (z) => 1 + 0.05 * z });
+    const free = design(kilonewtons(1500), 8000, allowable, metres(0)).length;
+    const stepped = design(kilonewtons(1500), 8000, allowable, metres(0.5)).length;
+    expect(stepped).toBeGreaterThanOrEqual(free - 1e-3);
+    expect(stepped - free).toBeLessThan(0.5 + 1e-3);
+    expect((stepped - 4) / 0.5).toBeCloseTo(Math.round((stepped - 4) / 0.5), 9);
+    expect(design(kilonewtons(9000), 3000, allowable, metres(0))).toEqual({ length: 28, allowable: false });
+  });
+});
