@@ -84,9 +84,32 @@ describe("the 8-node axisymmetric element", () => {
     const volume = Math.PI * columns[nc - 1] ** 2 * rows[nr - 1];
     expect(Math.abs(energy / (volume * density) - 1)).toBeLessThan(1e-12);
   });
+
+  // Source: by hand. Downward displacement z^2 / 2 strains the ground by z, so that the energy of a row of integration points
+  // goes as the square of its depth, z = (top + bottom) / 2 -+ height / sqrt(12).
+  it("has its upper integration points in its upper half", () => {
+    const u = Float64Array.from(places, ({ z, down }) => (down ? (z * z) / 2 : 0));
+    const local = new Float64Array(ELEMENT_UNKNOWNS);
+    const element = 1 * nr + 1;
+    const upper = halfForces(mesh, element, mesh.upper, u, local);
+    const lower = halfForces(mesh, element, mesh.lower, u, local);
+    const middle = (rows[1] + rows[2]) / 2;
+    const apart = (rows[2] - rows[1]) / Math.sqrt(12);
+    expect(upper / lower).toBeCloseTo(((middle - apart) / (middle + apart)) ** 2, 10);
+  });
 });
 
 describe("the ground beyond the mesh", () => {
+  it("belongs to the lower half of the lowest elements, and to both halves of the outermost", () => {
+    const shift = Float64Array.from(places, ({ down }) => (down ? 1 : 0)); // strains the ground beyond the mesh only
+    const local = new Float64Array(ELEMENT_UNKNOWNS);
+    const energies = (c: number, r: number) => [mesh.upper, mesh.lower].map((half) => halfForces(mesh, c * nr + r, half, shift, local));
+    const [aboveLowest, lowest] = energies(0, nr - 1);
+    expect(Math.abs(aboveLowest)).toBeLessThan(1e-12 * lowest);
+    const [above, below] = energies(nc - 1, 0);
+    expect(Math.min(above, below)).toBeGreaterThan(0.1 * Math.max(above, below));
+  });
+
   // Source: independent quadrature. Energy of u = (r, z) f / |x|^2-like fields of degree -1 outside the box, by brute force on rays.
   it("holds the energy of a displacement that dies away as 1 / distance along rays", () => {
     // on the boundary: u_r = r / 10, u_z = 0.3 + z / 7; outside: the same at the boundary's point of the ray, over lambda

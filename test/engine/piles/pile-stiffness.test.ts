@@ -83,6 +83,11 @@ describe("pileResponse", () => {
     expect(pileResponse(pile(10, { diameter: 0.6 }), even(6e3), { withForm: false }).rings[3] / response.rings[3]).toBeCloseTo(1.2, 12);
   });
 
+  it("has a ring under the shaft, and rings where half of their columns' energy lies inside", () => {
+    expect(response.rings[0]).toBeCloseTo(0.125, 12);
+    expect(response.rings[1]).toBeCloseTo(0.25 * Math.sqrt(1.2), 12); // energy about a shaft goes as dr / r
+  });
+
   it("has levels from the surface that meet at the tip", () => {
     expect(response.levelBounds[0]).toBe(0);
     expect([...response.levelBounds]).toContain(10);
