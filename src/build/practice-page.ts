@@ -1,5 +1,5 @@
 import { build } from "esbuild";
-import { copyFile, mkdir, writeFile } from "node:fs/promises";
+import { copyFile, mkdir, readdir, writeFile } from "node:fs/promises";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { functionsMetadata } from "./metadata.js";
@@ -28,8 +28,14 @@ export async function buildPractice(output: string): Promise<void> {
   } as const;
   await Promise.all([
     build({ ...settings, splitting: true, entryPoints: { main: join(source, "practice/main.ts") } }),
-    build({ ...settings, entryPoints: { "counts-worker": join(source, "jobs/counts-worker.ts") } }),
+    build({ ...settings, entryPoints: await workers() }),
     copyFile(join(source, "practice/index.html"), join(output, "index.html")),
     writeFile(join(output, "functions.json"), JSON.stringify(await functionsMetadata())),
   ]);
+}
+
+/** The pane's threads: each is a file of its own beside the page, under its source's name. */
+async function workers(): Promise<string[]> {
+  const jobs = join(source, "jobs");
+  return (await readdir(jobs)).filter((name) => name.endsWith("-worker.ts")).map((name) => join(jobs, name));
 }

@@ -20,7 +20,9 @@ function element<T extends HTMLElement>(id: string): T {
 }
 
 async function start(): Promise<void> {
-  const metadata = (await (await fetch("functions.json")).json()) as { functions: FunctionMetadata[] };
+  const answer = await fetch("functions.json");
+  if (!answer.ok) throw new Error("its list of functions is missing; build it again with npm start.");
+  const metadata = (await answer.json()) as { functions: FunctionMetadata[] };
   closeStaleSuggestions();
   const reasons = new CellReasons();
   const theme = themeSwitch(element("theme-toggle"), (chosen) => grid.toggleDarkMode(chosen === "dark"));
@@ -47,4 +49,8 @@ async function start(): Promise<void> {
   });
 }
 
-void start();
+start().catch((reason: unknown) => {
+  document.body.dataset["state"] = "failed";
+  element("cell").classList.add("wrong");
+  element("cell-reason").textContent = `The practice workbook could not start: ${reason instanceof Error ? reason.message : String(reason)}`;
+});

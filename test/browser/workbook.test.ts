@@ -23,6 +23,33 @@ it("shows the number of a formula typed into a cell, in capitals or not", async 
   expect(await sheet.number("F3")).toBeCloseTo((1 + Math.exp(-2)) / 2, 9);
 });
 
+// The grid's list of names follows a pause of 300 ms: whoever types on faster must still get what was typed.
+it("keeps a formula as typed, though the list of suggestions is of an earlier letter", async () => {
+  await sheet.showSheet("Site");
+  await sheet.select("F3");
+  await sheet.page.keyboard.type("=P");
+  await sheet.page.getByText("PDURATION").waitFor();
+  await sheet.calculated(async () => {
+    await sheet.page.keyboard.insertText("ROBE.VARIANCEFACTOR(3,3");
+    await sheet.page.keyboard.press(")");
+    await sheet.page.keyboard.press("Enter");
+  });
+  expect(await sheet.number("F3")).toBeCloseTo((1 + Math.exp(-2)) / 2, 9);
+});
+
+it("completes a name from the list that fits it", async () => {
+  await sheet.showSheet("Site");
+  await sheet.select("F2");
+  await sheet.page.keyboard.type("=probe.variancef");
+  await sheet.page.getByText("PROBE.VARIANCEFACTOR").waitFor();
+  await sheet.page.keyboard.press("Enter");
+  await sheet.calculated(async () => {
+    await sheet.page.keyboard.type("3,3)");
+    await sheet.page.keyboard.press("Enter");
+  });
+  expect(await sheet.number("F2")).toBeCloseTo((1 + Math.exp(-2)) / 2, 9);
+});
+
 // Identity: a hole's price enters the total once for each hole.
 it("moves the total by two hole prices when an input of the site block changes", async () => {
   await sheet.showSheet("Site");
