@@ -63,7 +63,6 @@ function gridPiles(values: Values): PilePoint[] {
   const interior = values.number("interiorLoad");
   const edge = interior * values.number("edgeLoadShare");
   const corner = interior * values.number("cornerLoadShare");
-  if (alongX * alongY > MOST_PILES) throw new InputError(`${values.named("pilesAlongX")} and ${values.named("pilesAlongY")} give ${alongX * alongY} piles; at most ${MOST_PILES} are priced at once, so give a typical part of the foundation.`);
   const piles: PilePoint[] = [];
   for (let j = 0; j < alongY; j++) {
     for (let i = 0; i < alongX; i++) {

@@ -50,6 +50,7 @@ describe("pairs of a formula", () => {
     expect(parseSite(rows, ["Method", "CPT"]).problem.investigation).toMatchObject({ readingCov: 0.05, holeCov: 0.058, methodCov: 0.35, readingSpacing: 0.5 });
     expect(parseSite(rows, ["Method", "spt"]).problem.investigation).toMatchObject({ holeCov: 0.2, readingSpacing: 1 });
     expect(parseSite(rows, ["Method", "CPT", "Hole COV", 0.3]).problem.investigation.holeCov).toBe(0.3);
+    expect(checkOf(rows, "Hole COV", ["Method", "CPT", "Hole COV", 0.3])).toMatchObject({ value: 0.3, verdict: "replaced by the formula (the block says 0.2)" });
     expect(checkOf(rows, "Hole COV", ["Method", "CPT"])).toMatchObject({ verdict: "set aside: the formula puts another method in place of the block's" });
   });
 

@@ -70,7 +70,7 @@ describe("values", () => {
   });
 
   it("may ask for their default in words", () => {
-    const rows = add(SMALL, ["Pile modulus", "default"], ["Reading COV", "from the method"], ["Footprint length", "Automatic"], ["Hole list", "auto"], ["Correlation", "default"]);
+    const rows = add(SMALL, ["Pile modulus", "default"], ["Reading COV", "from the method"], ["Footprint length", "Automatic"], ["Footprint width", "auto"], ["Hole list", "auto"], ["Correlation", "default"]);
     expect(parseSite(rows).problem).toEqual(parseSite(SMALL).problem);
   });
 
@@ -135,6 +135,7 @@ describe("the piles", () => {
 
   it("in one line have a footprint as wide as their spacing, or the one that is given", () => {
     expect(listed([100, 50, 900], [106, 50, 800], [112, 50, 800]).footprint).toEqual({ length: 18, width: 6 });
+    expect(listed([0, 0, 900], [4, 0, 900], [8, 0, 900], [20, 0, 900]).footprint).toEqual({ length: 24, width: 4 }); // the middle one of 4, 4, 4 and 12 m
     expect(listed([0, 0, 900], [0.6, 0, 800]).footprint).toEqual({ length: 1.2, width: 1 });
     expect(parseSite(add(SMALL, ["Footprint length", 30, "m"], ["Footprint width", 50, "ft"])).problem.building.footprint).toEqual({ length: 30, width: 50 * 0.3048 });
   });
@@ -152,6 +153,8 @@ describe("the ground", () => {
     const rows = add(without(SMALL, "Mean stiffness"), ["Layer list"], [0, 6], [4, 20, 0, 0.3]);
     expect(parseSite(rows).problem.ground.layers.map(({ cov }) => cov)).toEqual([0.6, 0.3]);
     expect(parseSite(rows, ["Stiffness COV", 0.5]).problem.ground.layers.map(({ cov }) => cov)).toEqual([0.5, 0.3]);
+    const zeros = rows.map((row) => row.map((cell) => (cell === "" ? 0 : cell))); // as blank cells arrive on some machines
+    expect(parseSite(zeros).problem).toEqual(parseSite(rows).problem);
   });
 });
 
@@ -178,6 +181,8 @@ describe("the holes", () => {
     expect(holes([["Hole", "x", "y"], [1, 0, 0], [2, 5, 5]])).toEqual([{ x: 0, y: 0 }, { x: 5, y: 5 }]);
     const nulls = add(SMALL, ["Hole list"], [5, 5], [0, 0]).map((row) => row.map((cell) => (cell === "" ? null : cell)));
     expect(parseSite(nulls).problem.investigation.holes).toEqual([{ x: 5, y: 5 }, { x: 0, y: 0 }]);
+    const narrow = nulls.map((row) => row.slice(0, 2)); // labels and values alone: the row is all zeros, but there are nulls elsewhere
+    expect(parseSite(narrow).problem.investigation.holes).toEqual([{ x: 5, y: 5 }, { x: 0, y: 0 }]);
   });
 
   it("end at a blank row, also where blank cells arrive as 0", () => {
