@@ -72,7 +72,6 @@ function fields(text: string, separator: string): Field[][] {
     if (++count > MOST_CELLS) throw unreadable(`The csv holds more than ${MOST_CELLS} fields.`);
     if (text.charAt(end) === separator) {
       at = end + 1;
-      if (at === text.length) line.push({ text: "", isQuoted: false });
       continue;
     }
     lines.push(line);

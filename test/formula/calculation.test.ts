@@ -87,13 +87,15 @@ describe("names", () => {
 });
 
 describe("one value out of a range", () => {
-  const cells = { Main: { A1: 1, A2: 2, A3: 3, B2: "=A1:A3*10", B3: "=ABS(A:A)", B4: "=A1:A3", C1: "=SUM(A1:A3*2)", D1: "=@A1:A3", E2: "=_xlfn.SINGLE(A1:A3)" } };
+  const cells = { Main: { A1: 1, A2: 2, A3: 3, B2: "=A1:A3*10", B3: "=ABS(A:A)", B4: "=A1:A3", C1: "=SUM(A1:A3*2)", D1: "=@A1:A3", D2: "=>@A1:A3*10", D3: "=>SUM(@A1:A3,@SEQUENCE(3,1,7))", E2: "=_xlfn.SINGLE(A1:A3)" } };
 
   it("takes the cell of its own row, as a stored ordinary formula does", () => {
     const calculation = calculationOf(bookOf(cells));
     expect(outcomeAt(calculation, "B2").values).toEqual([[20]]);
     expect(outcomeAt(calculation, "B3").values).toEqual([[3]]);
     expect(outcomeAt(calculation, "D1").values).toEqual([[1]]);
+    expect(outcomeAt(calculation, "D2").values).toEqual([[20]]);
+    expect(outcomeAt(calculation, "D3").values).toEqual([[10]]);
     expect(outcomeAt(calculation, "E2").values).toEqual([[2]]);
   });
 

@@ -18,6 +18,7 @@ describe("a csv", () => {
     ["tabs", "Mean stiffness\t20.5\tMPa\n", [["Mean stiffness", 20.5, "MPa"]]],
     ["a declared separator", "sep=;\r\na;1\r\n", [["a", 1]]],
     ["commas with semicolons in the notes", 'a,1,"x; y"\nb,2,p; q\nc,3\n', [["a", 1, "x; y"], ["b", 2, "p; q"], ["c", 3]]],
+    ["commas with semicolons within quotation marks", 'a,"x;y"\n"b;c",2\n', [["a", "x;y"], ["b;c", 2]]],
     ["quotation marks, doubled ones and line breaks within", '"a ""b"", c",1\n"line\nbreak",2\n', [['a "b", c', 1], ["line\nbreak", 2]]],
     ["lines that end like those of each system", "a,1\r\nb,2\rc,3\nd,4", [["a", 1], ["b", 2], ["c", 3], ["d", 4]]],
     ["blank lines and blank fields", "a,,1\n\n,,2\n", [["a", null, 1], [], [null, null, 2]]],

@@ -16,9 +16,8 @@ export interface Relation {
  * @param part  such as "xl/workbook.xml"; "" for the package itself
  */
 export function relations(zip: ZipFile, part: string): Relation[] {
-  const slash = part.lastIndexOf("/");
-  const folder = part.slice(0, slash + 1);
-  const name = `${folder}_rels/${part.slice(slash + 1)}.rels`;
+  const folder = part.slice(0, part.lastIndexOf("/") + 1);
+  const name = relationsPart(part);
   const bytes = zip.read(name);
   if (bytes === undefined) return [];
   const scan = new TagScanner(xmlText(bytes, name));
@@ -31,6 +30,12 @@ export function relations(zip: ZipFile, part: string): Relation[] {
     found.push({ id: attributes.get("Id") ?? "", kind: (attributes.get("Type") ?? "").split("/").at(-1) ?? "", part: isInside ? resolved(folder, target) : undefined });
   }
   return found;
+}
+
+/** The name of the part that holds the relations of a part. */
+export function relationsPart(part: string): string {
+  const slash = part.lastIndexOf("/");
+  return `${part.slice(0, slash + 1)}_rels/${part.slice(slash + 1)}.rels`;
 }
 
 /** The name of a part from a path that starts at the package ("/xl/...") or at a folder, with ".." for the folder above. */

@@ -45,9 +45,9 @@ function storedValues({ grid, strings }: SheetPart): (row: number, column: numbe
   };
 }
 
-function changesOf(cell: BookCell, { values, isKept }: Outcome, stored: (row: number, column: number) => CellValue): NewValue[] {
+function changesOf(cell: BookCell, { values }: Outcome, stored: (row: number, column: number) => CellValue): NewValue[] {
   const first = values[0]?.[0];
-  if (isKept || (first instanceof ErrorValue && first.code === CIRCULAR)) return [];
+  if (first instanceof ErrorValue && first.code === CIRCULAR) return [];
   const { row, column, placement } = cell;
   const now: Area = { top: row, left: column, bottom: row + values.length - 1, right: column + (values[0]?.length ?? 1) - 1 };
   const found: NewValue[] = [];

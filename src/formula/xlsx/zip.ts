@@ -18,6 +18,7 @@ interface Entry {
 const DIRECTORY_END = 0x06054b50;
 const DIRECTORY_ENTRY = 0x02014b50;
 const LOCAL_HEADER = 0x04034b50;
+const FIRST_DAY = (1 << 5) | 1;
 const MOST_PARTS = 20_000;
 const MOST_BYTES_READ = 400 * 2 ** 20;
 const DAMAGED = "The workbook is damaged or cut short: ";
@@ -80,13 +81,14 @@ export class ZipFile {
   }
 
   /**
-   * The file with some parts replaced.
+   * The file with some parts replaced, and new ones behind all others.
    *
-   * @param parts  name and new content; each must be there already
+   * @param parts  name and content
    * @returns      a new file; every other part byte for byte as it was
    */
   withParts(parts: ReadonlyMap<string, Uint8Array>): Uint8Array {
     const replaced = new Map([...parts].map(([name, content]) => [this.find(name), content] as const));
+    const added = [...parts].filter(([name]) => this.find(name) === undefined);
     const inFile = [...this.entries].sort((a, b) => a.localOffset - b.localOffset);
     const before = this.bytes.subarray(0, inFile[0]?.localOffset ?? 0);
     const pieces: Uint8Array[] = [before];
@@ -102,13 +104,21 @@ export class ZipFile {
       pieces.push(made.local);
       offset += made.local.length;
     });
+    const addedRecords = added.map(([name, content]) => {
+      const made = newPart(name, content, offset);
+      pieces.push(made.local);
+      offset += made.local.length;
+      return made.record;
+    });
     const directoryStart = offset;
-    for (const entry of this.entries) {
-      const record = records.get(entry) as Uint8Array;
+    for (const record of [...this.entries.map((entry) => records.get(entry) as Uint8Array), ...addedRecords]) {
       pieces.push(record);
       offset += record.length;
     }
     const tail = this.tail.slice();
+    const count = this.entries.length + added.length;
+    viewOf(tail).setUint16(8, count, true);
+    viewOf(tail).setUint16(10, count, true);
     viewOf(tail).setUint32(12, offset - directoryStart, true);
     viewOf(tail).setUint32(16, directoryStart, true);
     return joined([...pieces, tail]);
@@ -187,6 +197,32 @@ function packed(entry: Entry, content: Uint8Array, original: Uint8Array): { loca
   inLocal.setUint32(22, content.length, true);
   inLocal.setUint16(28, 0, true);
   local.set(data, 30 + nameLength);
+  return { local, record };
+}
+
+/** A part that was not there, with the date that the format begins with, so that equal parts make equal files. */
+function newPart(name: string, content: Uint8Array, offset: number): { local: Uint8Array; record: Uint8Array } {
+  const data = deflateRawSync(content);
+  const label = new TextEncoder().encode(name);
+  const record = new Uint8Array(46 + label.length);
+  const inRecord = viewOf(record);
+  inRecord.setUint32(0, DIRECTORY_ENTRY, true);
+  inRecord.setUint16(4, 20, true);
+  inRecord.setUint16(6, 20, true);
+  inRecord.setUint16(10, 8, true);
+  inRecord.setUint16(14, FIRST_DAY, true);
+  inRecord.setUint32(16, crc32(content), true);
+  inRecord.setUint32(20, data.length, true);
+  inRecord.setUint32(24, content.length, true);
+  inRecord.setUint16(28, label.length, true);
+  inRecord.setUint32(42, offset, true);
+  record.set(label, 46);
+  const local = new Uint8Array(30 + label.length + data.length);
+  viewOf(local).setUint32(0, LOCAL_HEADER, true);
+  // from the version needed to the length of the name both headers say the same
+  local.set(record.subarray(6, 30), 4);
+  local.set(label, 30);
+  local.set(data, 30 + label.length);
   return { local, record };
 }
 
