@@ -26,6 +26,7 @@ export function normaliseLabel(text: string): string {
  * @returns     its entry in the catalogue, or undefined
  */
 export function entryLabelled(text: string): CatalogueEntry | undefined {
+  if (text.length > 80) return undefined; // no label is that long
   let entry = FOUND.get(text);
   if (entry === undefined) {
     entry = ENTRIES.get(normaliseLabel(text));
@@ -71,8 +72,10 @@ function nearest(plain: string, candidates: readonly { label: string; plain: str
   let best: string | undefined;
   let least = Infinity;
   for (const candidate of candidates) {
+    const longer = Math.max(plain.length, candidate.plain.length);
+    if (Math.min(Math.abs(plain.length - candidate.plain.length), Math.abs(sorted.length - candidate.sorted.length)) / longer > least) continue; // a change a letter of difference at least
     const changes = Math.min(editDistance(plain, candidate.plain), editDistance(sorted, candidate.sorted) + 0.5); // the same order of words wins a tie
-    const share = changes / Math.max(plain.length, candidate.plain.length);
+    const share = changes / longer;
     if (share < least) [least, best] = [share, candidate.label];
   }
   return least <= 0.6 ? best : undefined;
