@@ -27,7 +27,7 @@ export function columnLetters(column: number): string {
 }
 
 /** The number of a column from its letters; "A" is 0. */
-export function columnNumber(letters: string): number {
+function columnNumber(letters: string): number {
   let number = 0;
   for (const letter of letters.toUpperCase()) number = number * 26 + letter.charCodeAt(0) - 64;
   return number - 1;
@@ -104,11 +104,6 @@ export function writtenReference(reference: Reference): string {
   if (kind === "rows") return `${row(top, topFixed)}:${row(bottom, bottomFixed)}`;
   const first = column(left, leftFixed) + row(top, topFixed);
   return top === bottom && left === right ? first : `${first}:${column(right, rightFixed)}${row(bottom, bottomFixed)}`;
-}
-
-/** True where the two areas share a cell. */
-export function overlaps(a: Area, b: Area): boolean {
-  return a.top <= b.bottom && b.top <= a.bottom && a.left <= b.right && b.left <= a.right;
 }
 
 function ordered(reference: Reference): Reference | undefined {

@@ -6,7 +6,7 @@ export function printed(values: readonly (readonly CellValue[])[]): string {
 }
 
 /** One value as text: numbers in full, TRUE and FALSE, error values by their name. */
-export function printedValue(value: CellValue): string {
+function printedValue(value: CellValue): string {
   if (value === null) return "";
   if (value instanceof ErrorValue) return value.code;
   if (typeof value === "boolean") return value ? "TRUE" : "FALSE";

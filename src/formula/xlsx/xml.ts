@@ -78,7 +78,7 @@ export class TagScanner {
 const ATTRIBUTE = /([^\s=/<>"']+)\s*=\s*(?:"([^"]*)"|'([^']*)')/g;
 
 /** The attributes within the text of a tag. */
-export function attributesOf(tag: string): Map<string, string> {
+function attributesOf(tag: string): Map<string, string> {
   const found = new Map<string, string>();
   for (const [, name, double, single] of tag.matchAll(ATTRIBUTE)) found.set(name ?? "", decoded(double ?? single ?? ""));
   return found;
