@@ -2,7 +2,7 @@ import { buildSync } from "esbuild";
 import { availableParallelism } from "node:os";
 import { fileURLToPath } from "node:url";
 import { Worker, type WorkerOptions } from "node:worker_threads";
-import { wordsOf } from "../../jobs/answer-rows.js";
+import { wordsOf } from "../../jobs/words-of-failure.js";
 import type { Thread, ThreadListener, ThreadReply, Threads } from "../../jobs/threads.js";
 
 /** More memory than any site needs; a thread that wants more is at fault and ends with a reason instead of a full machine. */

@@ -1,0 +1,114 @@
+import type { BatchJob, Look } from "./batch.js";
+import type { RowRun } from "./outcome-rows.js";
+import { LONGEST_TICK, LONGEST_WAIT } from "./thread-crew.js";
+import type { RowKind, Thread, ThreadReply, Threads } from "./threads.js";
+import type { Totals } from "./work-list.js";
+
+/** Whom the clerk answers. */
+export interface Desk<Table> {
+  /** all finished realisations, for a clerk that begins anew */
+  books(): { readonly elements: readonly RowRun[]; readonly form: readonly RowRun[] };
+  looked(totals: Totals, look: Look<Table>, milliseconds: number): void;
+  giveUp(kind: "refused" | "failed", sentence: string): void;
+}
+
+const MOST_TRIES = 3;
+
+/**
+ * Makes the tables in a thread of its own: one of ten thousand realisations takes longer than a page may be held up. A
+ * thread that is lost is replaced and asked again.
+ */
+export class Clerk<Table> {
+  private thread: Thread | undefined;
+  private asked: Totals | undefined;
+  private losses = 0;
+  private waited = 0;
+  private hasEnded = false;
+
+  constructor(
+    private readonly threads: Threads,
+    private readonly job: BatchJob,
+    private readonly desk: Desk<Table>,
+    private readonly longestWait = LONGEST_WAIT,
+  ) {}
+
+  /** Whether a question is not answered yet; there is one at a time. */
+  get isBusy(): boolean {
+    return this.asked !== undefined;
+  }
+
+  start(): void {
+    this.begin();
+  }
+
+  /** Enters finished realisations. */
+  enter(of: RowKind, run: RowRun): void {
+    this.thread?.post({ kind: "add", of, run });
+  }
+
+  /** Asks for a look; the desk hears the answer. */
+  ask(totals: Totals): void {
+    this.asked = totals;
+    this.waited = 0;
+    this.thread?.post({ kind: "look", totals });
+  }
+
+  /**
+   * Watches for a thread that no longer answers.
+   *
+   * @param milliseconds  since the last call
+   */
+  tick(milliseconds: number): void {
+    if (this.asked === undefined) return;
+    this.waited += Math.min(milliseconds, LONGEST_TICK);
+    if (this.waited > this.longestWait) this.lose(`it has not answered for ${Math.round(this.waited / 1000)} seconds`);
+  }
+
+  end(): void {
+    this.hasEnded = true;
+    this.thread?.end();
+    this.thread = undefined;
+  }
+
+  private begin(): void {
+    if (this.hasEnded) return;
+    try {
+      const thread: Thread = this.threads.start({
+        reply: (reply) => {
+          if (this.thread === thread) this.hear(reply);
+        },
+        lost: (reason) => {
+          if (this.thread === thread) this.lose(reason);
+        },
+      });
+      this.thread = thread;
+      thread.post({ kind: "keep", job: this.job });
+      const books = this.desk.books();
+      for (const of of ["elements", "form"] as const) for (const run of books[of]) thread.post({ kind: "add", of, run });
+      if (this.asked !== undefined) thread.post({ kind: "look", totals: this.asked });
+    } catch (reason) {
+      this.lose(reason instanceof Error ? reason.message : String(reason));
+    }
+  }
+
+  private hear(reply: ThreadReply): void {
+    if (this.hasEnded) return;
+    if (reply.kind === "refused") this.desk.giveUp("refused", reply.message);
+    else if (reply.kind === "failed") this.lose(reply.message);
+    else if (reply.kind === "looked" && this.asked !== undefined) {
+      const totals = this.asked;
+      this.asked = undefined;
+      this.losses = 0;
+      this.desk.looked(totals, reply.look as Look<Table>, reply.milliseconds);
+    }
+  }
+
+  private lose(reason: string): void {
+    if (this.hasEnded) return;
+    this.thread?.end();
+    this.thread = undefined;
+    this.waited = 0;
+    if (++this.losses < MOST_TRIES) this.begin();
+    else this.desk.giveUp("failed", `The thread that makes the tables cannot be kept at work: ${reason}.`);
+  }
+}

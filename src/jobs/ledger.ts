@@ -1,0 +1,33 @@
+import type { Look, LookAt } from "./batch.js";
+import { OutcomeRows, type RowRun } from "./outcome-rows.js";
+import type { RowKind } from "./threads.js";
+import type { Totals } from "./work-list.js";
+
+/** The realisations of a run and what they come to. */
+export class Ledger<Table> {
+  private readonly rows: Readonly<Record<RowKind, OutcomeRows>>;
+
+  /**
+   * @param first   index of the first realisation by elements
+   * @param lookAt  makes a table of realisations
+   */
+  constructor(
+    private readonly first: number,
+    private readonly lookAt: LookAt<Table>,
+  ) {
+    this.rows = { elements: new OutcomeRows(first), form: new OutcomeRows() };
+  }
+
+  add(of: RowKind, run: RowRun): void {
+    this.rows[of].add(run);
+  }
+
+  /**
+   * Looks at the first realisations of each kind.
+   *
+   * @param totals  counted from index 0; all of them are there
+   */
+  look({ elements, form }: Totals): Look<Table> {
+    return this.lookAt(this.rows.elements.list(elements - this.first), this.rows.form.list(form));
+  }
+}
