@@ -8,7 +8,8 @@ import { separableTerms, type SeparableTerm } from "../ground/separable-terms.js
 import { pileMesh } from "../piles/pile-stiffness.js";
 import type { PileGeometry } from "../piles/pile-response.js";
 import { elementLnStiffness } from "./element-stiffness.js";
-import { formLnStiffness, lengthForm, type LengthForm } from "./length-form.js";
+import { lengthForm, type LengthForm } from "./length-form.js";
+import { rowProducts } from "./row-products.js";
 
 /** Lengths at which the form is made, in even steps of the logarithm. */
 const lengthCount = 16;
@@ -71,9 +72,20 @@ export function scaleField(ground: GroundUnderPiles, field: Float64Array): void 
 export function formStiffness(ground: GroundUnderPiles, field: Float64Array, level: number, out: Float64Array): void {
   const lengths = ground.logLengths.length;
   const cells = ground.rings.length * ground.cellSd.length;
-  for (let i = 0; i < out.length / lengths; i++) {
-    for (let k = 0; k < lengths; k++) out[i * lengths + k] = formLnStiffness(ground.forms[k], field, i * cells, level);
-  }
+  const piles = out.length / lengths;
+  const felt = new Float64Array(piles * cells);
+  const width = 1 + ground.forms[0].values.length;
+  const seen = new Float64Array(piles * width);
+  ground.forms.forEach((form, k) => {
+    const n = form.felt.length;
+    for (let i = 0; i < piles; i++) for (let c = 0; c < n; c++) felt[i * n + c] = field[i * cells + form.felt[c]];
+    rowProducts(felt, piles, form.functionals, width, n, seen);
+    for (let i = 0; i < piles; i++) {
+      let ln = form.lnStiffness + form.slope * seen[i * width] + form.weightSum * level + form.rest;
+      for (let r = 1; r < width; r++) ln += form.values[r - 1] * (seen[i * width + r] + form.sums[r] * level) ** 2;
+      out[i * lengths + k] = ln;
+    }
+  });
 }
 
 /**

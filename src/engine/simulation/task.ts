@@ -1,4 +1,6 @@
+import { investigationCost } from "../costs/prices.js";
 import type { Problem } from "../decision/problem.js";
+import { readingDepths } from "../investigation/reading-depths.js";
 import { requireDomain } from "../numerics/domain-error.js";
 
 /** One way to investigate and to design: same ground, building and piles as the other variants, its own investigation, length rule and prices. */
@@ -38,4 +40,10 @@ export function requireTask({ variants, counts }: SimulationTask): void {
 function shared({ ground, building, piles }: Problem): string {
   const { diameter, modulus, shortest, longest } = piles;
   return JSON.stringify([ground, building.piles, building.value, building.damage, building.allowableSettlement, diameter, modulus, shortest, longest]);
+}
+
+/** Price of a number of holes of a variant, money. */
+export function investigationOf({ problem: { prices, investigation } }: SimulationVariant, count: number): number {
+  const { readingSpacing, holeDepth } = investigation;
+  return investigationCost(prices, count, holeDepth, readingDepths(readingSpacing, holeDepth).length);
 }
