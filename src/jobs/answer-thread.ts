@@ -45,7 +45,7 @@ export function threadAnswerer(trade: Trade, reply: (reply: ThreadReply) => void
         return undefined;
       case "look": {
         if (ledger === undefined) throw new Error("it was asked for a table before it had realisations");
-        const look = ledger.look(request.totals);
+        const look = ledger.look(request.totals, request.isCheckpoint);
         return { kind: "looked", look, milliseconds: performance.now() - begun };
       }
     }

@@ -5,14 +5,14 @@ import type { Totals } from "./work-list.js";
 export interface Look<Table> {
   /** undefined while there are too few for one */
   readonly table: Table | undefined;
-  /** where the next checkpoint is, counted from index 0: nothing smaller and something larger; or "enough" */
-  readonly next: Totals | "enough";
+  /** at a checkpoint, where the next one is, counted from index 0: nothing smaller and something larger; or "enough" */
+  readonly next: Totals | "enough" | undefined;
   /** where the run is likely to end, counted from index 0; undefined while nobody can tell */
   readonly projected: Totals | undefined;
 }
 
-/** What is made of realisations: it depends on them in their order alone, never on the clock. */
-export type LookAt<Table> = (elements: readonly Float64Array[], form: readonly Float64Array[]) => Look<Table>;
+/** What is made of realisations, and at a checkpoint the decision: both depend on them in their order alone, never on the clock. */
+export type LookAt<Table> = (elements: readonly Float64Array[], form: readonly Float64Array[], isCheckpoint: boolean) => Look<Table>;
 
 /** A run as plain data, which threads can be handed. */
 export interface BatchJob {

@@ -8,8 +8,14 @@ import type { Totals } from "./work-list.js";
 export interface Desk<Table> {
   /** all finished realisations, for a clerk that begins anew */
   books(): { readonly elements: readonly RowRun[]; readonly form: readonly RowRun[] };
-  looked(totals: Totals, look: Look<Table>, milliseconds: number): void;
+  looked(question: Question, look: Look<Table>, milliseconds: number): void;
   giveUp(kind: "refused" | "failed", sentence: string): void;
+}
+
+/** What the clerk is asked: the table of the first realisations of each kind, counted from index 0, and at a checkpoint how to go on. */
+export interface Question {
+  readonly totals: Totals;
+  readonly isCheckpoint: boolean;
 }
 
 const MOST_TRIES = 3;
@@ -20,7 +26,7 @@ const MOST_TRIES = 3;
  */
 export class Clerk<Table> {
   private thread: Thread | undefined;
-  private asked: Totals | undefined;
+  private asked: Question | undefined;
   private losses = 0;
   private waited = 0;
   private hasEnded = false;
@@ -47,10 +53,10 @@ export class Clerk<Table> {
   }
 
   /** Asks for a look; the desk hears the answer. */
-  ask(totals: Totals): void {
-    this.asked = totals;
+  ask(question: Question): void {
+    this.asked = question;
     this.waited = 0;
-    this.thread?.post({ kind: "look", totals });
+    this.thread?.post({ kind: "look", ...question });
   }
 
   /**
@@ -85,7 +91,7 @@ export class Clerk<Table> {
       thread.post({ kind: "keep", job: this.job });
       const books = this.desk.books();
       for (const of of ["elements", "form"] as const) for (const run of books[of]) thread.post({ kind: "add", of, run });
-      if (this.asked !== undefined) thread.post({ kind: "look", totals: this.asked });
+      if (this.asked !== undefined) thread.post({ kind: "look", ...this.asked });
     } catch (reason) {
       this.lose(reason instanceof Error ? reason.message : String(reason));
     }
@@ -96,10 +102,10 @@ export class Clerk<Table> {
     if (reply.kind === "refused") this.desk.giveUp("refused", reply.message);
     else if (reply.kind === "failed") this.lose(reply.message);
     else if (reply.kind === "looked" && this.asked !== undefined) {
-      const totals = this.asked;
+      const question = this.asked;
       this.asked = undefined;
       this.losses = 0;
-      this.desk.looked(totals, reply.look as Look<Table>, reply.milliseconds);
+      this.desk.looked(question, reply.look as Look<Table>, reply.milliseconds);
     }
   }
 

@@ -25,9 +25,10 @@ export class Ledger<Table> {
   /**
    * Looks at the first realisations of each kind.
    *
-   * @param totals  counted from index 0; all of them are there
+   * @param totals        counted from index 0; all of them are there
+   * @param isCheckpoint  whether it is to be decided how to go on
    */
-  look({ elements, form }: Totals): Look<Table> {
-    return this.lookAt(this.rows.elements.list(elements - this.first), this.rows.form.list(form));
+  look({ elements, form }: Totals, isCheckpoint: boolean): Look<Table> {
+    return this.lookAt(this.rows.elements.list(elements - this.first), this.rows.form.list(form), isCheckpoint);
   }
 }

@@ -30,6 +30,16 @@ export class OutcomeRows {
     return this.rows[index - this.first] !== undefined;
   }
 
+  /** Whether those of the realisations that are there already came out the same, to the last bit. */
+  agrees({ from, count, values }: RowRun): boolean {
+    const width = values.length / count;
+    for (let k = 0; k < count; k++) {
+      const known = this.rows[from + k - this.first];
+      if (known !== undefined && !(known.length === width && known.every((value, at) => value === values[k * width + at]))) return false;
+    }
+    return true;
+  }
+
   /**
    * Takes finished realisations; those that are there already stay.
    *

@@ -1,5 +1,5 @@
 import type { BatchEnd, BatchJob, BatchProgress, BatchRun, BatchSettings, KeptRows, Look } from "./batch.js";
-import { Clerk, type Desk } from "./clerk.js";
+import { Clerk, type Desk, type Question } from "./clerk.js";
 import { OutcomeRows, type RowRun } from "./outcome-rows.js";
 import { ThreadCrew, type Chunk, type Office } from "./thread-crew.js";
 import type { RowKind, Threads } from "./threads.js";
@@ -12,6 +12,7 @@ const LOOK_EVERY = 500;
 /** Share of the time that looks may take beside the computing; a checkpoint is looked at whatever it costs. */
 const LOOK_SHARE = 0.1;
 const LONGEST_HOURS = 24;
+const OTHER_ARITHMETIC = "The realisations that were kept come out otherwise here: they were made by another version of the program, or on a machine whose arithmetic differs in the last digit. Go on where they were made, or start anew.";
 
 /**
  * Runs realisations on threads until there are enough. The table depends on the realisations in their order alone: not on how
@@ -28,7 +29,7 @@ class Run<Table> implements BatchRun<Table>, Office, Desk<Table> {
   readonly end: Promise<BatchEnd<Table>>;
   private readonly finished: Readonly<Record<RowKind, OutcomeRows>>;
   private readonly speed = new WorkSpeed();
-  private readonly list: WorkList;
+  private list: WorkList | undefined;
   private readonly crew: ThreadCrew;
   private readonly clerk: Clerk<Table>;
   private settle: (end: BatchEnd<Table>) => void = () => undefined;
@@ -51,11 +52,11 @@ class Run<Table> implements BatchRun<Table>, Office, Desk<Table> {
     this.end = new Promise((resolve) => (this.settle = resolve));
     this.finished = { elements: new OutcomeRows(job.first), form: new OutcomeRows() };
     this.checkpoint = { elements: job.first, form: 0 };
-    this.list = new WorkList(this.finished, this.speed);
     this.crew = new ThreadCrew(threads, job.task, this, settings.longestWait);
     this.clerk = new Clerk(threads, job, this, settings.longestWait);
     this.attempt(() => {
       for (const kind of ["elements", "form"] as const) for (const run of settings.kept?.[kind] ?? []) this.finished[kind].add(run);
+      this.list = new WorkList(this.finished, this.speed);
       this.timer = setInterval(() => this.tick(), TICK);
       this.clerk.start();
       this.lookAtCheckpoint();
@@ -76,21 +77,22 @@ class Run<Table> implements BatchRun<Table>, Office, Desk<Table> {
 
   take(): Chunk | undefined {
     const ahead = Math.max(0, Math.min(this.threads.size, this.job.most - this.checkpoint.elements));
-    return this.list.take(this.checkpoint, ahead);
+    return this.list?.take(this.checkpoint, ahead);
   }
 
   deliver(of: RowKind, run: RowRun, milliseconds: number): void {
+    if (!this.finished[of].agrees(run)) return this.finish("refused", OTHER_ARITHMETIC);
     this.finished[of].add(run);
     this.clerk.enter(of, run);
     this.speed.add(of, milliseconds, run.count);
     this.lookAtCheckpoint();
   }
 
-  looked(totals: Totals, look: Look<Table>, milliseconds: number): void {
+  looked({ totals, isCheckpoint }: Question, look: Look<Table>, milliseconds: number): void {
     if (this.hasEnded) return;
     this.latest = { totals, look };
     this.lookAgainAt = performance.now() + Math.max(LOOK_EVERY, milliseconds / LOOK_SHARE);
-    if (same(totals, this.checkpoint)) this.attempt(() => this.goOn(look.next));
+    if (isCheckpoint) this.attempt(() => this.goOn(look.next));
     else this.lookAtCheckpoint();
   }
 
@@ -104,10 +106,11 @@ class Run<Table> implements BatchRun<Table>, Office, Desk<Table> {
 
   private lookAtCheckpoint(): void {
     const { elements, form } = this.unbroken();
-    if (!this.hasEnded && !this.clerk.isBusy && elements >= this.checkpoint.elements && form >= this.checkpoint.form) this.clerk.ask(this.checkpoint);
+    if (!this.hasEnded && !this.clerk.isBusy && elements >= this.checkpoint.elements && form >= this.checkpoint.form) this.clerk.ask({ totals: this.checkpoint, isCheckpoint: true });
   }
 
-  private goOn(next: Totals | "enough"): void {
+  private goOn(next: Totals | "enough" | undefined): void {
+    if (next === undefined) throw new Error("nothing was decided at a checkpoint");
     if (next === "enough") return this.finish("done", "");
     const { elements, form } = this.checkpoint;
     if (next.elements < elements || next.form < form || same(next, this.checkpoint)) {
@@ -134,7 +137,7 @@ class Run<Table> implements BatchRun<Table>, Office, Desk<Table> {
     if (this.hasEnded) return;
     this.attempt(() => {
       const totals = this.unbroken();
-      if (now >= this.lookAgainAt && !this.clerk.isBusy && !(this.latest !== undefined && same(totals, this.latest.totals))) this.clerk.ask(totals);
+      if (now >= this.lookAgainAt && !this.clerk.isBusy && !(this.latest !== undefined && same(totals, this.latest.totals))) this.clerk.ask({ totals, isCheckpoint: false });
       const progress = this.progress();
       if (this.isTooLong(progress)) this.finish("too long", `To the wanted precision this run would take about ${timeInWords(progress.secondsLeft ?? 0)} on this machine; accept a larger sum, or ask for a number of realisations.`);
       else this.on(progress);

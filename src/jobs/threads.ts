@@ -14,7 +14,7 @@ export type ThreadRequest =
   | { readonly kind: "rows"; readonly of: RowKind; readonly from: number; readonly count: number }
   | { readonly kind: "keep"; readonly job: BatchJob }
   | { readonly kind: "add"; readonly of: RowKind; readonly run: RowRun }
-  | { readonly kind: "look"; readonly totals: Totals };
+  | { readonly kind: "look"; readonly totals: Totals; readonly isCheckpoint: boolean };
 
 /**
  * What a thread answers. "refused" is for the person and ends the run; "failed" is a fault of ours, met again by another

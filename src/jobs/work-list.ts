@@ -17,12 +17,15 @@ const LARGEST_CHUNK = 256;
 /** Hands out the realisations that are still missing, each once, in the order of their index. */
 export class WorkList {
   private readonly next: Record<RowKind, number>;
+  private recheck: Chunk | undefined;
 
   constructor(
     private readonly rows: Readonly<Record<RowKind, OutcomeRows>>,
     private readonly speed: WorkSpeed,
   ) {
     this.next = { elements: rows.elements.first, form: rows.form.first };
+    // kept realisations are only as good as the arithmetic of the machine that goes on with them
+    if (rows.form.has(0)) this.recheck = { of: "form", from: 0, count: 1 };
   }
 
   /**
@@ -32,6 +35,9 @@ export class WorkList {
    * @param ahead   elements that may be begun beyond it, so that no thread waits for another
    */
   take(wanted: Totals, ahead: number): Chunk | undefined {
+    const again = this.recheck;
+    this.recheck = undefined;
+    if (again !== undefined) return again;
     // a few cheap ones first, because the time left cannot be told without them
     const first = this.speed.of("form") === undefined ? this.missing("form", Math.min(wanted.form, FIRST_CHUNK), FIRST_CHUNK) : undefined;
     return first ?? this.missing("elements", wanted.elements, 1) ?? this.missing("form", wanted.form, this.chunkOfForm()) ?? this.missing("elements", wanted.elements + ahead, 1);

@@ -1,5 +1,6 @@
 import { cheapestCount, type CountRow } from "../engine/index.js";
 import { resultIn, resultUnit, type UnitSystem } from "../units/result-units.js";
+import { aligned, grouped, joined, moneyStep } from "./plain-text.js";
 
 /**
  * The table of counts as lines of text for a terminal, money rounded to what a bid can use.
@@ -10,7 +11,7 @@ import { resultIn, resultUnit, type UnitSystem } from "../units/result-units.js"
  * @returns      aligned lines: head, one a count (the cheapest and those that cannot be told from it are marked), a closing sentence
  */
 export function costTableText(rows: readonly CountRow[], units: UnitSystem, currency = ""): string {
-  const step = moneyStep(rows);
+  const step = moneyStep(rows.map((row) => row.total));
   const money = (value: number): string => grouped(Math.round(value / step) * step);
   const cheapest = rows.length === 0 ? undefined : cheapestCount(rows);
   const head = ["Holes", "Investigation", "Foundation", "Failure", "Delay", "Total", "+/-", "Chance cheapest", `Carbon, ${resultUnit("mass", units)} CO2e`, ""];
@@ -19,12 +20,7 @@ export function costTableText(rows: readonly CountRow[], units: UnitSystem, curr
     grouped(Number(row.standardError.toPrecision(2))), `${Math.round(row.chanceCheapest * 100)} %`, grouped(Number(resultIn(row.carbon, "mass", units).toPrecision(3))),
     row.count === cheapest ? "cheapest" : row.notDistinguishable ? "cannot be told from it" : "",
   ]);
-  const widths = head.map((title, column) => Math.max(title.length, ...body.map((line) => line[column]?.length ?? 0)));
-  const last = head.length - 1;
-  const aligned = [head, ...body].map((line) =>
-    line.map((cell, column) => (column === last ? cell : cell.padStart(widths[column] ?? 0))).join("  ").trimEnd(),
-  );
-  return [...aligned, "", closing(rows, cheapest, (value) => `${currency} ${money(value)}`.trim())].join("\n");
+  return [...aligned([head, ...body], [head.length - 1]), "", closing(rows, cheapest, (value) => `${currency} ${money(value)}`.trim())].join("\n");
 }
 
 function closing(rows: readonly CountRow[], cheapest: number | undefined, money: (value: number) => string): string {
@@ -33,21 +29,4 @@ function closing(rows: readonly CountRow[], cheapest: number | undefined, money:
   const others = rows.filter((row) => row.notDistinguishable && row !== best).map((row) => row.count);
   const ties = others.length === 0 ? "" : `; ${joined(others)} cannot be told from it`;
   return `Cheapest: ${best.count} ${best.count === 1 ? "hole" : "holes"}, total ${money(best.total)}${ties}.`;
-}
-
-function joined(counts: readonly number[]): string {
-  return counts.length === 1 ? String(counts[0]) : `${counts.slice(0, -1).join(", ")} and ${String(counts.at(-1))}`;
-}
-
-/** The power of ten that leaves four figures of the largest total. */
-function moneyStep(rows: readonly CountRow[]): number {
-  const largest = Math.max(1, ...rows.map((row) => row.total));
-  return 10 ** Math.max(0, Math.floor(Math.log10(largest)) - 3);
-}
-
-/** Thousands with commas whatever the machine's language, so that a run reads the same everywhere. */
-function grouped(value: number): string {
-  const [whole = "0", fraction] = String(Math.abs(value)).split(".");
-  const digits = whole.replace(/\B(?=(\d{3})+(?!\d))/g, ",");
-  return `${value < 0 ? "-" : ""}${digits}${fraction === undefined ? "" : `.${fraction}`}`;
 }

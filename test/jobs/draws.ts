@@ -113,7 +113,7 @@ export function drawsToPrecision(task: DrawsTask, error: number): BatchJob {
 function lookAtDraws(job: BatchJob): LookAt<DrawsTable> {
   const { most = Infinity, error = 0, fault } = job.target as DrawsTarget;
   const { trap: set } = job.task as DrawsTask;
-  return (elements, form) => {
+  return (elements, form, isCheckpoint) => {
     const table = meanOf(elements, form);
     const count = elements.length;
     fall(set, "look", count);
@@ -121,7 +121,7 @@ function lookAtDraws(job: BatchJob): LookAt<DrawsTable> {
     const isEnough = count >= most || (table?.error ?? Infinity) <= error;
     const next = isEnough ? "enough" : totals(fault === "goes back" ? 4 : Math.min(most, Math.max(4, 2 * count)));
     const projected = most < Infinity ? totals(most) : table === undefined || count < 4 ? undefined : totals(Math.ceil(count * Math.max(1, table.error / error) ** 2));
-    return { table, next, projected };
+    return { table, next: isCheckpoint ? next : undefined, projected };
   };
 }
 
