@@ -1,3 +1,4 @@
+import { CATALOGUE } from "../inputs/index.js";
 import { siteSheet } from "./site-sheet.js";
 import type { NumberLook, PlannedCell, SheetPlan } from "./workbook.js";
 
@@ -102,9 +103,13 @@ function sensitivity(): SheetPlan {
 }
 
 function check(): SheetPlan {
+  // the looks of the cells that the rows spill into: a head, then one row an input
+  const looks = Array.from({ length: CATALOGUE.length + 1 }, (_, k) =>
+    [0, 1, 2, 3].map((column): PlannedCell => ({ row: 2 + k, column, style: k > 0 ? "label" : column === 1 ? "numberhead" : "head" })),
+  ).flat();
   return {
     name: "Check",
-    cells: [...line(0, [text("Every input as it is read", "title")]), ...line(2, [formula("=PROBE.CHECK(Site)", "head")]), ...[1, 2, 3].map((column): PlannedCell => ({ row: 2, column, style: column === 1 ? "numberhead" : "head" }))],
+    cells: [...line(0, [text("Every input as it is read", "title")]), ...line(2, [formula("=PROBE.CHECK(Site)", "head")]), ...looks.slice(1)],
     columnWidths: [190, 160, 90, 620],
   };
 }

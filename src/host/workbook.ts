@@ -81,4 +81,6 @@ export interface SheetPlan {
   readonly names?: readonly { readonly name: string; readonly range: string }[];
   /** pixels, from column A on; absent columns keep the usual width */
   readonly columnWidths?: readonly number[];
+  /** the sheet is made to be printed on one page */
+  readonly onePage?: boolean;
 }

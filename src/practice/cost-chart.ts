@@ -1,5 +1,6 @@
 import * as Plot from "@observablehq/plot";
 import type { RangeText } from "../host/workbook.js";
+import { savePicture } from "./save-picture.js";
 
 /** What the chart shows, out of the cells: one row a count. */
 export interface CostRows {
@@ -61,6 +62,11 @@ export function drawCostChart(figure: HTMLElement, cells: RangeText | undefined)
   });
   plot.setAttribute("role", "img");
   plot.setAttribute("aria-label", `${title.textContent}, at ${money(cheapest.total)} in all.`);
+  const save = document.createElement("button");
+  save.type = "button";
+  save.textContent = "Save picture";
+  save.addEventListener("click", () => savePicture(plot as SVGSVGElement, figure, `cost-by-count-${cells!.sheet.toLowerCase().replace(/[^a-z0-9]+/g, "-")}.svg`));
+  caption.append(save);
   figure.replaceChildren(caption, plot);
 }
 

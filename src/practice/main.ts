@@ -46,6 +46,7 @@ async function start(): Promise<void> {
     functions: metadata,
     namespace: "PROBE",
     startWorker: () => new Worker("counts-worker.js", { type: "module" }),
+    startSimulationWorker: () => new Worker("simulation-worker.js", { type: "module" }),
   });
 }
 
