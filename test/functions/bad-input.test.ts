@@ -150,14 +150,14 @@ describe("a spoiled pair", () => {
 
 describe("CHECK", () => {
   it("has a row for every input of the block and says that a good block is good", () => {
-    const rows = callFunction("CHECK", [demonstration()]) as unknown[][];
+    const rows = callFunction("CHECK", [demonstration({ "Stiffness COV": 0.6 })]) as unknown[][];
     expect(rows[0]).toEqual(["Input", "Value used", "Unit", "Verdict"]);
     expect(rows.at(-1)).toEqual(["Site block", "", "", "ok: every input can be used"]);
     expect(rows).toContainEqual(["Stiffness COV", 0.6, "", "used"]);
   });
 
   it("shows what a pair puts in place", () => {
-    const rows = callFunction("CHECK", [demonstration(), "Stiffness COV", 0.45]) as unknown[][];
+    const rows = callFunction("CHECK", [demonstration({ "Stiffness COV": 0.6 }), "Stiffness COV", 0.45]) as unknown[][];
     expect(rows.find((row) => row[0] === "Stiffness COV")).toEqual(["Stiffness COV", 0.45, "", "replaced by the formula (the block says 0.6)"]);
   });
 });

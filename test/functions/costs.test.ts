@@ -17,11 +17,12 @@ describe("the cost of a count", () => {
   });
 
   it("has an investigation part that follows the price list of the block", () => {
-    // Mobilisation 2800 + report 3500, then a hole 450 + 24 m x 48 + half a day of 1200: by hand from the demonstration's rows
-    const hole = 450 + 24 * 48 + 0.5 * Number(site.find((row) => row[0] === "Price of a waiting day")?.[1]);
-    expect(value("INVESTIGATIONCOST", 0)).toBe(0);
-    expect(value("INVESTIGATIONCOST", 1)).toBeCloseTo(6300 + hole, 6);
-    expect(value("INVESTIGATIONCOST", 5)).toBeCloseTo(6300 + 5 * hole, 6);
+    const prices = { Mobilisation: 2800, Report: 3500, "Price per hole": 450, "Price per metre of hole": 48, "Hole depth": 24, "Days per hole": 0.5, "Price of a waiting day": 1200 };
+    const priced = (count: number): unknown => callFunction("INVESTIGATIONCOST", [demonstration(prices), count]);
+    const hole = 450 + 24 * 48 + 0.5 * 1200; // by hand
+    expect(priced(0)).toBe(0);
+    expect(priced(1)).toBeCloseTo(2800 + 3500 + hole, 6);
+    expect(priced(5)).toBeCloseTo(2800 + 3500 + 5 * hole, 6);
   });
 
   it("comes with a chance of damage between 0 and 1 that holes bring down", () => {
