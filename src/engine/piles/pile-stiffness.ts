@@ -14,7 +14,7 @@ import { secondOrderForm } from "./second-order.js";
  *
  * @param pile  dimensions and pile modulus
  * @param median  median Young's modulus of the ground at a depth in m, kPa, > 0
- * @param options  withForm: whether the second-order form is made too (default), about four times the time of the rest
+ * @param options  withForm: whether the second-order form is made too (default); it takes twice the time of the rest
  * @returns stiffness, energy shares and the form; the stiffness is 0.1 to 0.2 % high in even ground up to a Poisson's ratio of 0.35, 0.3 to 0.6 % at 0.49
  * @throws {DomainError} a dimension or a modulus is out of range
  */

@@ -153,6 +153,10 @@ describe("pileResponse", () => {
     ["a ground modulus that is no number", pile(10), NaN],
   ])("refuses %s", (_, geometry, modulus) => expect(() => pileResponse(geometry, even(modulus))).toThrow(DomainError));
 
+  it("names the ground's modulus when it refuses it", () => {
+    for (const modulus of [0, -1, NaN, Infinity]) expect(() => medianModuli(pileMesh(pile(10)), even(modulus))).toThrow("Median ground modulus");
+  });
+
   it("refuses a cell without stiffness", () => {
     const mesh = pileMesh(pile(10));
     const moduli = medianModuli(mesh, even(6e3));
