@@ -12,6 +12,7 @@ export interface Totals {
 /** A piece of cheap realisations takes about this long: short enough for cancelling, long enough for the messages not to matter. */
 const CHUNK_MILLISECONDS = 80;
 const FIRST_CHUNK = 4;
+const FIRST_CHUNKS = 3;
 const LARGEST_CHUNK = 256;
 
 /** Hands out the realisations that are still missing, each once, in the order of their index. */
@@ -39,7 +40,7 @@ export class WorkList {
     this.recheck = undefined;
     if (again !== undefined) return again;
     // a few cheap ones first, because the time left cannot be told without them
-    const first = this.speed.of("form") === undefined ? this.missing("form", Math.min(wanted.form, FIRST_CHUNK), FIRST_CHUNK) : undefined;
+    const first = this.speed.known("form") < FIRST_CHUNKS ? this.missing("form", Math.min(wanted.form, FIRST_CHUNKS * FIRST_CHUNK), FIRST_CHUNK) : undefined;
     return first ?? this.missing("elements", wanted.elements, 1) ?? this.missing("form", wanted.form, this.chunkOfForm()) ?? this.missing("elements", wanted.elements + ahead, 1);
   }
 

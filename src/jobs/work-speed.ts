@@ -2,7 +2,10 @@ import type { RowKind } from "./threads.js";
 
 const REMEMBERED = 24;
 
-/** How long realisations take, from the last of them, because a machine's speed changes while people work on it. */
+/**
+ * How long realisations take: the median of the last ones, because a machine's speed changes while people work on it, and the
+ * first of a thread, or one during which the machine slept, says nothing of the others.
+ */
 export class WorkSpeed {
   private readonly recent: Readonly<Record<RowKind, number[]>> = { elements: [], form: [] };
 
@@ -18,10 +21,15 @@ export class WorkSpeed {
     if (times.length > REMEMBERED) times.shift();
   }
 
+  /** How many pieces of work the speed of a kind rests on. */
+  known(kind: RowKind): number {
+    return this.recent[kind].length;
+  }
+
   /** Milliseconds that one realisation takes in its thread; undefined before the first. */
   of(kind: RowKind): number | undefined {
     const times = this.recent[kind];
-    return times.length === 0 ? undefined : times.reduce((sum, time) => sum + time, 0) / times.length;
+    return times.length === 0 ? undefined : [...times].sort((a, b) => a - b)[Math.floor((times.length - 1) / 2)];
   }
 
   /**
