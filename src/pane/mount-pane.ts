@@ -1,9 +1,12 @@
 import "./parts/fluent.js";
+import { simulationSheet } from "../host/simulation-sheet.js";
 import { siteSheet } from "../host/site-sheet.js";
 import type { InsertedSheet, SheetPlan, Workbook } from "../host/workbook.js";
+import { webThreads, type PageWorker } from "../jobs/web-threads.js";
 import { PRODUCT_VERSION } from "../results/version.js";
 import { exampleSheet } from "./model/example-sheet.js";
 import type { FunctionMetadata } from "./model/help-entries.js";
+import { numberWriter } from "./model/numbers.js";
 import { copyText } from "./parts/clipboard.js";
 import { element } from "./parts/element.js";
 import { toolMark } from "./parts/marks.js";
@@ -12,12 +15,18 @@ import { statusLine } from "./parts/status-line.js";
 import { tabs, type TabView } from "./parts/tabs.js";
 import { themeSwitch } from "./parts/theme.js";
 import { Pricing, type WorkerLike } from "./pricing.js";
+import { QuickFigures } from "./quick-figures.js";
 import { ResultsStore } from "./results-store.js";
+import { browserShelf } from "./run-shelf.js";
+import { RunStore } from "./run-store.js";
+import { briefSheet } from "./sheets/brief-sheet.js";
+import { contentOf, reportOf, type SimulationReport } from "./sheets/simulation-report.js";
 import { SiteStore } from "./site-store.js";
-import { startCountsWorker } from "./start-worker.js";
+import { startCountsWorker, startSimulationWorker } from "./start-worker.js";
 import { adoptStyles } from "./style/adopt-styles.js";
 import { helpView } from "./views/help-view.js";
-import { resultsView } from "./views/results-view.js";
+import { resultsView, type SimulatedSource } from "./views/results-view.js";
+import { runView } from "./views/run-view.js";
 import { siteView } from "./views/site-view.js";
 
 /** What a page may tell the pane about itself. */
@@ -30,6 +39,8 @@ export interface PaneOptions {
   readonly functionsVersion?: string;
   /** starts the engine's thread; omitted: the one that the build puts beside the page */
   readonly startWorker?: () => WorkerLike;
+  /** starts a thread of a simulation; omitted as above */
+  readonly startSimulationWorker?: () => PageWorker;
   /** language of the numbers; the person's own when omitted */
   readonly locale?: string;
 }
@@ -70,8 +81,11 @@ export function mountPane(host: HTMLElement, workbook: Workbook | undefined, opt
 
 function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence: string) => void): { readonly views: TabView[]; readonly siteName: () => string; readonly close: () => void } {
   const site = new SiteStore(workbook);
-  const pricing = new Pricing(options.startWorker ?? startCountsWorker);
+  const startCounts = options.startWorker ?? startCountsWorker;
+  const pricing = new Pricing(startCounts);
+  const drawing = new Pricing(startCounts);
   const results = new ResultsStore(pricing, tell);
+  const simulation = simulationOf(workbook, options, startCounts, tell);
   const insertTemplate = async (): Promise<void> => {
     const inserted = await addSheet(workbook, siteSheet(), tell);
     const name = inserted?.names[0];
@@ -84,17 +98,54 @@ function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence:
     readAgain: () => void site.read().then(() => tell(site.state.place === undefined ? "Nothing could be read." : "Read again.")),
     insertTemplate: () => void insertTemplate(),
   };
-  site.subscribe((state) => results.take(state));
+  site.subscribe((state) => {
+    results.take(state);
+    simulation.store.take(state);
+  });
   void site.open().catch((reason: unknown) => tell(`The workbook could not be read: ${inWords(reason)}.`));
   return {
     views: [
-      { name: "Site", content: () => siteView(site, actions, options.locale) },
-      { name: "Results", content: () => resultsView(results, options.locale), seen: (visible) => results.look(visible) },
+      { name: "Site", content: () => siteView(site, actions, drawing, options.locale) },
+      { name: "Run", content: () => runView(simulation.store, site, options.locale) },
+      { name: "Results", content: () => resultsView(results, simulation, options.locale), seen: (visible) => results.look(visible) },
     ],
     siteName: () => (site.state.source?.kind === "name" ? site.state.source.name : "Site"),
     close: () => {
       site.close();
       pricing.close();
+      drawing.close();
+      simulation.close();
+    },
+  };
+}
+
+function simulationOf(workbook: Workbook, options: PaneOptions, startCounts: () => WorkerLike, tell: (sentence: string) => void): SimulatedSource & { readonly close: () => void } {
+  const start = options.startSimulationWorker ?? startSimulationWorker;
+  const store = new RunStore(() => webThreads(start, navigator.hardwareConcurrency), browserShelf(), tell);
+  const quick = new QuickFigures(new Pricing(startCounts));
+  const write = async (sheet: (report: SimulationReport) => SheetPlan): Promise<void> => {
+    const report = reportOf(store.state, new Date());
+    const inserted = report === undefined ? undefined : await addSheet(workbook, sheet(report), tell);
+    if (inserted !== undefined) tell(`Written on the new sheet ${inserted.sheet}.`);
+  };
+  store.subscribe(({ phase }) => quick.allow(phase === "ended"));
+  void store.open();
+  // A page that goes gives no further turn: what is finished is handed to the storage now.
+  const save = (): void => store.save();
+  window.addEventListener("pagehide", save);
+  document.addEventListener("visibilitychange", save);
+  return {
+    store,
+    quick,
+    actions: {
+      writeTables: () => void write((report) => simulationSheet(contentOf(report))),
+      writeBrief: (client, variant) => void write((report) => briefSheet(report, variant, client, numberWriter(options.locale))),
+    },
+    close: () => {
+      window.removeEventListener("pagehide", save);
+      document.removeEventListener("visibilitychange", save);
+      store.close();
+      quick.close();
     },
   };
 }

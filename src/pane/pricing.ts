@@ -1,5 +1,6 @@
 import type { CountRow, LengthTable, Problem } from "../engine/index.js";
 import type { CountReply, CountRequest } from "../jobs/count-messages.js";
+import type { Section } from "../jobs/section.js";
 
 /** The part of a worker that pricing uses; a test hands in a thread of its own making. */
 export interface WorkerLike {
@@ -15,7 +16,7 @@ export type PricingEnd<T> = { readonly kind: "done"; readonly value: T } | { rea
 interface Running {
   readonly id: number;
   readonly progress: (done: number, of: number) => void;
-  readonly settle: (end: PricingEnd<never> | PricingEnd<readonly CountRow[]> | PricingEnd<LengthTable>) => void;
+  readonly settle: (end: PricingEnd<never> | PricingEnd<readonly CountRow[]> | PricingEnd<LengthTable> | PricingEnd<Section>) => void;
 }
 
 /** Runs one pricing at a time in a worker that is kept between runs, because it remembers what it has computed. */
@@ -45,6 +46,15 @@ export class Pricing {
    */
   lengths(problem: Problem, count: number, percentiles: readonly number[]): Promise<PricingEnd<LengthTable>> {
     return this.ask({ id: ++this.lastId, kind: "lengths", problem, count, percentiles }, () => undefined);
+  }
+
+  /**
+   * A vertical section of one realised ground; a run still going is cancelled first.
+   *
+   * @param index  number of the ground, from 0
+   */
+  section(problem: Problem, count: number, index: number): Promise<PricingEnd<Section>> {
+    return this.ask({ id: ++this.lastId, kind: "section", problem, count, index }, () => undefined);
   }
 
   /** Ends the run at once by ending its thread: the engine cannot be asked to stop half way. */
@@ -95,6 +105,7 @@ export class Pricing {
     if (reply.kind === "priced-one") this.running.progress(reply.done, reply.of);
     else if (reply.kind === "priced") this.finish({ kind: "done", value: reply.rows });
     else if (reply.kind === "lengths") this.finish({ kind: "done", value: reply.table });
+    else if (reply.kind === "section") this.finish({ kind: "done", value: reply.section });
     else this.finish({ kind: reply.kind, message: reply.message });
   }
 

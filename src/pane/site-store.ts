@@ -11,6 +11,8 @@ export interface SiteState {
   readonly source: Source | undefined;
   /** where the cells stand; undefined: nothing was read */
   readonly place: { readonly sheet: string; readonly address: string } | undefined;
+  /** the cells as read; empty: nothing was read */
+  readonly cells: readonly (readonly unknown[])[];
   readonly checks: readonly CheckRow[];
   /** undefined where the block cannot be used */
   readonly site: Site | undefined;
@@ -28,7 +30,7 @@ const PAUSE = 250;
 
 /** Reads the site block, keeps what was read and tells the views when it changes. */
 export class SiteStore {
-  private held: SiteState = { names: [], source: undefined, place: undefined, checks: [], site: undefined, refusal: NOTHING_CHOSEN, edition: 0 };
+  private held: SiteState = { names: [], source: undefined, place: undefined, cells: [], checks: [], site: undefined, refusal: NOTHING_CHOSEN, edition: 0 };
   private readonly listeners = new Set<(state: SiteState) => void>();
   private lastValues = "";
   private turn = 0;
@@ -112,12 +114,12 @@ export class SiteStore {
     this.lastValues = values;
     const checks = checkSite(range.values);
     const { site, refusal } = parsed(range);
-    this.publish({ place, checks, site, refusal, edition: this.held.edition + 1 });
+    this.publish({ place, cells: range.values, checks, site, refusal, edition: this.held.edition + 1 });
   }
 
   private nothing(refusal: string): void {
     this.lastValues = "";
-    this.publish({ place: undefined, checks: [], site: undefined, refusal, edition: this.held.edition + 1 });
+    this.publish({ place: undefined, cells: [], checks: [], site: undefined, refusal, edition: this.held.edition + 1 });
   }
 
   private publish(change: Partial<SiteState>): void {

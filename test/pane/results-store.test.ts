@@ -34,6 +34,7 @@ const state = (edition: number, site: Partial<Site> | undefined, refusal?: strin
   names: [],
   source: undefined,
   place: undefined,
+  cells: [],
   checks: [],
   site: site === undefined ? undefined : ({ problem: { investigation: { holes: undefined } } as unknown as Problem, units: "SI", counts: [0, 1], money: "EUR", method: "", rows: [], ...site } as Site),
   refusal,

@@ -15,9 +15,10 @@ const PADDING = 0.24;
  * @param drawing  what costDrawing gave
  * @param width    width of the picture, pixels
  * @param write    writes an amount at the axis
+ * @param alone    whether the axis of counts stands under this picture; otherwise the parts below it bear it
  * @returns        an SVG picture, hidden from screen readers
  */
-export function drawTotals(drawing: CostDrawing, width: number, write: AxisWriter): Element {
+export function drawTotals(drawing: CostDrawing, width: number, write: AxisWriter, alone = false): Element {
   const { points, counts } = drawing;
   const ticks = niceTicks(drawing.totalAxis[0], drawing.totalAxis[1], 5);
   const set = points.filter((point) => point.inSet);
@@ -31,15 +32,16 @@ export function drawTotals(drawing: CostDrawing, width: number, write: AxisWrite
     plot({
       ...SIDES,
       width,
-      height: 168,
+      height: alone ? 192 : 168,
       marginTop: 22,
-      marginBottom: 8,
+      marginBottom: alone ? 32 : 8,
       x: { type: "band", domain: [...counts], axis: null, padding: PADDING },
       y: { domain: [...drawing.totalAxis], label: null },
       marks: [
         barY(set, { x: "count", y1: () => floor, y2: () => drawing.totalAxis[1], fill: "var(--pane-set)", insetLeft: gap, insetRight: gap }),
         gridY(ticks, { stroke: "var(--pane-line)", strokeOpacity: 1 }),
         axisY(ticks, { tickSize: 0, tickFormat: write, color: "var(--pane-soft)" }),
+        ...(alone ? [axisOfCounts(counts, width)] : []),
         areaY(within, { x: "count", y1: "low", y2: "high", fill: "var(--pane-band)" }),
         ruleX(within, { x: "count", y1: "low", y2: "high", stroke: "var(--pane-ink)", strokeWidth: 1.5 }),
         lineY(within, { x: "count", y: "total", stroke: "var(--pane-ink)", strokeWidth: 1.25 }),
@@ -76,7 +78,7 @@ export function drawParts(drawing: CostDrawing, width: number, write: AxisWriter
       marks: [
         gridY(ticks, { stroke: "var(--pane-line)", strokeOpacity: 1 }),
         axisY(ticks, { tickSize: 0, tickFormat: write, color: "var(--pane-soft)" }),
-        axisX(countTicks(drawing.counts, Math.floor((width - SIDES.marginLeft - SIDES.marginRight) / 20)), { tickSize: 0, color: "var(--pane-soft)", label: "number of holes", labelAnchor: "center", labelArrow: "none" }),
+        axisOfCounts(drawing.counts, width),
         ...drawing.parts.map((part, k) =>
           barY(drawing.blocks.filter((block) => block.part === part), {
             x: "count",
@@ -91,6 +93,10 @@ export function drawParts(drawing: CostDrawing, width: number, write: AxisWriter
       ],
     }),
   );
+}
+
+function axisOfCounts(counts: readonly number[], width: number): ReturnType<typeof axisX> {
+  return axisX(countTicks(counts, Math.floor((width - SIDES.marginLeft - SIDES.marginRight) / 20)), { tickSize: 0, color: "var(--pane-soft)", label: "number of holes", labelAnchor: "center", labelArrow: "none" });
 }
 
 function hidden(picture: Element): Element {

@@ -1,4 +1,5 @@
 import type { CountRow } from "../../engine/index.js";
+import type { CostRow } from "./cost-drawing.js";
 import { countsInWords, holesInWords, moneyStep, sentenceCase, shorten, type NumberWriter } from "./numbers.js";
 
 /** What the table of counts says, in sentences for a person who has to act on it. */
@@ -13,6 +14,9 @@ export interface Conclusion {
   readonly remarks: readonly string[];
 }
 
+/** What the words need of a row of either table, the quick or the simulated. */
+export type ConcludedRow = CostRow & Pick<CountRow, "tooShortChance">;
+
 /**
  * Puts the table of counts into words.
  *
@@ -23,7 +27,7 @@ export interface Conclusion {
  * @param writer    writes the numbers
  * @returns         sentences that end with a full stop
  */
-export function conclude(rows: readonly CountRow[], cheapest: number, client: number | undefined, money: string, writer: NumberWriter): Conclusion {
+export function conclude(rows: readonly ConcludedRow[], cheapest: number, client: number | undefined, money: string, writer: NumberWriter): Conclusion {
   const best = rows.find((row) => row.count === cheapest) ?? rows[0]!;
   const step = tableStep(rows);
   const unit = money === "" ? "" : `\u00a0${shorten(money, 12)}`;
@@ -39,13 +43,13 @@ export function conclude(rows: readonly CountRow[], cheapest: number, client: nu
  * @param rows  the table
  * @returns     a power of ten, money
  */
-export function tableStep(rows: readonly CountRow[]): number {
+export function tableStep(rows: readonly Pick<CountRow, "standardError" | "total">[]): number {
   // The smallest error rules: a rounding fit for the worst row would wipe out differences that the others show.
   const smallest = Math.min(...rows.map((row) => row.standardError));
   return moneyStep(smallest, Math.max(...rows.map((row) => row.total)));
 }
 
-function compare(rows: readonly CountRow[], best: CountRow, client: number | undefined, amount: (value: number) => string): string {
+function compare(rows: readonly ConcludedRow[], best: ConcludedRow, client: number | undefined, amount: (value: number) => string): string {
   if (client === undefined) return "State the count that your client proposes to see what changing it is worth.";
   if (client === best.count) return "That is the count your client proposes.";
   const theirs = rows.find((row) => row.count === client);
@@ -57,7 +61,7 @@ function compare(rows: readonly CountRow[], best: CountRow, client: number | und
   return `That is ${amount(theirs.total - best.total)} less than ${proposal}, at ${amount(theirs.total)}.`;
 }
 
-function remarks(rows: readonly CountRow[], best: CountRow, writer: NumberWriter): string[] {
+function remarks(rows: readonly ConcludedRow[], best: ConcludedRow, writer: NumberWriter): string[] {
   const sentences: string[] = [];
   const others = rows.filter((row) => row.notDistinguishable && row.count !== best.count).map((row) => row.count);
   if (others.length > 0) {

@@ -2,8 +2,11 @@ import type { CountRow } from "../../engine/index.js";
 import { tableStep } from "./conclusion.js";
 import { countsInWords, type NumberWriter } from "./numbers.js";
 
+/** What the picture needs of a row of either table, the quick or the simulated. */
+export type CostRow = Pick<CountRow, "count" | "investigation" | "foundation" | "failure" | "delay" | "total" | "standardError" | "notDistinguishable">;
+
 /** The parts of the total, from the base of the stack upwards: what the count hardly moves stands lowest. */
-const PARTS: readonly (readonly [name: string, amount: (row: CountRow) => number])[] = [
+const PARTS: readonly (readonly [name: string, amount: (row: CostRow) => number])[] = [
   ["Foundation", (row) => row.foundation],
   ["Failure", (row) => row.failure],
   ["Delay", (row) => row.delay],
@@ -50,7 +53,7 @@ export interface CostDrawing {
  * @param cheapest  the count of the smallest total
  * @returns         parts that nobody pays for are left out
  */
-export function costDrawing(rows: readonly CountRow[], cheapest: number): CostDrawing {
+export function costDrawing(rows: readonly CostRow[], cheapest: number): CostDrawing {
   const parts = PARTS.filter(([, amount]) => rows.some((row) => amount(row) > 0));
   const totalAxis = axisOfTotals(rows);
   const top = totalAxis[1];
@@ -82,7 +85,7 @@ export function costDrawing(rows: readonly CountRow[], cheapest: number): CostDr
  * @param writer    writes the numbers
  * @returns         the course of the total and the marked set
  */
-export function describeCosts(rows: readonly CountRow[], cheapest: number, writer: NumberWriter): string {
+export function describeCosts(rows: readonly CostRow[], cheapest: number, writer: NumberWriter): string {
   const step = tableStep(rows);
   const first = rows[0]!;
   const last = rows[rows.length - 1]!;
@@ -94,7 +97,7 @@ export function describeCosts(rows: readonly CountRow[], cheapest: number, write
   return `Expected total cost against number of holes: ${course}.${marked} All figures are in the table below the picture.`;
 }
 
-function stack(row: CountRow, parts: typeof PARTS): PartBlock[] {
+function stack(row: CostRow, parts: typeof PARTS): PartBlock[] {
   let from = 0;
   return parts.map(([part, amount]) => {
     const block = { count: row.count, part, from, to: from + amount(row) };
@@ -103,7 +106,7 @@ function stack(row: CountRow, parts: typeof PARTS): PartBlock[] {
   });
 }
 
-function axisOfTotals(rows: readonly CountRow[]): [number, number] {
+function axisOfTotals(rows: readonly CostRow[]): [number, number] {
   const low = Math.min(...rows.map((row) => row.total - 2 * row.standardError));
   const high = Math.max(...rows.map((row) => row.total + 2 * row.standardError));
   const least = Math.min(...rows.map((row) => row.total));

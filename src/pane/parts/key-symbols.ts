@@ -1,7 +1,7 @@
 import { drawn } from "./element.js";
 
 /** What a key can show. */
-export type KeySymbol = "pile" | "hole" | "footprint" | "total" | "cheapest" | "set" | "above";
+export type KeySymbol = "pile" | "hole" | "footprint" | "total" | "cheapest" | "set" | "above" | "shaft" | "hole-line";
 
 /**
  * A small picture of a sign used in a drawing.
@@ -28,5 +28,7 @@ const SHAPES: Record<KeySymbol, () => SVGElement[]> = {
   total: () => [drawn("rect", { x: 1, y: 3, width: 16, height: 8, class: "sign-band" }), drawn("path", { d: "M1 7h16M9 2v10", class: "sign-line" }), drawn("circle", { cx: 9, cy: 7, r: 2.6, class: "sign-point" })],
   cheapest: () => [drawn("path", { d: "M9 .5 15 7 9 13.5 3 7Z", class: "sign-cheapest" })],
   set: () => [drawn("rect", { x: 2, y: 0, width: 14, height: 14, class: "sign-set" }), drawn("path", { d: "M9 2.5 13 7 9 11.5 5 7Z", class: "sign-diamond" })],
+  shaft: () => [drawn("rect", { x: 6, y: 1, width: 6, height: 12, class: "sign-shaft" })],
+  "hole-line": () => [drawn("path", { d: "M6 0v14", class: "sign-hole-line" }), drawn("path", { d: "M12 0v14", class: "sign-hole-line sign-hole-beside" })],
   above: () => [drawn("path", { d: "M9 3 14 11H4Z", class: "sign-diamond" })],
 };

@@ -96,6 +96,31 @@ export const LAYOUT = `
 .probeworth .lengths .figures th:first-child { white-space: normal; }
 .probeworth .figures .strong th, .probeworth .figures .strong td { font-weight: 650; }
 .probeworth .lengths { margin-top: 8px; }
+.probeworth .view-hint { margin: 2px 4px 0; }
+.probeworth .choices { margin: 8px 0 0; padding: 0; border: 0; min-width: 0; }
+.probeworth .choices legend { padding: 0; margin-bottom: 2px; }
+.probeworth .choice { display: flex; flex-wrap: wrap; align-items: center; justify-content: space-between; gap: 0 8px; min-height: 30px; }
+.probeworth .choice-label { display: flex; align-items: center; gap: 7px; min-height: 28px; flex: 1 1 auto; }
+.probeworth .tick { flex: none; width: 16px; height: 16px; margin: 0; accent-color: var(--pane-accent); }
+.probeworth .tick:focus-visible { outline: 2px solid var(--pane-focus); outline-offset: 2px; }
+.probeworth .beside { display: flex; align-items: center; gap: 6px; margin-inline-start: auto; font-size: 12px; }
+.probeworth .beside .field { width: 104px; text-align: end; font-variant-numeric: tabular-nums; }
+.probeworth .beside .field::placeholder { color: var(--pane-soft); opacity: 1; }
+.probeworth .field[aria-invalid="true"], .probeworth .choices[aria-invalid="true"] { outline: 2px solid var(--pane-refused); outline-offset: 1px; }
+.probeworth .ways { margin-top: 8px; border-bottom: 1px solid var(--pane-line); }
+.probeworth .ways[open] { padding-bottom: 8px; }
+.probeworth .order .refusal { margin-top: 8px; }
+.probeworth .run .hint { margin-top: 4px; }
+.probeworth .run .row + .run-words, .probeworth .run fluent-progress-bar + .run-words { margin-top: 8px; font-variant-numeric: tabular-nums; }
+.probeworth .control .row { justify-content: flex-start; }
+.probeworth .run-changed { padding: 4px 8px; border-inline-start: 3px solid var(--pane-edge); }
+.probeworth .hint + .row { margin-top: 8px; }
+.probeworth .writes { margin-top: 10px; }
+.probeworth .agreement { margin-block: 8px; }
+.probeworth .simulated .row + .answer-head, .probeworth .simulated .hint + .answer-head { margin-top: 8px; }
+.probeworth .slice .row { margin-top: 6px; }
+.probeworth .slice .field-count { width: 52px; }
+.probeworth .slice figure { margin-top: 6px; }
 .probeworth .function > summary { align-items: baseline; flex-wrap: wrap; gap: 0 8px; position: relative; padding-inline-end: 18px; }
 .probeworth .function > summary::after { position: absolute; inset-inline-end: 2px; top: 12px; }
 .probeworth .function-name { font-weight: 600; letter-spacing: .02em; color: var(--pane-accent); }
@@ -113,6 +138,7 @@ export const LAYOUT = `
 .probeworth .versions dd { font-variant-numeric: tabular-nums; }
 .probeworth .status { flex: none; min-height: 26px; padding: 4px 12px; border-top: 1px solid var(--pane-line); background: var(--pane-surface); color: var(--pane-soft); font-size: 12px; }
 @media (pointer: coarse) {
+  .probeworth .choice-label { min-height: 44px; }
   .probeworth .field, .probeworth .group > summary, .probeworth fluent-button, .probeworth fluent-slider, .probeworth fluent-tab { min-height: 44px; }
 }
 @media (forced-colors: active) {
@@ -120,6 +146,7 @@ export const LAYOUT = `
   .probeworth .numeral { border: 2px solid Highlight; forced-color-adjust: none; }
   .probeworth fluent-tab::after, .probeworth fluent-tablist::after { display: none; }
   .probeworth fluent-tab[aria-selected="true"] { border-block-end: 3px solid Highlight; border-radius: 0; }
+  .probeworth .field[aria-invalid="true"], .probeworth .choices[aria-invalid="true"] { outline: 3px dashed CanvasText; }
   .probeworth .figures-of-results.old > section { opacity: 1; border-style: dashed; }
 }
 @media (prefers-reduced-motion: reduce) {

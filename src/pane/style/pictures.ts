@@ -18,6 +18,9 @@ export const PICTURES = `
 .probeworth .sign-cheapest { fill: var(--pane-accent); }
 .probeworth .sign-set { fill: var(--pane-set); stroke: var(--pane-edge); stroke-width: .5; }
 .probeworth .sign-diamond { fill: var(--pane-ink); }
+.probeworth .sign-shaft { fill: #ffffff; stroke: #101314; stroke-width: 1.25; }
+.probeworth .sign-hole-line { fill: none; stroke: var(--pane-hole); stroke-width: 1.75; }
+.probeworth .sign-hole-beside { stroke-dasharray: 3 3; }
 .probeworth .swatch { stroke: var(--pane-edge); stroke-width: .75; }
 .probeworth .patterns { position: absolute; width: 0; height: 0; }
 .probeworth .hatch-paper { fill: var(--pane-surface); }

@@ -1,4 +1,4 @@
-import { IS, IS_NOT, PRIVACY, SMALL_SUMS } from "../model/cautions.js";
+import { IS, IS_NOT, PRIVACY, SMALL_SUMS } from "../../results/cautions.js";
 import { helpEntries, searchHelp, type FunctionMetadata, type HelpEntry } from "../model/help-entries.js";
 import { element, freshId } from "../parts/element.js";
 import { helpEntry, type ExampleActions } from "./help-entry.js";

@@ -1,33 +1,45 @@
 import { numberWriter } from "../model/numbers.js";
 import { button } from "../parts/button.js";
 import { element, freshId } from "../parts/element.js";
+import type { QuickFigures } from "../quick-figures.js";
+import type { RunStore } from "../run-store.js";
 import type { ResultsState, ResultsStore } from "../results-store.js";
-import { IS, IS_NOT, SMALL_SUMS } from "../model/cautions.js";
+import { IS, IS_NOT, SMALL_SUMS } from "../../results/cautions.js";
 import { answerPanel } from "./answer-panel.js";
 import { costPanel } from "./cost-panel.js";
 import { lengthPanel } from "./length-panel.js";
+import { simulatedPanel, type SimulatedActions } from "./simulated-panel.js";
+
+/** Where the simulated figures come from, and what may be done with them. */
+export interface SimulatedSource {
+  readonly store: RunStore;
+  readonly quick: QuickFigures;
+  readonly actions: SimulatedActions;
+}
 
 /**
  * The Results view: the answer in a sentence, the picture behind it, the pile lengths, and what the figures are not.
  *
- * @param store   the figures
- * @param locale  language of the numbers
+ * @param store      the quick figures
+ * @param simulated  what a run came to
+ * @param locale     language of the numbers
  */
-export function resultsView(store: ResultsStore, locale: string | undefined): HTMLElement {
+export function resultsView(store: ResultsStore, simulated: SimulatedSource, locale: string | undefined): HTMLElement {
   const writer = numberWriter(locale);
   const figures = element("div", { class: "figures-of-results" }, answerPanel(store, writer), costPanel(store, writer), lengthPanel(store, writer));
   store.subscribe((state) => {
     figures.hidden = state.table === undefined;
     figures.classList.toggle("old", state.old);
   });
-  return element("div", { class: "view" }, runPanel(store), figures, cautionPanel());
+  return element("div", { class: "view" }, simulatedPanel(simulated.store, simulated.quick, simulated.actions, writer), runPanel(store), figures, cautionPanel());
 }
 
 function runPanel(store: ResultsStore): HTMLElement {
   const run = button("Price now", () => (store.state.phase === "running" ? store.cancel() : void store.run()));
   const words = element("p", { class: "run-words" });
   const bar = element("fluent-progress-bar", { "aria-label": "Counts priced", min: 0, max: 1, value: 0 });
-  const panel = element("section", { class: "run", "aria-label": "Pricing" }, element("div", { class: "row" }, words, run), bar);
+  const title = freshId("title");
+  const panel = element("section", { class: "run", "aria-labelledby": title }, element("h2", { id: title }, "Quick figures, as the cells show them"), element("div", { class: "row" }, words, run), bar);
   store.subscribe((state) => {
     const running = state.phase === "running";
     // One button with two names: it keeps the keyboard's place when the run ends by itself.

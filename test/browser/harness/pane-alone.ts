@@ -50,4 +50,4 @@ declare global {
 window.book = new MemoryWorkbook();
 if (new URLSearchParams(location.search).has("empty")) window.book.blocks.clear();
 const functions = (await (await fetch("functions.json")).json()) as { functions: { id: string; name: string; parameters: { name: string }[] }[] };
-mountPane(document.getElementById("pane")!, window.book, { functions, locale: "en-GB", startWorker: () => new Worker("counts-worker.js", { type: "module" }) });
+mountPane(document.getElementById("pane")!, window.book, { functions, locale: "en-GB", startWorker: () => new Worker("counts-worker.js", { type: "module" }), startSimulationWorker: () => new Worker("simulation-worker.js", { type: "module" }) });

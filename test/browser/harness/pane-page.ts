@@ -23,7 +23,7 @@ export async function startPane(): Promise<PaneSite> {
   const settings = { bundle: true, minify: true, format: "esm", target: "es2022", outdir: folder, logLevel: "warning" } as const;
   await Promise.all([
     build({ ...settings, splitting: true, entryPoints: { page: here("pane-alone.ts") } }),
-    build({ ...settings, entryPoints: { "counts-worker": here("../../../src/jobs/counts-worker.ts") } }),
+    build({ ...settings, entryPoints: { "counts-worker": here("../../../src/jobs/counts-worker.ts"), "simulation-worker": here("../../../src/jobs/simulation-worker.ts") } }),
     writeFile(join(folder, "functions.json"), JSON.stringify(await functionsMetadata())),
     writeFile(join(folder, "index.html"), PAGE),
   ]);

@@ -1,0 +1,76 @@
+import type { SimulationTable } from "../engine/index.js";
+import { simulationLengthTable, simulationTable, stampTable, type SimulationStamp } from "../results/index.js";
+import type { ResultColumn, ResultTable } from "../results/result-table.js";
+import type { UnitSystem } from "../units/result-units.js";
+import type { NumberLook, PlannedCell, SheetPlan } from "./workbook.js";
+
+/** A simulation as it is written into a sheet. */
+export interface SimulationContent {
+  readonly table: SimulationTable;
+  readonly stamp: SimulationStamp;
+  readonly units: UnitSystem;
+  /** whose money; "" where nobody wrote it */
+  readonly money: string;
+  /** sentences that must be read before the figures, such as that the run was not finished */
+  readonly warnings: readonly string[];
+}
+
+/**
+ * All figures of a simulation on one new sheet: stamp, costs and lengths, with what belongs under each.
+ *
+ * @param content  the simulation
+ */
+export function simulationSheet({ table, stamp, units, money, warnings }: SimulationContent): SheetPlan {
+  const costs = simulationTable(table, units, money);
+  const cells: PlannedCell[] = [{ row: 0, column: 0, value: costs.title, style: "title" }];
+  let row = 1;
+  for (const warning of warnings) cells.push({ row: row++, column: 0, value: warning, style: "section" });
+  row++;
+  for (const line of stampTable(stamp).rows) {
+    cells.push({ row, column: 0, value: line[0]!, style: "label" }, { row: row++, column: STAMP_COLUMN, value: line[1]!, style: "label" });
+  }
+  row++;
+  const first = row;
+  row = addTable(cells, costs, row);
+  const names = [{ name: "SimulatedCosts", range: `A${first + 1}:${letters(costs.columns.length - 1)}${row}` }];
+  row = addNotes(cells, [...costs.notes, ...stampTable(stamp).notes], row);
+  const lengths = simulationLengthTable(table, units);
+  cells.push({ row: row++, column: 0, value: lengths.title, style: "section" });
+  row = addTable(cells, lengths, row);
+  addNotes(cells, lengths.notes, row);
+  return { name: "Simulation", cells, names, columnWidths: costs.columns.map((column) => (column.unit === "" ? 190 : 124)) };
+}
+
+/** The stamp's words are longer than the first column. */
+const STAMP_COLUMN = 3;
+
+function addTable(cells: PlannedCell[], { columns, rows }: ResultTable, from: number): number {
+  columns.forEach((column, k) => {
+    const isText = rows.length > 0 && typeof rows[0]![k] === "string";
+    cells.push({ row: from, column: k, value: column.unit === "" ? column.label : `${column.label} (${column.unit})`, style: isText ? "head" : "numberhead" });
+  });
+  rows.forEach((values, r) => {
+    values.forEach((value, k) => {
+      const look = typeof value === "number" ? lookOf(columns[k]!) : undefined;
+      cells.push({ row: from + 1 + r, column: k, value, style: "result", ...(look === undefined ? {} : { look }) });
+    });
+  });
+  return from + 1 + rows.length;
+}
+
+function addNotes(cells: PlannedCell[], notes: readonly string[], from: number): number {
+  notes.forEach((note, k) => cells.push({ row: from + k, column: 0, value: note, style: "note" }));
+  return from + notes.length + 1;
+}
+
+/** How the numbers of a column show; whole numbers and percentiles show as they are. */
+function lookOf({ unit }: ResultColumn): NumberLook | undefined {
+  if (unit === "0 to 1") return "percent";
+  if (unit === "m" || unit === "ft") return "metres";
+  if (unit === "piles" || unit === "times") return "ratio";
+  return unit === "holes" || unit === "%" ? undefined : "money";
+}
+
+function letters(column: number): string {
+  return column < 26 ? String.fromCharCode(65 + column) : `${letters(Math.floor(column / 26) - 1)}${letters(column % 26)}`;
+}

@@ -1,0 +1,88 @@
+import type { KeptRows } from "../jobs/batch.js";
+import { OutcomeRows, type RowRun } from "../jobs/outcome-rows.js";
+import type { RowKind } from "../jobs/threads.js";
+import type { RunShelf } from "./run-shelf.js";
+
+const KINDS = ["elements", "form"] as const;
+
+/** Keeps the realisations of one run as they come, each once. */
+export class RunKeeping {
+  private readonly saved: Readonly<Record<RowKind, Set<number>>>;
+  private working: Promise<void> = Promise.resolve();
+  private hasFailed = false;
+
+  /**
+   * @param shelf   where they are kept
+   * @param inputs  hash of the run's inputs
+   * @param kept    what is there already
+   * @param failed  hears once why nothing more can be kept
+   */
+  constructor(
+    private readonly shelf: RunShelf,
+    private readonly inputs: string,
+    kept: KeptRows,
+    private readonly failed: (reason: unknown) => void,
+  ) {
+    this.saved = { elements: indexes(kept.elements), form: indexes(kept.form) };
+  }
+
+  /**
+   * Keeps what is new.
+   *
+   * @param rows  all finished realisations
+   * @returns     settles when it is written; never rejects
+   */
+  save(rows: KeptRows): Promise<void> {
+    for (const kind of KINDS) {
+      const fresh = rows[kind].flatMap((run) => unsaved(run, this.saved[kind]));
+      if (fresh.length === 0 || this.hasFailed) continue;
+      for (const { from, count } of fresh) for (let k = from; k < from + count; k++) this.saved[kind].add(k);
+      this.working = this.working
+        .then(() => this.shelf.add(this.inputs, kind, fresh))
+        .catch((reason: unknown) => {
+          if (!this.hasFailed) this.failed(reason);
+          this.hasFailed = true;
+        });
+    }
+    return this.working;
+  }
+}
+
+/**
+ * Whatever was found in the storage, as far as it can be used: runs of whole rows of finite figures, all of one width.
+ *
+ * @param rows  as read
+ */
+export function soundRows(rows: KeptRows): KeptRows {
+  const sound = (runs: readonly RowRun[]): RowRun[] => {
+    const good = runs.filter(({ from, count, values }) => Number.isInteger(from) && from >= 0 && count > 0 && values instanceof Float64Array && values.length > 0 && values.length % count === 0 && values.every(Number.isFinite));
+    const width = good.length === 0 ? 0 : good[0]!.values.length / good[0]!.count;
+    return good.filter((run) => run.values.length / run.count === width);
+  };
+  return { elements: sound(rows.elements), form: sound(rows.form) };
+}
+
+/** How many there are of a kind without a gap. */
+export function unbroken(runs: readonly RowRun[]): number {
+  const rows = new OutcomeRows();
+  for (const run of runs) rows.add(run);
+  return rows.prefix;
+}
+
+function indexes(runs: readonly RowRun[]): Set<number> {
+  return new Set(runs.flatMap(({ from, count }) => Array.from({ length: count }, (_, k) => from + k)));
+}
+
+/** The parts of a run of realisations that are not saved yet, in memory of their own. */
+function unsaved({ from, count, values }: RowRun, saved: ReadonlySet<number>): RowRun[] {
+  const width = values.length / count;
+  const parts: RowRun[] = [];
+  for (let k = 0; k < count; k++) {
+    if (saved.has(from + k)) continue;
+    let end = k;
+    while (end < count && !saved.has(from + end)) end++;
+    parts.push({ from: from + k, count: end - k, values: values.slice(k * width, end * width) });
+    k = end;
+  }
+  return parts;
+}

@@ -1,0 +1,104 @@
+import type { KeptRows } from "../jobs/batch.js";
+import type { RowRun } from "../jobs/outcome-rows.js";
+import type { RowKind } from "../jobs/threads.js";
+import { PRODUCT_VERSION } from "../results/index.js";
+import type { RunOrder } from "./run-order.js";
+
+/** A place on this machine where runs are kept. */
+export interface RunShelf {
+  /** keeps an order under the hash of its inputs; older ones beyond the last few are let go */
+  put(inputs: string, order: RunOrder): Promise<void>;
+  /** keeps further realisations of it */
+  add(inputs: string, kind: RowKind, runs: readonly RowRun[]): Promise<void>;
+  /** @returns all realisations of these inputs; empty where there are none */
+  rows(inputs: string): Promise<KeptRows>;
+  /** @returns the order that was kept last; undefined where there is none of this version */
+  latest(): Promise<{ readonly inputs: string; readonly order: RunOrder } | undefined>;
+  /** lets everything go */
+  clear(): Promise<void>;
+}
+
+interface KeptOrder {
+  readonly inputs: string;
+  readonly version: string;
+  readonly order: RunOrder;
+}
+
+interface KeptRun extends RowRun {
+  readonly inputs: string;
+  readonly kind: RowKind;
+}
+
+const NAME = "probeworth-runs";
+const ORDERS = "orders";
+const ROWS = "rows";
+/** Enough for a second thought and another workbook; a run takes some megabytes. */
+const MOST_RUNS = 4;
+
+/** The shelf in the browser's own storage, which belongs to this page's origin and never leaves the machine. */
+export function browserShelf(): RunShelf {
+  let opened: Promise<IDBDatabase> | undefined;
+  const base = (): Promise<IDBDatabase> => (opened ??= open());
+  return {
+    async put(inputs, order) {
+      const work = (await base()).transaction([ORDERS, ROWS], "readwrite");
+      const orders = work.objectStore(ORDERS);
+      orders.put({ inputs, version: PRODUCT_VERSION, order } satisfies KeptOrder);
+      const all = (await answer(orders.getAll())) as KeptOrder[];
+      const old = all.sort((a, b) => b.order.at - a.order.at).filter((kept, k) => k >= MOST_RUNS || kept.version !== PRODUCT_VERSION);
+      for (const kept of old) {
+        orders.delete(kept.inputs);
+        const keys = await answer(work.objectStore(ROWS).index("inputs").getAllKeys(kept.inputs));
+        for (const key of keys) work.objectStore(ROWS).delete(key);
+      }
+      await finished(work);
+    },
+    async add(inputs, kind, runs) {
+      const work = (await base()).transaction(ROWS, "readwrite");
+      for (const run of runs) work.objectStore(ROWS).add({ inputs, kind, from: run.from, count: run.count, values: run.values } satisfies KeptRun);
+      await finished(work);
+    },
+    async rows(inputs) {
+      const work = (await base()).transaction([ORDERS, ROWS]);
+      const kept = (await answer(work.objectStore(ORDERS).get(inputs))) as KeptOrder | undefined;
+      if (kept?.version !== PRODUCT_VERSION) return { elements: [], form: [] };
+      const runs = (await answer(work.objectStore(ROWS).index("inputs").getAll(inputs))) as KeptRun[];
+      const of = (kind: RowKind): RowRun[] => runs.filter((run) => run.kind === kind).sort((a, b) => a.from - b.from);
+      return { elements: of("elements"), form: of("form") };
+    },
+    async latest() {
+      const all = (await answer((await base()).transaction(ORDERS).objectStore(ORDERS).getAll())) as KeptOrder[];
+      const [last] = all.filter(({ version }) => version === PRODUCT_VERSION).sort((a, b) => b.order.at - a.order.at);
+      return last === undefined ? undefined : { inputs: last.inputs, order: last.order };
+    },
+    async clear() {
+      const work = (await base()).transaction([ORDERS, ROWS], "readwrite");
+      work.objectStore(ORDERS).clear();
+      work.objectStore(ROWS).clear();
+      await finished(work);
+    },
+  };
+}
+
+function open(): Promise<IDBDatabase> {
+  const request = indexedDB.open(NAME, 1);
+  request.onupgradeneeded = () => {
+    request.result.createObjectStore(ORDERS, { keyPath: "inputs" });
+    request.result.createObjectStore(ROWS, { autoIncrement: true }).createIndex("inputs", "inputs");
+  };
+  return answer(request);
+}
+
+function answer<T>(request: IDBRequest<T>): Promise<T> {
+  return new Promise((resolve, reject) => {
+    request.onsuccess = () => resolve(request.result);
+    request.onerror = () => reject(request.error ?? new Error("the storage gave no reason"));
+  });
+}
+
+function finished(work: IDBTransaction): Promise<void> {
+  return new Promise((resolve, reject) => {
+    work.oncomplete = () => resolve();
+    work.onabort = work.onerror = () => reject(work.error ?? new Error("the storage gave no reason"));
+  });
+}
