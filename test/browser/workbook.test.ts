@@ -163,6 +163,14 @@ it.each([
   expect(reason).toMatch(/[a-z]{3}.*[.?]$/);
 });
 
+it("forgets a cell's sentence when its next formula fails for another reason", async () => {
+  await sheet.showSheet("Site");
+  await sheet.type("F9", "=PROBE.TOTALCOST(Site,-1)");
+  expect((await sheet.read("F9")).reason).toContain("-1");
+  await sheet.type("F9", "=PROBE.TOTALCOST(Site,1.5)");
+  expect((await sheet.read("F9")).reason).not.toContain("-1");
+});
+
 it("never wrote to the console and never asked anything of another machine", () => {
   expect(sheet.log.complaints).toEqual([]);
   expect(sheet.log.requests.length).toBeGreaterThan(2);
