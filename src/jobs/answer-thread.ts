@@ -1,7 +1,8 @@
 import { DomainError } from "../engine/index.js";
 import type { BatchJob, LookAt } from "./batch.js";
 import { Ledger } from "./ledger.js";
-import type { RowKind, ThreadReply, ThreadRequest } from "./threads.js";
+import type { RowKind } from "./realisations.js";
+import type { ThreadReply, ThreadRequest } from "./threads.js";
 import { wordsOf } from "./words-of-failure.js";
 
 /** Computes one realisation from its index alone, whatever was computed before. */

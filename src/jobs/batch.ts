@@ -1,5 +1,4 @@
-import type { RowRun } from "./outcome-rows.js";
-import type { Totals } from "./work-list.js";
+import type { RowRun, Totals } from "./realisations.js";
 
 /** What the realisations so far come to. */
 export interface Look<Table> {

@@ -1,8 +1,7 @@
 import type { BatchJob, Look } from "./batch.js";
-import type { RowRun } from "./outcome-rows.js";
+import type { RowKind, RowRun, Totals } from "./realisations.js";
 import { LONGEST_TICK, LONGEST_WAIT } from "./thread-crew.js";
-import type { RowKind, Thread, ThreadReply, Threads } from "./threads.js";
-import type { Totals } from "./work-list.js";
+import type { Thread, ThreadReply, Threads } from "./threads.js";
 
 /** Whom the clerk answers. */
 export interface Desk<Table> {

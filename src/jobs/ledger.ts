@@ -1,7 +1,6 @@
 import type { Look, LookAt } from "./batch.js";
-import { OutcomeRows, type RowRun } from "./outcome-rows.js";
-import type { RowKind } from "./threads.js";
-import type { Totals } from "./work-list.js";
+import { OutcomeRows } from "./outcome-rows.js";
+import type { RowKind, RowRun, Totals } from "./realisations.js";
 
 /** The realisations of a run and what they come to. */
 export class Ledger<Table> {

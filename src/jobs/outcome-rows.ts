@@ -1,10 +1,6 @@
-/** Realisations that follow one another, as they are sent and kept. */
-export interface RowRun {
-  readonly from: number;
-  readonly count: number;
-  /** row by row, count times the same number of figures */
-  readonly values: Float64Array;
-}
+import type { RowRun } from "./realisations.js";
+
+export type { RowRun };
 
 /** The realisations of one kind by their index, in whatever order they finish. */
 export class OutcomeRows {

@@ -1,10 +1,11 @@
 import type { BatchEnd, BatchJob, BatchProgress, BatchRun, BatchSettings, KeptRows, Look } from "./batch.js";
 import { Clerk, type Desk, type Question } from "./clerk.js";
-import { OutcomeRows, type RowRun } from "./outcome-rows.js";
-import { ThreadCrew, type Chunk, type Office } from "./thread-crew.js";
-import type { RowKind, Threads } from "./threads.js";
+import { OutcomeRows } from "./outcome-rows.js";
+import type { Chunk, RowKind, RowRun, Totals } from "./realisations.js";
+import { ThreadCrew, type Office } from "./thread-crew.js";
+import type { Threads } from "./threads.js";
 import { timeInWords } from "./time-in-words.js";
-import { WorkList, type Totals } from "./work-list.js";
+import { WorkList } from "./work-list.js";
 import { WorkSpeed } from "./work-speed.js";
 
 const TICK = 200;

@@ -1,7 +1,7 @@
 import { estimate, growthWanted, nextBatch, prepareSimulation, simulateElements, simulateForm, type SimulationTable, type SimulationTarget, type SimulationTask } from "../engine/index.js";
 import type { RowMaker, Trade } from "./answer-thread.js";
 import type { BatchJob, Look, LookAt } from "./batch.js";
-import type { Totals } from "./work-list.js";
+import type { Totals } from "./realisations.js";
 
 /** A part of a larger run: its realisations by elements. */
 export interface PartTarget {

@@ -1,5 +1,5 @@
 import { base64Of, figuresOf } from "./base-64.js";
-import type { RowRun } from "./outcome-rows.js";
+import type { RowRun } from "./realisations.js";
 import { sha256 } from "./sha-256.js";
 import { damaged, requireState, StateError, type SimulationState } from "./simulation-state.js";
 

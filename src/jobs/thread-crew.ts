@@ -1,12 +1,5 @@
-import type { RowRun } from "./outcome-rows.js";
-import type { RowKind, Thread, ThreadReply, Threads } from "./threads.js";
-
-/** A piece of work: some realisations of one kind. */
-export interface Chunk {
-  readonly of: RowKind;
-  readonly from: number;
-  readonly count: number;
-}
+import type { Chunk, RowKind, RowRun } from "./realisations.js";
+import type { Thread, ThreadReply, Threads } from "./threads.js";
 
 /** Whom the crew works for. */
 export interface Office {

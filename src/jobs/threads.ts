@@ -1,9 +1,7 @@
 import type { BatchJob, Look } from "./batch.js";
-import type { RowRun } from "./outcome-rows.js";
-import type { Totals } from "./work-list.js";
+import type { RowKind, RowRun, Totals } from "./realisations.js";
 
-/** The two kinds of realisations: finite elements with the second-order form on the same ground, and the form alone. */
-export type RowKind = "elements" | "form";
+export type { RowKind };
 
 /**
  * What a thread is asked. One that computes gets "prepare" once and then "rows", each after the answer to the one before. One

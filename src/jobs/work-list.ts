@@ -1,13 +1,6 @@
 import type { OutcomeRows } from "./outcome-rows.js";
-import type { Chunk } from "./thread-crew.js";
-import type { RowKind } from "./threads.js";
+import type { Chunk, RowKind, Totals } from "./realisations.js";
 import type { WorkSpeed } from "./work-speed.js";
-
-/** How many realisations of each kind there shall be, counted from index 0. */
-export interface Totals {
-  readonly elements: number;
-  readonly form: number;
-}
 
 /** A piece of cheap realisations takes about this long: short enough for cancelling, long enough for the messages not to matter. */
 const CHUNK_MILLISECONDS = 80;

@@ -1,4 +1,4 @@
-import type { RowKind } from "./threads.js";
+import type { RowKind } from "./realisations.js";
 
 const REMEMBERED = 24;
 

@@ -2,7 +2,7 @@ import { stream } from "../../src/engine/random/stream.js";
 import { DomainError } from "../../src/engine/index.js";
 import type { RowMaker, Trade } from "../../src/jobs/answer-thread.js";
 import type { BatchJob, LookAt } from "../../src/jobs/batch.js";
-import type { RowKind } from "../../src/jobs/threads.js";
+import type { RowKind } from "../../src/jobs/realisations.js";
 
 /** What a thread is to suffer, and how often; the counter is shared by all threads and outlives them. */
 export interface Trap {
