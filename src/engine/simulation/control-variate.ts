@@ -8,6 +8,8 @@ export interface ControlledMean {
   readonly error: number;
   /** the mean is that of (elements - coefficient x form in the same ground) plus coefficient x the form's own mean */
   readonly coefficient: number;
+  /** least-squares slope of elements on the form, before shrinking: what the coefficient becomes with very many by the form alone */
+  readonly slope: number;
   /** of elements and form in the same ground, -1 to 1; undefined where one of them never varied */
   readonly correlation: number | undefined;
 }
@@ -27,15 +29,16 @@ export interface ControlledMean {
 export function controlledMean(elements: Float64Array, beside: Float64Array, alone: Float64Array): ControlledMean {
   const n = elements.length;
   const many = alone.length;
-  if (n < 2) return { mean: meanOf(alone), error: Math.sqrt(covarianceOf(alone, alone) / many), coefficient: 1, correlation: undefined };
+  if (n < 2) return { mean: meanOf(alone), error: Math.sqrt(covarianceOf(alone, alone) / many), coefficient: 1, slope: 1, correlation: undefined };
   const [own, form, joint] = [covarianceOf(elements, elements), covarianceOf(beside, beside), covarianceOf(elements, beside)];
   const correlation = own > 0 && form > 0 ? Math.max(-1, Math.min(1, joint / Math.sqrt(own * form))) : undefined;
-  if (many < 2) return { mean: meanOf(elements), error: Math.sqrt((own * caution(n, 1)) / n), coefficient: 0, correlation };
   const isFitted = n >= fewest && form > 0 && own > 0;
-  const coefficient = ((isFitted ? joint / form : 1) * many) / (n + many);
+  const slope = isFitted ? joint / form : 1;
+  if (many < 2) return { mean: meanOf(elements), error: Math.sqrt((own * caution(n, 1)) / n), coefficient: 0, slope, correlation };
+  const coefficient = (slope * many) / (n + many);
   const residual = own - 2 * coefficient * joint + coefficient ** 2 * form;
   const variance = (Math.max(residual, 0) * caution(n, isFitted ? 2 : 1)) / n + (coefficient ** 2 * covarianceOf(alone, alone)) / many;
-  return { mean: meanOf(elements) + coefficient * (meanOf(alone) - meanOf(beside)), error: Math.sqrt(variance), coefficient, correlation };
+  return { mean: meanOf(elements) + coefficient * (meanOf(alone) - meanOf(beside)), error: Math.sqrt(variance), coefficient, slope, correlation };
 }
 
 /**

@@ -41,8 +41,8 @@ export function estimate(task: SimulationTask, elements: readonly Float64Array[]
     const [foundation, failure, delay, surprises, overDesign, totalMetres, damaged, tooShort] = estimated[k].means;
     const best = indexOfLeast(totals, v * task.counts.length, task.counts.length);
     const seen = { elements: sumOf(samples[k].elements[6]), form: sumOf(samples[k].alone[6]) };
-    const { residual, total } = estimated[k];
-    const left = covarianceOf(residual, residual);
+    const { unexplained, total } = estimated[k];
+    const left = covarianceOf(unexplained, unexplained);
     return {
       variant: v, name: variant.name, count: holes, investigation: investigation[k],
       foundation: foundation.mean, failure: failure.mean, delay: delay.mean, total: totals[k],
@@ -69,6 +69,8 @@ export interface EstimatedRow {
   readonly means: readonly ControlledMean[];
   /** cost by elements, n */
   readonly total: Float64Array;
+  /** cost by elements less all that the form could explain, n */
+  readonly unexplained: Float64Array;
   /** cost by elements less what the form explains, n */
   readonly residual: Float64Array;
   /** what the form explains, in the realisations by the form alone, N */
@@ -80,16 +82,18 @@ export function estimateRow(samples: RowSamples): EstimatedRow {
   const means = outcomeColumns.map((_, c) => controlledMean(samples.elements[c], samples.beside[c], samples.alone[c]));
   const total = new Float64Array(samples.elements[0].length);
   const residual = new Float64Array(total.length);
+  const unexplained = new Float64Array(total.length);
   const explained = new Float64Array(samples.alone[0].length);
   for (const c of costColumns) {
-    const { coefficient } = means[c];
+    const { coefficient, slope } = means[c];
     for (let i = 0; i < residual.length; i++) {
       total[i] += samples.elements[c][i];
       residual[i] += samples.elements[c][i] - coefficient * samples.beside[c][i];
+      unexplained[i] += samples.elements[c][i] - slope * samples.beside[c][i];
     }
     for (let i = 0; i < explained.length; i++) explained[i] += coefficient * samples.alone[c][i];
   }
-  return { means, total, residual, explained };
+  return { means, total, unexplained, residual, explained };
 }
 
 /** Covariance of the rows' estimated costs, which share their realisations. */

@@ -96,7 +96,7 @@ function split(task: SimulationTask, elements: readonly Float64Array[], form: re
   table.forEach(({ chanceCheapest }, k) => {
     const share = count === 1 ? 1 : k === cheapest ? 0 : chanceCheapest + 1e-6;
     const rival = count === 1 ? undefined : rows[cheapest];
-    ofElements += share * varianceOfDifference((r) => r.residual, rows[k], rival);
+    ofElements += share * varianceOfDifference((r) => r.unexplained, rows[k], rival);
     ofForm += share * varianceOfDifference((r) => r.explained, rows[k], rival);
   });
   const best = ofElements > 0 ? Math.sqrt(ofForm / (ofElements * workRatio(task))) : mostForm;
