@@ -138,6 +138,14 @@ describe("tables that spill", () => {
     expect(outcomeAt(calculation, "A2").values).toEqual([[1]]);
   });
 
+  it("are read anew in cells that were blank when another formula read them", () => {
+    // B1 reads A8:A9 before A2, whose length it decides, fills them with 7 and 8
+    const calculation = calculationOf(bookOf({ Main: { B1: "=SUM(A8:A9)+8", A2: "=>SEQUENCE(B1)", C1: "=SUM(A8:A9)" } }));
+    expect(outcomeAt(calculation, "B1").values).toEqual([[8]]);
+    expect(outcomeAt(calculation, "A2").values).toHaveLength(8);
+    expect(outcomeAt(calculation, "C1").values).toEqual([[15]]);
+  });
+
   it("fill a fixed rectangle with repeats and #N/A", () => {
     const fixed = (address: string, formula: string, bottom: number, right: number): object => ({ [address]: { formula, placement: { kind: "fixed", area: { top: 0, left: 0, bottom, right } } } });
     expect(plain(outcomeAt(calculationOf(bookOf({ Main: fixed("A1", "{1,2}", 1, 2) as never })), "A1").values)).toEqual([[1, 2, "#N/A"], [1, 2, "#N/A"]]);
@@ -184,6 +192,8 @@ describe("errors and their reasons", () => {
     ["=SUM((A1,A2))", "joins several ranges with commas"],
     ["=A1:B2 B1:C3", "cells that two ranges share"],
     ["=SUM(Main:Other!A1)", "several sheets at once"],
+    ["=A0+1", "has no name A0"],
+    ["=XFE1+1", "has no name XFE1"],
     ["=5#", "the sign # stands after something that is not a cell"],
     ["=A1#", "spills no table"],
     ["=PROBE.TOTALCOSTS(1)", "No function named PROBE.TOTALCOSTS is known"],
@@ -207,11 +217,13 @@ describe("errors and their reasons", () => {
 describe("ranges", () => {
   it("reads whole columns in less than a second, however many", () => {
     const calculation = calculationOf(bookOf({ Main: { A1: 1, B9: 2, D500: 3 } }));
-    const began = performance.now();
+    // counted in the processor's time, because other programs may hold the machine
+    const began = process.cpuUsage();
     expect(calculation.formula("=SUM(A:D)", 0).values).toEqual([[6]]);
     expect(calculation.formula("=SUM(1:1048576)", 0).values).toEqual([[6]]);
     expect(calculation.formula("=SUMPRODUCT(A:A*B:B)", 0).values).toEqual([[0]]);
-    expect(performance.now() - began).toBeLessThan(1000);
+    const { user, system } = process.cpuUsage(began);
+    expect((user + system) / 1000).toBeLessThan(1000);
     expect(calculation.formula("=ROWS(A:A)", 0).values).toEqual([[1_048_576]]);
   });
 
