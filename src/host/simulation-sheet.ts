@@ -38,16 +38,18 @@ export function simulationSheet({ table, stamp, units, money, warnings }: Simula
   cells.push({ row: row++, column: 0, value: lengths.title, style: "section" });
   row = addTable(cells, lengths, row);
   addNotes(cells, lengths.notes, row);
-  return { name: "Simulation", cells, names, columnWidths: costs.columns.map((column) => (column.unit === "" ? 190 : 124)) };
+  return { name: "Simulation", cells, names, columnWidths: costs.columns.map((column) => Math.max(90, Math.round(LETTER * headOf(column).length) + 14)) };
 }
 
+/** Pixels of a bold letter of a head. */
+const LETTER = 7.8;
 /** The stamp's words are longer than the first column. */
 const STAMP_COLUMN = 3;
 
 function addTable(cells: PlannedCell[], { columns, rows }: ResultTable, from: number): number {
   columns.forEach((column, k) => {
     const isText = rows.length > 0 && typeof rows[0]![k] === "string";
-    cells.push({ row: from, column: k, value: column.unit === "" ? column.label : `${column.label} (${column.unit})`, style: isText ? "head" : "numberhead" });
+    cells.push({ row: from, column: k, value: headOf(column), style: isText ? "head" : "numberhead" });
   });
   rows.forEach((values, r) => {
     values.forEach((value, k) => {
@@ -56,6 +58,10 @@ function addTable(cells: PlannedCell[], { columns, rows }: ResultTable, from: nu
     });
   });
   return from + 1 + rows.length;
+}
+
+function headOf({ label, unit }: ResultColumn): string {
+  return unit === "" ? label : `${label} (${unit})`;
 }
 
 function addNotes(cells: PlannedCell[], notes: readonly string[], from: number): number {

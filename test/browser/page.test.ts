@@ -48,7 +48,7 @@ describe.each([
     await edge.focus();
     for (let k = 0; k < 20; k++) await page.page.keyboard.press("ArrowRight");
     expect(await edge.getAttribute("aria-valuenow")).toBe("320");
-    for (const view of ["Site", "Results", "Help"]) {
+    for (const view of ["Site", "Run", "Results", "Help"]) {
       await page.page.locator("#pane").getByRole("tab", { name: view }).click();
       await page.page.locator("#pane").getByRole("tabpanel", { name: view }).waitFor();
       if (view === "Results") await page.page.locator("#pane").getByText(/cost least|costs least/).first().waitFor();

@@ -108,6 +108,11 @@ describe("a run from the demonstration to the sheets", () => {
 
   it("writes tables and brief on new sheets and leaves the others alone", { timeout: WAIT }, async () => {
     const simulated = pane.getByRole("region", { name: "By simulation" });
+    const others = async (): Promise<string> => {
+      await practised.showSheet("Site");
+      return practised.columnText("B", 1, 6);
+    };
+    const before = await others();
     await practised.calculated(() => simulated.getByRole("button", { name: "Write the tables" }).click());
     expect(await pane.locator(".status").textContent()).toBe("Written on the new sheet Simulation.");
     await practised.showSheet("Simulation");
@@ -126,6 +131,8 @@ describe("a run from the demonstration to the sheets", () => {
     await page.locator("#chart svg").waitFor();
     await picture("run-brief-sheet");
     await practised.calculated(() => simulated.getByRole("button", { name: "Write the client brief" }).click());
+    await practised.showSheet("Client brief (2)");
+    expect(await others()).toBe(before);
     await practised.showSheet("Client brief (2)");
   });
 

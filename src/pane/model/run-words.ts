@@ -104,3 +104,13 @@ export function rowsOfWay(table: SimulationTable, variant: number): { readonly r
   const rows = table.rows.filter((row) => row.variant === variant);
   return { rows, cheapest: rows.reduce((best, row) => (row.total < best.total ? row : best)).count };
 }
+
+/**
+ * A bound on a chance, finer than a chance itself would be written.
+ *
+ * @param share   0 to 1
+ * @param writer  writes the number
+ */
+export function boundInWords(share: number, writer: NumberWriter): string {
+  return `${writer.plain(100 * share, share < 0.01 ? 2 : share < 0.1 ? 1 : 0)}\u00a0%`;
+}

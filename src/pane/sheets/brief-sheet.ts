@@ -4,7 +4,7 @@ import { IS, IS_NOT, SMALL_SUMS } from "../../results/cautions.js";
 import { resultIn, resultUnit } from "../../units/result-units.js";
 import { tableStep } from "../model/conclusion.js";
 import { countsInWords, holesInWords, sentenceCase, shorten, type NumberWriter } from "../model/numbers.js";
-import { rowsOfWay } from "../model/run-words.js";
+import { boundInWords, rowsOfWay } from "../model/run-words.js";
 import { inLines, rowOf, type Content } from "./cells.js";
 import { stampTable } from "../../results/index.js";
 import type { SimulationReport } from "./simulation-report.js";
@@ -80,7 +80,7 @@ export function briefInWords({ order, table }: Pick<SimulationReport, "order" | 
     tiesInWords(rows, best, client),
     best.failureChanceAtMost === undefined
       ? `With ${cheapest === 0 ? "none" : "these holes"} the chance of any damage to the building is ${writer.percent(best.failureChance)}, and ${writer.plain(best.surprises, 1)} of the ${piles} piles are expected to need more length than was built.`
-      : `No realised ground saw damage to the building, so its chance is below ${writer.percent(best.failureChanceAtMost)}; ${writer.plain(best.surprises, 1)} of the ${piles} piles are expected to need more length than was built.`,
+      : `No realised ground saw damage to the building, so its chance is below ${boundInWords(best.failureChanceAtMost, writer)}; ${writer.plain(best.surprises, 1)} of the ${piles} piles are expected to need more length than was built.`,
   ];
   return sentences.filter((sentence) => sentence !== "").join(" ");
 }

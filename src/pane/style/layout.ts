@@ -105,6 +105,7 @@ export const LAYOUT = `
 .probeworth .tick:focus-visible { outline: 2px solid var(--pane-focus); outline-offset: 2px; }
 .probeworth .beside { display: flex; align-items: center; gap: 6px; margin-inline-start: auto; font-size: 12px; }
 .probeworth .beside .field { width: 104px; text-align: end; font-variant-numeric: tabular-nums; }
+.probeworth .stop .field { width: 82px; }
 .probeworth .beside .field::placeholder { color: var(--pane-soft); opacity: 1; }
 .probeworth .field[aria-invalid="true"], .probeworth .choices[aria-invalid="true"] { outline: 2px solid var(--pane-refused); outline-offset: 1px; }
 .probeworth .ways { margin-top: 8px; border-bottom: 1px solid var(--pane-line); }

@@ -102,10 +102,10 @@ function fields(body: HTMLElement, site: Site, changed: () => void): { read: () 
   interaction.addEventListener("change", changed);
   const stop = element(
     "fieldset",
-    { class: "choices" },
+    { class: "choices stop" },
     element("legend", { class: "label" }, "Stop"),
     element("div", { class: "choice" }, element("label", { class: "choice-label" }, byPrecision, element("span", {}, "when sure to within")), element("span", { class: "beside" }, regret, money)),
-    element("div", { class: "choice" }, element("label", { class: "choice-label" }, byNumber, element("span", {}, "after a number of grounds")), element("span", { class: "beside" }, realisations)),
+    element("div", { class: "choice" }, element("label", { class: "choice-label" }, byNumber, element("span", {}, "after")), element("span", { class: "beside" }, realisations, "grounds")),
     element("p", { class: "hint" }, "Sure to within: what choosing the wrong count may be expected to cost. The sum proposed is the price of one more hole, because a doubt that costs less is not worth a hole."),
   );
   body.replaceChildren(

@@ -4,7 +4,7 @@ import { agreementInWords } from "../model/agreement.js";
 import { conclude, tableStep } from "../model/conclusion.js";
 import { SHOWN_PERCENTILES, type TextTable } from "../model/lengths.js";
 import { shorten, type NumberWriter } from "../model/numbers.js";
-import { groundsInWords, rowsOfWay, surenessInWords, waysOf } from "../model/run-words.js";
+import { boundInWords, groundsInWords, rowsOfWay, surenessInWords, waysOf } from "../model/run-words.js";
 import { button } from "../parts/button.js";
 import { element, freshId } from "../parts/element.js";
 import { textTable } from "../parts/text-table.js";
@@ -120,7 +120,7 @@ function figuresOf(table: SimulationTable, variant: number, quick: readonly Coun
   ];
   const lines = rows.map((row) => {
     const same = quick?.find(({ count }) => count === row.count);
-    const chance = row.failureChanceAtMost === undefined ? writer.percent(row.failureChance) : `none seen, under ${writer.percent(row.failureChanceAtMost).replace(/^under /, "")}`;
+    const chance = row.failureChanceAtMost === undefined ? writer.percent(row.failureChance) : `none seen, under ${boundInWords(row.failureChanceAtMost, writer)}`;
     return [
       String(row.count), money(row.total), money(2 * row.standardError), same === undefined ? "\u2013" : money(same.total), writer.percent(row.chanceWithin),
       money(row.investigation), money(row.foundation), money(row.failure), money(row.delay), chance,
