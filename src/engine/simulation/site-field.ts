@@ -1,22 +1,9 @@
-import type { Point } from "../investigation/hole-positions.js";
-import { pointRingTable, ringTables } from "../ground/ring-average.js";
 import type { SeparableTerm } from "../ground/separable-terms.js";
-import type { Plan } from "../decision/plan.js";
 import type { Stream } from "../random/stream.js";
 import { addProduct, covarianceRoot, type CovarianceRoot } from "./covariance-root.js";
-
-/** Where the ground is looked at. */
-export interface FieldPlaces {
-  readonly plan: Plan;
-  /** radii of the rings about every pile, m */
-  readonly rings: Float64Array;
-  /** depths that bound the cells over which rings are averaged, m */
-  readonly levelBounds: Float64Array;
-  /** holes of all counts and methods together */
-  readonly holes: readonly Point[];
-  /** depths at which any hole is read, m */
-  readonly readingDepths: Float64Array;
-}
+import { normalSource } from "./normal-source.js";
+import { depthCovariance, planCovariances, type FieldPlaces } from "./place-covariance.js";
+import { addRowProducts, fullness, orderedRows, type OrderedRows } from "./ordered-rows.js";
 
 /** One realised ground: a field of mean 0 and variance 1 at every point. */
 export interface DrawnField {
@@ -37,11 +24,17 @@ export interface SiteField extends DrawnField {
   draw(numbers: (part: number) => Stream): void;
 }
 
+/** Roots of one term. Well-filled ones are written out, because then a blocked product is twice as fast as a sparse one. */
 interface TermRoots {
   readonly scale: number;
   readonly plan: CovarianceRoot;
   readonly depth: CovarianceRoot;
+  /** rings and cells, holes and reading depths: plan and depth rows of each, written out; undefined for roots that are mostly empty */
+  readonly written: readonly { readonly plan: OrderedRows; readonly depth: OrderedRows }[] | undefined;
 }
+
+/** Below this share of entries a root is left sparse. */
+const wellFilled = 0.4;
 
 /**
  * The joint normal law of all ring means under the piles and all points of the holes, exact for a sum of products of a plan and a
@@ -53,28 +46,41 @@ interface TermRoots {
 export function siteField(terms: readonly SeparableTerm[], places: FieldPlaces): SiteField {
   const { plan, rings, levelBounds, holes, readingDepths } = places;
   const ringCount = plan.piles.length * rings.length;
+  const rows = ringCount + holes.length;
   const cells = levelBounds.length - 1;
   const depths = readingDepths.length;
-  const roots: TermRoots[] = planCovariances(terms, places).map((covariance, t) => ({
-    scale: Math.sqrt(terms[t].weight),
-    plan: covarianceRoot(covariance, ringCount + holes.length, ringCount),
-    depth: covarianceRoot(depthCovariance(terms[t], levelBounds, readingDepths), cells + depths, cells),
-  }));
-  const most = (of: (root: TermRoots) => number): number => roots.reduce((max, root) => Math.max(max, of(root)), 0);
-  const wide = most((r) => r.plan.columnCount);
-  const normals = new Float64Array(most((r) => r.depth.columnCount) * wide);
+  const levels = cells + depths;
+  const roots = planCovariances(terms, places).map((covariance, t): TermRoots => {
+    const ofPlan = covarianceRoot(covariance, rows, ringCount);
+    const ofDepth = covarianceRoot(depthCovariance(terms[t], levelBounds, readingDepths), levels, cells);
+    const written = [
+      { plan: orderedRows(ofPlan, 0, ringCount, ofPlan.firstColumns), depth: orderedRows(ofDepth, 0, cells, ofDepth.firstColumns) },
+      { plan: orderedRows(ofPlan, ringCount, rows, ofPlan.columnCount), depth: orderedRows(ofDepth, cells, levels, ofDepth.columnCount) },
+    ];
+    // The rings decide for the holes too: what is drawn under the piles must not depend on where holes stand.
+    const isFull = Math.min(fullness(written[0].plan), fullness(written[0].depth)) > wellFilled;
+    return { scale: Math.sqrt(terms[t].weight), plan: ofPlan, depth: ofDepth, written: isFull ? written : undefined };
+  });
+  const wide = roots.reduce((most, { plan: { columnCount } }) => Math.max(most, columnCount), 0);
+  const high = roots.reduce((most, { depth: { columnCount } }) => Math.max(most, columnCount), 0);
+  const normals = new Float64Array(high * wide);
   const byDepth = new Float64Array(Math.max(cells, depths) * wide);
   const turned = new Float64Array(Math.max(cells, depths) * wide);
   const underPiles = new Float64Array(ringCount * cells);
   const inHoles = new Float64Array(holes.length * depths);
 
-  /** Adds one term to rows of the plan at rows of the depth. */
-  const add = (root: TermRoots, planRows: [number, number], depthRows: [number, number], planColumns: number, out: Float64Array): void => {
-    const high = depthRows[1] - depthRows[0];
-    byDepth.fill(0, 0, high * planColumns);
-    addProduct(root.depth, depthRows[0], depthRows[1], normals, root.plan.columnCount, root.scale, byDepth, planColumns);
-    for (let i = 0; i < high; i++) for (let q = 0; q < planColumns; q++) turned[q * high + i] = byDepth[i * planColumns + q];
-    addProduct(root.plan, planRows[0], planRows[1], turned, high, 1, out, high);
+  const addFull = (root: TermRoots, part: { plan: OrderedRows; depth: OrderedRows }, out: Float64Array): void => {
+    const { columns } = part.plan;
+    byDepth.fill(0, 0, part.depth.order.length * columns);
+    addRowProducts(part.depth, normals, columns, root.depth.columnCount, root.scale, byDepth);
+    addRowProducts(part.plan, byDepth, part.depth.order.length, columns, 1, out);
+  };
+  const addSparse = (root: TermRoots, planRows: [number, number], depthRows: [number, number], columns: number, out: Float64Array): void => {
+    const count = depthRows[1] - depthRows[0];
+    byDepth.fill(0, 0, count * columns);
+    addProduct(root.depth, depthRows[0], depthRows[1], normals, root.plan.columnCount, root.scale, byDepth, columns);
+    for (let i = 0; i < count; i++) for (let q = 0; q < columns; q++) turned[q * count + i] = byDepth[i * columns + q];
+    addProduct(root.plan, planRows[0], planRows[1], turned, count, 1, out, count);
   };
   return {
     underPiles,
@@ -82,65 +88,26 @@ export function siteField(terms: readonly SeparableTerm[], places: FieldPlaces):
     draw(numbers) {
       underPiles.fill(0);
       inHoles.fill(0);
-      const parts = [0, 1, 2, 3].map(numbers);
+      const sources = [0, 1, 2, 3].map((part) => normalSource(numbers(part)));
       for (const root of roots) {
-        const { columnCount, firstColumns } = root.plan;
-        for (let j = 0; j < root.depth.columnCount; j++) {
-          const below = j < root.depth.firstColumns ? 0 : 2;
-          for (let q = 0; q < columnCount; q++) normals[j * columnCount + q] = parts[below + (q < firstColumns ? 0 : 1)].normal();
+        const { plan: p, depth: d, written } = root;
+        // Normals by plan column and depth column, in blocks of the first and the other columns; each block has a source of its own.
+        const [outer, inner] = written === undefined ? [d, p] : [p, d];
+        for (let o = 0; o < outer.columnCount; o++) {
+          const o1 = o < outer.firstColumns ? 0 : 1;
+          const source = (i1: number): number => (written === undefined ? 2 * o1 + i1 : o1 + 2 * i1);
+          const row = o * inner.columnCount;
+          sources[source(0)].fill(normals, row, row + inner.firstColumns);
+          sources[source(1)].fill(normals, row + inner.firstColumns, row + inner.columnCount);
         }
-        add(root, [0, ringCount], [0, cells], firstColumns, underPiles);
-        if (inHoles.length > 0) add(root, [ringCount, ringCount + holes.length], [cells, cells + depths], columnCount, inHoles);
+        if (written === undefined) {
+          addSparse(root, [0, ringCount], [0, cells], p.firstColumns, underPiles);
+          if (inHoles.length > 0) addSparse(root, [ringCount, rows], [cells, levels], p.columnCount, inHoles);
+        } else {
+          addFull(root, written[0], underPiles);
+          if (inHoles.length > 0) addFull(root, written[1], inHoles);
+        }
       }
     },
   };
-}
-
-/** Covariance of the depth part between cells, by averages, and reading depths, by points: cells first. */
-function depthCovariance(term: SeparableTerm, bounds: Float64Array, points: Float64Array): Float64Array {
-  const cells = bounds.length - 1;
-  const n = cells + points.length;
-  const middle = (i: number): number => (i < cells ? (bounds[i] + bounds[i + 1]) / 2 : points[i - cells]);
-  const thickness = (i: number): number => (i < cells ? bounds[i + 1] - bounds[i] : 0);
-  const out = new Float64Array(n * n);
-  for (let i = 0; i < n; i++) {
-    for (let j = 0; j <= i; j++) out[i * n + j] = out[j * n + i] = term.verticalCellAverage(middle(i) - middle(j), thickness(i), thickness(j));
-  }
-  return out;
-}
-
-/** Distances looked up at a time: what depends on lengths only is kept between the terms, and must stay small. */
-const atATime = 64;
-
-/** Covariance of each term's plan part between the rings of all piles and the holes: rings pile by pile, then holes. */
-function planCovariances(terms: readonly SeparableTerm[], { plan, rings, holes }: FieldPlaces): Float64Array[] {
-  const piles = plan.piles.length;
-  const nr = rings.length;
-  const ringCount = piles * nr;
-  const n = ringCount + holes.length;
-  const out = terms.map(() => new Float64Array(n * n));
-  for (let start = 0; start < plan.distances.length; start += atATime) {
-    const distances = plan.distances.slice(start, start + atATime);
-    terms.forEach((term, t) => {
-      const table = ringTables(term.plan, rings, distances);
-      for (let i = 0; i < piles; i++) {
-        for (let j = 0; j < piles; j++) {
-          const d = plan.distanceOf[i * piles + j] - start;
-          if (d < 0 || d >= distances.length) continue;
-          for (let r = 0; r < nr; r++) for (let s = 0; s < nr; s++) out[t][(i * nr + r) * n + j * nr + s] = table[(d * nr + r) * nr + s];
-        }
-      }
-    });
-  }
-  const away = Float64Array.from(holes.flatMap((hole) => plan.piles.map((p) => Math.hypot(p.x - hole.x, p.y - hole.y))));
-  terms.forEach((term, t) => {
-    const matrix = out[t];
-    const seen = holes.length === 0 ? away : pointRingTable(term.plan, rings, away);
-    for (let h = 0; h < holes.length; h++) {
-      const row = ringCount + h;
-      for (let k = 0; k < ringCount; k++) matrix[row * n + k] = matrix[k * n + row] = seen[h * ringCount + k];
-      for (let g = 0; g <= h; g++) matrix[row * n + ringCount + g] = matrix[(ringCount + g) * n + row] = term.plan(Math.hypot(holes[h].x - holes[g].x, holes[h].y - holes[g].y));
-    }
-  });
-  return out;
 }

@@ -35,6 +35,8 @@ describe("a slice of one realised ground", () => {
     expect(Math.abs(found.mean - (Math.log(mean) - sigma2 / 2))).toBeLessThan(tolerance.mean);
     expect(Math.abs(found.variance - sigma2)).toBeLessThan(tolerance.variance);
     expect(Math.abs(found.covariance - rho * sigma2)).toBeLessThan(tolerance.variance);
+    // two points of one row: rows and columns are not taken for one another
+    expect(Math.abs(moments(site, grid, 0, 1, count).covariance - Math.exp(-h) * sigma2)).toBeLessThan(tolerance.variance / 2);
   });
 
   it("moves as a whole with the regional level", () => {
