@@ -116,16 +116,16 @@ it("says in a sentence why a cell cannot be priced, and passes it on to the cell
   await sheet.showSheet("Site");
   const row = await rowOf("Price per hole");
   const price = await sheet.number(`B${row}`);
-  await sheet.type("F4", "=PROBE.TOTALCOST(Site,2)");
-  await sheet.type("F6", "=F4*2");
+  await sheet.type("F10", "=PROBE.TOTALCOST(Site,2)");
+  await sheet.type("F11", "=F10*2");
   await sheet.clear(`B${row}`);
-  const own = await sheet.read("F4");
+  const own = await sheet.read("F10");
   expect(own.value).toBe("#VALUE!");
   expect(own.reason).toMatch(/Price per hole.*blank/i);
   expect(own.reason).toContain(String(row));
-  const behind = await sheet.read("F6");
+  const behind = await sheet.read("F11");
   expect(behind.value).toBe("#VALUE!");
-  expect(behind.reason).toContain("From F4:");
+  expect(behind.reason).toContain("From F10:");
   await sheet.picture("error-sentence");
   await sheet.showSheet("Bid");
   expect((await sheet.read("E17")).reason).toMatch(/Price per hole/);
@@ -139,7 +139,7 @@ it("says in a sentence why a cell cannot be priced, and passes it on to the cell
   expect(await sheet.columnText("D", 3, 80)).toMatch(/blank/i);
   await sheet.showSheet("Site");
   await sheet.type(`B${row}`, String(price));
-  expect(await sheet.read("F4")).toMatchObject({ reason: "" });
+  expect(await sheet.read("F10")).toMatchObject({ reason: "" });
 });
 
 it.each([

@@ -87,7 +87,7 @@ export class PracticePage {
     await this.page.waitForFunction((wanted) => document.getElementById("cell-place")?.textContent?.endsWith(`!${wanted}`), first);
   }
 
-  /** Types into a cell as at a keyboard and waits until everything that depends on it is calculated. */
+  /** Types into a cell as at a keyboard and waits until everything that depends on it is calculated. What the cell holds already is no change and would be waited for in vain. */
   async type(cell: string, text: string): Promise<void> {
     await this.select(cell);
     await this.calculated(async () => {
