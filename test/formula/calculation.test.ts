@@ -17,10 +17,11 @@ describe("the order of calculation", () => {
   });
 
   it("calculates formulas of the same wording that reach each other through their own place", () => {
-    // Row k holds k by construction: each takes the cell above and adds 1.
-    const same = '=INDIRECT("A"&(ROW()-1))+1';
+    // Each adds its row number to the cell above: 1, 1 + 2, 3 + 3, 6 + 4.
+    const same = '=SUM(INDIRECT("A"&(ROW()-1)),ROW())';
     const calculation = calculationOf(bookOf({ Main: { A1: 1, A2: same, A3: same, A4: same } }));
-    expect(outcomeAt(calculation, "A4").values).toEqual([[4]]);
+    expect(outcomeAt(calculation, "A4").values).toEqual([[10]]);
+    expect(outcomeAt(calculation, "A3").values).toEqual([[6]]);
   });
 
   it("keeps the sheet of a formula while another sheet's formula of the same wording is calculated", () => {

@@ -79,6 +79,8 @@ describe("a formula", () => {
     const [sum, lines] = line("=HSTACK(Bid!E15,SUM(Bid!E9:E14))").trim().split("\t").map(Number);
     expect(sum).toBe(lines);
     expect(sum).toBeGreaterThan(1000);
+    // the check rows fill the cells below their formula
+    expect(line("=COUNTA(Check!A3:A200)=ROWS(PROBE.CHECK(Site))")).toBe("TRUE\n");
   });
 });
 
