@@ -67,7 +67,7 @@ export const DELAY = [
   },
   {
     id: "foundShare", label: "Share found on site", section: "Delay", kind: "ratio", unit: "ratio", minimum: 0.001, maximum: 1, zero: "accepted", fallback: 0,
-    help: "Share of the surprises that is noticed while piling and put right by a longer pile; the rest settle. Blank or 0: none is noticed.",
+    help: "Chance that surprises are noticed while piling: then all of them are put right by longer piles, else all settle. Blank or 0: none is noticed.",
   },
 ] as const satisfies readonly InputEntry[];
 

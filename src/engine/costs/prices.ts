@@ -28,7 +28,7 @@ export interface Delay {
   readonly daysPerSurprise: number;
   /** a pile whose needed length exceeds its design length by more than this is a surprise, m */
   readonly surpriseTolerance: number;
-  /** share of the surprises that is found while piling and put right; the rest settle */
+  /** chance that surprises are noticed while piling: then all of them are put right, else all settle */
   readonly foundShare: number;
 }
 

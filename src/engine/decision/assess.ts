@@ -6,9 +6,10 @@ import { readingDepths } from "../investigation/reading-depths.js";
 import type { Assessment } from "./assessment.js";
 import { designedClasses, designLengths } from "./design-lengths.js";
 import { lnDesignValues, outerNodes } from "./design-law.js";
-import { expectedOutcome, type Outcome } from "./expected-outcome.js";
+import { drawnOutcome, type DrawnOutcome } from "./drawn-outcome.js";
 import { holeCovariance } from "./hole-covariance.js";
 import { preparedSite } from "./prepared-site.js";
+import { outcomeCosts, pricedOutcome } from "./priced-outcome.js";
 import type { Problem } from "./problem.js";
 import { Remembered } from "./remembered.js";
 
@@ -31,16 +32,17 @@ const outcomes = new Remembered<Assessment>(4000);
 export function assess(problem: Problem, count: number): Assessment {
   requireCount(count);
   return outcomes.get(`${count}${keyOf(problem)}`, () => {
-    const outcome = outcomeOf(problem, count, false);
+    const drawn = drawnOf(problem, count);
+    const priced = pricedOutcome(problem, drawn);
     const investigation = investigationPrice(problem, count);
-    const { foundation, failure, delay, failureChance, surprises, tooShortChance, totalMetres, samplingError } = outcome;
+    const { foundation, failure, delay, failureChance, surprises, totalMetres, samplingError } = priced;
     return {
       count, investigation, foundation, failure, delay,
       total: investigation + foundation + failure + delay,
       standardError: Math.hypot(samplingError, modelScatter * failure),
       failureChance,
       carbon: concreteCarbon(problem.prices, problem.piles.diameter, totalMetres),
-      surprises, tooShortChance, totalMetres,
+      surprises, tooShortChance: drawn.tooShortChance, totalMetres,
     };
   });
 }
@@ -62,7 +64,7 @@ export function investigationPrice(problem: Problem, count: number): number {
 export function contingency(problem: Problem, count: number, percentile: number): number {
   requireCount(count);
   requireDomain(percentile > 0 && percentile < 100, "Percentile", percentile, "above 0 and below 100");
-  const { costs, weights } = outcomeOf(problem, count, true);
+  const { costs, weights } = outcomeCosts(problem, drawnOf(problem, count));
   return weightedPercentile(costs, weights, percentile) - weightedPercentile(costs, weights, 50);
 }
 
@@ -136,12 +138,15 @@ export function pileLengthPercentile(problem: Problem, count: number, percentile
   return sampledLengths(problem, count)([percentile], (lengths) => lengths[pile - 1])[0];
 }
 
-function outcomeOf(problem: Problem, count: number, keep: boolean): Outcome {
-  const site = preparedSite(problem);
-  const law = site.design(count);
-  const holes = holeCovariance(site.model, site.layout(count), law);
-  return expectedOutcome(problem, site.model, holes, law, keep);
+/** What happens to the piles, remembered without prices: a sensitivity to prices or damage costs sums only. */
+function drawnOf(problem: Problem, count: number): DrawnOutcome {
+  return drawn.get(`${count}${physicalKey(problem)}`, () => {
+    const site = preparedSite(problem);
+    const law = site.design(count);
+    return drawnOutcome(problem, site.model, holeCovariance(site.model, site.layout(count), law), law);
+  });
 }
+const drawn = new Remembered<DrawnOutcome>(200);
 
 function requireCount(count: number): void {
   requireDomain(Number.isInteger(count) && count >= 0, "Number of holes", count, "a whole number, 0 or above");
@@ -151,5 +156,18 @@ const keys = new WeakMap<Problem, string>();
 function keyOf(problem: Problem): string {
   let key = keys.get(problem);
   if (key === undefined) keys.set(problem, (key = JSON.stringify(problem)));
+  return key;
+}
+
+const physicalKeys = new WeakMap<Problem, string>();
+/** Everything that what happens depends on: all but prices, building value, damage list and how large the share found is. */
+function physicalKey(problem: Problem): string {
+  let key = physicalKeys.get(problem);
+  if (key === undefined) {
+    const { ground, building, piles, investigation, delay, seed } = problem;
+    const { piles: plan, footprint, allowableSettlement } = building;
+    key = JSON.stringify([ground, plan, footprint, allowableSettlement, piles, investigation, delay.surpriseTolerance, delay.foundShare > 0, seed]);
+    physicalKeys.set(problem, key);
+  }
   return key;
 }

@@ -3,9 +3,11 @@ import type { Plan } from "./plan.js";
 import { quadraticWidth } from "./second-order-terms.js";
 import type { NodeMoments } from "./node-moments.js";
 
-/** What happens to surprises that are found while piling. */
+/**
+ * What happens to surprises where they are found while piling: all of them are lengthened. Found one by one, each by its own chance, they would
+ * stand beside neighbours left to settle, and finding more would triple the damage before it lowers it: crews that see one short pile look at the rest.
+ */
 export interface FoundSurprises {
-  readonly share: number;
   /** ln stiffness that makes the settlement allowable, one a pile */
   readonly needed: Float64Array;
   /** gain of E ln K from the design length to design length plus tolerance, and to the longest length, one a pile */
@@ -15,17 +17,17 @@ export interface FoundSurprises {
 
 /** Draws the largest angular distortion of a plan, one block of draws after another, in room that is made once. */
 export interface DistortionDraws {
-  /** largest distortion of each draw of the last block */
+  /** largest distortion of each draw of the last block, nothing found */
   readonly distortion: Float64Array;
-  /** how many surprises were found in each draw of the last block; zero where none is looked for */
-  readonly foundCount: Float64Array;
+  /** the same with all surprises found and lengthened, and how many they were; stale where none is looked for */
+  readonly foundDistortion: Float64Array;
+  readonly surprises: Float64Array;
   /**
    * Draws a block.
    *
    * @param moments  of the piles at the design values
-   * @param values   dimensions x block: a standard normal a pile for the ground, one a pile for the rest of the second-order term,
-   *   and where surprises are found a uniform a pile
-   * @param found    undefined where no surprise is found
+   * @param values   dimensions x block: a standard normal a pile for the ground, one a pile for the rest of the second-order term
+   * @param found    undefined where no surprise is looked for
    */
   draw(moments: NodeMoments, values: Float64Array, found: FoundSurprises | undefined): void;
 }
@@ -37,14 +39,17 @@ export function distortionDraws(plan: Plan, block: number): DistortionDraws {
   const lnStiffness = new Float64Array(block);
   const row = new Float64Array(block);
   const settlement = new Float64Array(n * block);
+  const lengthened = new Float64Array(n * block);
   const distortion = new Float64Array(block);
-  const foundCount = new Float64Array(block);
+  const foundDistortion = new Float64Array(block);
+  const surprises = new Float64Array(block);
   return {
     distortion,
-    foundCount,
+    foundDistortion,
+    surprises,
     draw(moments, values, found) {
       const { means, factor, residual } = moments;
-      foundCount.fill(0);
+      surprises.fill(0);
       xi.fill(0);
       for (let i = 0; i < n; i++) addRows(xi, i * block, factor, i * n, i + 1, values, block);
       for (let i = 0; i < n; i++) {
@@ -56,24 +61,30 @@ export function distortionDraws(plan: Plan, block: number): DistortionDraws {
         for (let m = 0; m < block; m++) settlement[at + m] = load * Math.exp(-lnStiffness[m]);
         if (found === undefined) continue;
         for (let m = 0; m < block; m++) {
-          if (lnStiffness[m] + found.toTolerance[i] >= found.needed[i] || values[(2 * n + i) * block + m] >= found.share) continue;
+          lengthened[at + m] = settlement[at + m];
+          if (lnStiffness[m] + found.toTolerance[i] >= found.needed[i]) continue;
           // Lengthened until the settlement is allowable, or to the longest length where that is not enough.
-          settlement[at + m] = load * Math.exp(-Math.min(found.needed[i], lnStiffness[m] + found.toLongest[i]));
-          foundCount[m]++;
+          lengthened[at + m] = load * Math.exp(-Math.min(found.needed[i], lnStiffness[m] + found.toLongest[i]));
+          surprises[m]++;
         }
       }
-      distortion.fill(0);
-      for (const pair of plan.pairs) {
-        const a = pair.first * block;
-        const b = pair.second * block;
-        const inverse = 1 / pair.distance;
-        for (let m = 0; m < block; m++) {
-          const d = Math.abs(settlement[a + m] - settlement[b + m]) * inverse;
-          if (d > distortion[m]) distortion[m] = d;
-        }
-      }
+      largestDistortion(plan, settlement, block, distortion);
+      if (found !== undefined) largestDistortion(plan, lengthened, block, foundDistortion);
     },
   };
+}
+
+function largestDistortion(plan: Plan, settlement: Float64Array, block: number, out: Float64Array): void {
+  out.fill(0);
+  for (const pair of plan.pairs) {
+    const a = pair.first * block;
+    const b = pair.second * block;
+    const inverse = 1 / pair.distance;
+    for (let m = 0; m < block; m++) {
+      const d = Math.abs(settlement[a + m] - settlement[b + m]) * inverse;
+      if (d > out[m]) out[m] = d;
+    }
+  }
 }
 
 /** Adds to a row of draws the rows of a table times as many factors, four at a time: each pass over the draws costs more than its sums. */

@@ -1,101 +1,76 @@
-import { damageShare } from "../costs/damage.js";
-import { foundationCost } from "../costs/prices.js";
 import { normalDistribution } from "../numerics/normal.js";
 import { gaussLegendre } from "../numerics/gauss-legendre.js";
 import { lnDesignValues, outerNodes, type DesignLaw } from "./design-law.js";
 import type { HoleCovariance } from "./hole-covariance.js";
 import { nodeMoments } from "./node-moments.js";
 import { chanceTooSoft, expectedLnStiffness, lengthLaws, trialLength, type LengthLaws, type TrialLength } from "./needed-length.js";
-import { damageThreshold, distortionDraws, type FoundSurprises } from "./node-draws.js";
+import { distortionDraws, type FoundSurprises } from "./node-draws.js";
 import { designLengths, softestAllowable } from "./design-lengths.js";
 import type { Plan } from "./plan.js";
 import type { Problem } from "./problem.js";
 import { standardDraws } from "./standard-draws.js";
 import type { SiteModel } from "./site-model.js";
 
-/** Blocks of draws whose scatter gives the standard error. */
-const replicates = 4;
-
-/** Expected outcome of one count, apart from the investigation itself. */
-export interface Outcome {
-  readonly foundation: number;
-  readonly failure: number;
-  readonly delay: number;
-  readonly failureChance: number;
-  readonly surprises: number;
-  readonly tooShortChance: number;
-  readonly totalMetres: number;
-  /** standard error of failure and delay together from the scatter of the draws, money */
-  readonly samplingError: number;
-  /** foundation + failure + delay of each draw and its weight; empty unless asked for */
-  readonly costs: Float64Array;
+/** What happens to the piles of one count, before any price is put to it: by node of the design value, and by draw of the ground in it. */
+export interface DrawnOutcome {
+  /** one a node, summing to 1 */
   readonly weights: Float64Array;
+  readonly drawsPerNode: number;
+  /** one a node: metres of all piles, expected surprises, metres by which they would be lengthened */
+  readonly metres: Float64Array;
+  readonly surprises: Float64Array;
+  readonly extensions: Float64Array;
+  /** nodes x draws: largest angular distortion with no surprise found */
+  readonly distortion: Float64Array;
+  /** nodes x draws: the same with all surprises found and lengthened, and how many they are; empty where none is looked for */
+  readonly foundDistortion: Float64Array;
+  readonly drawnSurprises: Float64Array;
+  readonly tooShortChance: number;
 }
 
 /**
- * Expected outcome by conditioning on the design value: an outer rule over it, and inside it the piles' ground by quasi-random draws.
+ * Outcome by conditioning on the design value: an outer rule over it, and inside it the piles' ground by quasi-random draws.
  *
- * @param problem  prices, damage, loads
+ * @param problem  ground, piles, loads, tolerance; prices, building value, damage list and the share found are not read
  * @param model    ground under the piles
  * @param holes    what the design values say of it
  * @param law      of the design values
- * @param keep     whether each draw's cost is kept
  */
-export function expectedOutcome(
-  problem: Problem, model: SiteModel, holes: HoleCovariance, law: DesignLaw, keep: boolean,
-): Outcome {
+export function drawnOutcome(problem: Problem, model: SiteModel, holes: HoleCovariance, law: DesignLaw): DrawnOutcome {
   const { plan } = model;
   const n = plan.piles.length;
-  const { building, delay, prices } = problem;
   const nodes = outerNodes(law, problem.seed);
   const { drawsPerNode } = nodes;
-  const kept = keep ? nodes.weights.length * drawsPerNode : 0;
-  const costs = new Float64Array(kept);
-  const weights = new Float64Array(kept);
-  const finds = delay.foundShare > 0;
-  const draws = standardDraws(n, finds, drawsPerNode, problem.seed);
-  const width = (finds ? 3 : 2) * n * drawsPerNode;
-  const { distortion, foundCount, draw } = distortionDraws(plan, drawsPerNode);
-  const threshold = damageThreshold(building.damage);
-  const needed = Float64Array.from(plan.piles, (p) => Math.log(p.load / building.allowableSettlement));
-  const sum = { foundation: 0, failure: 0, delay: 0, failureChance: 0, surprises: 0, tooShort: 0, metres: 0 };
-  const replicate = new Float64Array(replicates);
+  const count = nodes.weights.length;
+  const finds = problem.delay.foundShare > 0;
+  const draws = standardDraws(n, drawsPerNode, problem.seed);
+  const width = 2 * n * drawsPerNode;
+  const { distortion, foundDistortion, surprises: drawnSurprises, draw } = distortionDraws(plan, drawsPerNode);
+  const needed = Float64Array.from(plan.piles, (p) => Math.log(p.load / problem.building.allowableSettlement));
   const laws = lengthLaws(model);
-  for (let node = 0; node < nodes.weights.length; node++) {
-    const weight = nodes.weights[node];
+  const out = {
+    metres: new Float64Array(count), surprises: new Float64Array(count), extensions: new Float64Array(count),
+    distortion: new Float64Array(count * drawsPerNode),
+    foundDistortion: new Float64Array(finds ? count * drawsPerNode : 0), drawnSurprises: new Float64Array(finds ? count * drawsPerNode : 0),
+  };
+  let tooShortSampled = 0;
+  for (let node = 0; node < count; node++) {
     const normals = nodes.normals.subarray(node * law.size, (node + 1) * law.size);
     const { lengths, metres, allowable } = designLengths(problem, plan, lnDesignValues(law, normals), law.ofPile, "mean");
     const bend = law.bend === 0 ? 0 : (law.bend * normals[0]) / law.root[0];
     const moments = nodeMoments(model, holes, normals, lengths, bend);
-    const foundation = foundationCost(prices, n, metres);
-    sum.foundation += weight * foundation;
-    sum.metres += weight * metres;
-    if (!allowable) sum.tooShort += weight;
+    if (!allowable) tooShortSampled += nodes.weights[node];
     const { surprises, extension } = surprisesAt(problem, model, laws, lengths, (trial, i) => chanceTooSoft(trial, model.slopes.length, holes, i, normals), needed);
-    sum.surprises += weight * surprises;
-    const perFound = delay.daysPerSurprise * delay.dayCost;
-    const nodeDelay = delay.foundShare * (surprises * perFound + extension * prices.perPileMetre);
-    sum.delay += weight * nodeDelay;
+    out.metres[node] = metres;
+    out.surprises[node] = surprises;
+    out.extensions[node] = extension;
     draw(moments, draws.subarray(node * width, (node + 1) * width), finds ? foundSurprises(problem, moments.lengths, laws, needed) : undefined);
-    const each = surprises > 0 ? nodeDelay / (delay.foundShare * surprises || 1) : 0;
-    for (let m = 0; m < drawsPerNode; m++) {
-      const loss = distortion[m] > threshold ? building.value * damageShare(building.damage, distortion[m]) : 0;
-      const share = weight / drawsPerNode;
-      sum.failure += share * loss;
-      if (loss > 0) sum.failureChance += share;
-      replicate[Math.floor((m * replicates) / drawsPerNode)] += share * replicates * loss;
-      if (keep) {
-        costs[node * drawsPerNode + m] = foundation + loss + foundCount[m] * each;
-        weights[node * drawsPerNode + m] = share;
-      }
-    }
+    out.distortion.set(distortion, node * drawsPerNode);
+    if (!finds) continue;
+    out.foundDistortion.set(foundDistortion, node * drawsPerNode);
+    out.drawnSurprises.set(drawnSurprises, node * drawsPerNode);
   }
-  const mean = replicate.reduce((total, value) => total + value, 0) / replicates;
-  const scatter = replicate.reduce((total, value) => total + (value - mean) ** 2, 0) / (replicates * (replicates - 1));
-  return {
-    foundation: sum.foundation, failure: sum.failure, delay: sum.delay, failureChance: Math.min(sum.failureChance, 1), surprises: sum.surprises,
-    tooShortChance: tooShort(problem, plan, law, Math.min(sum.tooShort, 1)), totalMetres: sum.metres, samplingError: Math.sqrt(scatter), costs, weights,
-  };
+  return { ...out, weights: nodes.weights, drawsPerNode, tooShortChance: tooShort(problem, plan, law, Math.min(tooShortSampled, 1)) };
 }
 
 /** Chance that the longest length is not enough: in closed form for one design value, where few nodes would give it in steps. */
@@ -138,7 +113,6 @@ function foundSurprises(problem: Problem, lengths: Float64Array, laws: LengthLaw
   const { longest } = problem.piles;
   const gain = (i: number, length: number): number => expectedLnStiffness(laws, length) - expectedLnStiffness(laws, lengths[i]);
   return {
-    share: problem.delay.foundShare,
     needed,
     toTolerance: Float64Array.from({ length: n }, (_, i) => {
       const trial = lengths[i] + problem.delay.surpriseTolerance;
