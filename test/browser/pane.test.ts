@@ -21,7 +21,7 @@ describe("the Site view", () => {
   it("reads the block, says that all can be used, and draws as many holes as asked for", async () => {
     const { page, complaints } = await openPane(site);
     expect(await page.locator(".verdict").textContent()).toMatch(/^All \d+ inputs can be used\.$/);
-    const figure = page.locator("figure");
+    const figure = page.locator("figure").first();
     const piles = problem.building.piles.length;
     await expect.poll(() => figure.locator("svg.pane-plot g[aria-label=dot] circle, svg.pane-plot g[aria-label=dot] path").count()).toBe(piles + 2 * 4);
     await page.getByRole("spinbutton", { name: "Holes shown" }).fill("7");
@@ -179,6 +179,8 @@ describe("for everybody", () => {
     expect(await page.locator("details[open] .check").count()).toBeGreaterThan(5);
     for (let k = 0; k < 4; k++) await page.keyboard.press("Shift+Tab");
     await page.keyboard.press("ArrowRight");
+    expect(await tab(page, "Run").getAttribute("aria-selected")).toBe("true");
+    await page.keyboard.press("ArrowRight");
     expect(await tab(page, "Results").getAttribute("aria-selected")).toBe("true");
     await page.getByText("All piles together").waitFor({ timeout: 60_000 });
     await page.keyboard.press("Tab");
@@ -193,7 +195,7 @@ describe("for everybody", () => {
     ["light contrast theme", { colorScheme: "light", forcedColors: "active" }],
   ] as const)("every text stands out from its ground by 4.5 to 1 and nothing is cut off at 320 px: %s", async (name, options) => {
     const { page } = await openPane(site, options);
-    for (const view of ["Site", "Results", "Help"]) {
+    for (const view of ["Site", "Run", "Results", "Help"]) {
       if (view === "Results") await showResults(page);
       else await tab(page, view).click();
       await page.evaluate(() => {
@@ -248,11 +250,11 @@ describe("for everybody", () => {
   it("gives fingers room: targets of 44 px where the pointer is coarse, 24 px elsewhere", async () => {
     for (const [options, least] of [[{}, 24], [{ hasTouch: true, isMobile: true }, 44]] as const) {
       const { page } = await openPane(site, options);
-      for (const view of ["Site", "Results", "Help"]) {
+      for (const view of ["Site", "Run", "Results", "Help"]) {
         await tab(page, view).click();
         if (view === "Results") await page.getByText("All piles together").waitFor({ timeout: 60_000 });
         const small = await page.evaluate((height) => {
-          const targets = document.querySelectorAll<HTMLElement>(".probeworth :is([role=button], [role=tab], [role=slider], select, input, summary)");
+          const targets = document.querySelectorAll<HTMLElement>(".probeworth :is([role=button], [role=tab], [role=slider], select, input:not(.tick), .choice-label, summary)");
           return [...targets].filter((target) => target.offsetParent !== null && target.getBoundingClientRect().height < height - 0.5).map((target) => `${target.tagName} ${target.textContent?.slice(0, 20) ?? ""} ${target.getBoundingClientRect().height}`);
         }, least);
         expect(small).toEqual([]);

@@ -31,7 +31,11 @@ export function resultsView(store: ResultsStore, simulated: SimulatedSource, loc
     figures.hidden = state.table === undefined;
     figures.classList.toggle("old", state.old);
   });
-  return element("div", { class: "view" }, simulatedPanel(simulated.store, simulated.quick, simulated.actions, writer), runPanel(store), figures, cautionPanel());
+  const place = element("div", { class: "figures-of-results" });
+  simulated.store.subscribe(({ table }) => {
+    if (table !== undefined && place.childElementCount === 0) place.append(simulatedPanel(simulated.store, simulated.quick, simulated.actions, writer));
+  });
+  return element("div", { class: "view" }, place, runPanel(store), figures, cautionPanel());
 }
 
 function runPanel(store: ResultsStore): HTMLElement {

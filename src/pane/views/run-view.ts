@@ -44,7 +44,7 @@ function controlPanel(store: RunStore, read: () => ReturnType<ReturnType<typeof 
   const words = element("p", { class: "run-words" });
   const which = element("p", { class: "hint" });
   const changed = element("p", { class: "hint run-changed" }, "The site block has changed since this run was ordered. The run keeps its inputs, and its tables say so.");
-  const note = element("p", { class: "hint", role: "status" });
+  const note = element("p", { class: "hint", "aria-live": "polite" });
   const bar = element("fluent-progress-bar", { "aria-label": "Work done", min: 0, max: 1, value: 0 });
   store.subscribe((state) => {
     const goes = state.phase === "starting" || state.phase === "running" || state.phase === "stopping";

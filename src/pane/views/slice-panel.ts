@@ -30,7 +30,7 @@ export function slicePanel(store: SiteStore, pricing: Pick<Pricing, "section">, 
     element("li", {}, keySymbol("shaft"), "pile, as long as half of all designs"),
     element("li", {}, keySymbol("hole-line"), "hole; dashed: over 1 m before or behind"),
   );
-  const said = element("p", { class: "hint", role: "status" });
+  const said = element("p", { class: "hint", "aria-live": "polite" });
   const number = field("1", "1");
   const count = field(String(USUAL), "0");
   const figure = element("figure", { hidden: true }, picture, element("p", { class: "axis-title" }, "Young\u2019s modulus, MPa"), key, signs, words);
