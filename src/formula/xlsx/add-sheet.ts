@@ -67,7 +67,7 @@ function freeName(wanted: string, taken: readonly string[]): string {
   const known = new Set(taken.map((name) => name.toLowerCase()));
   for (let number = 1; ; number++) {
     const ending = number === 1 ? "" : ` (${number})`;
-    const name = wanted.slice(0, LONGEST_NAME - ending.length) + ending;
+    const name = wanted.slice(0, LONGEST_NAME - ending.length).trimEnd() + ending;
     if (!known.has(name.toLowerCase())) return name;
   }
 }
