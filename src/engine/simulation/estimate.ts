@@ -10,6 +10,9 @@ import { investigationOf, type SimulationTask } from "./task.js";
 /** Percentiles at which mean pile lengths are given. */
 export const lengthPercentiles: readonly number[] = Array.from({ length: 19 }, (_, k) => 5 * (k + 1));
 
+/** A share of a variance that is rounding alone. */
+const nothing = 1e-12;
+
 /** Columns whose sum is the cost of an outcome. */
 const costColumns = [0, 1, 2];
 
@@ -42,6 +45,7 @@ export function estimate(task: SimulationTask, elements: readonly Float64Array[]
     const best = indexOfLeast(totals, v * task.counts.length, task.counts.length);
     const seen = { elements: sumOf(samples[k].elements[6]), form: sumOf(samples[k].alone[6]) };
     const { unexplained, total } = estimated[k];
+    const plain = covarianceOf(total, total);
     const left = covarianceOf(unexplained, unexplained);
     return {
       variant: v, name: variant.name, count: holes, investigation: investigation[k],
@@ -58,7 +62,7 @@ export function estimate(task: SimulationTask, elements: readonly Float64Array[]
       chanceWithin: within[v].chances[k - v * task.counts.length],
       notDistinguishable: totals[k] - totals[best] <= 2 * errorOfDifference(covariance, count, k, best),
       correlation: failure.correlation,
-      varianceCut: left > 0 ? covarianceOf(total, total) / left : undefined,
+      varianceCut: left > nothing * plain ? plain / left : undefined,
     };
   });
   return { rows, cheapest, expectedRegret: all.regrets[cheapest], elements: elements.length, form: form.length };
