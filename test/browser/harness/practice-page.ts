@@ -129,6 +129,13 @@ export class PracticePage {
     await this.calculated(() => this.page.keyboard.press("Control+V"));
   }
 
+  /** Reads the texts of a column, from one row to another, in lines. */
+  async columnText(column: string, first: number, last: number): Promise<string> {
+    const lines: string[] = [];
+    for (let row = first; row <= last; row++) lines.push((await this.read(`${column}${row}`)).value);
+    return lines.join("\n");
+  }
+
   /** Mean brightness, 0 to 255, of a blank part of the sheet: the grid is a picture and tells its look in no other way. */
   async brightnessOfGrid(): Promise<number> {
     const box = await this.page.locator("#grid canvas").last().boundingBox();
