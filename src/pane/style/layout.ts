@@ -77,7 +77,7 @@ export const LAYOUT = `
 .probeworth .run-words { flex: 1; font-size: 12px; color: var(--pane-soft); }
 .probeworth .run-words.refusal { color: var(--pane-ink); }
 .probeworth .run fluent-progress-bar { margin-top: 8px; width: 100%; }
-.probeworth .figures-of-results { display: contents; }
+.probeworth .figures-of-results, .probeworth .simulated-place { display: contents; }
 .probeworth .figures-of-results.old > section { opacity: .62; }
 .probeworth .answer-head { display: flex; align-items: center; gap: 12px; margin-bottom: 10px; }
 .probeworth .numeral { flex: none; min-width: 48px; padding: 2px 10px; border-radius: 6px; background: var(--pane-accent-wash); color: var(--pane-accent); font-size: 34px; line-height: 1.15; font-weight: 600; text-align: center; font-variant-numeric: tabular-nums; }
@@ -106,6 +106,7 @@ export const LAYOUT = `
 .probeworth .beside { display: flex; align-items: center; gap: 6px; margin-inline-start: auto; font-size: 12px; }
 .probeworth .beside .field { width: 104px; text-align: end; font-variant-numeric: tabular-nums; }
 .probeworth .stop .field { width: 82px; }
+.probeworth .stop .choice + .choice { margin-top: 4px; }
 .probeworth .beside .field::placeholder { color: var(--pane-soft); opacity: 1; }
 .probeworth .field[aria-invalid="true"], .probeworth .choices[aria-invalid="true"] { outline: 2px solid var(--pane-refused); outline-offset: 1px; }
 .probeworth .ways { margin-top: 8px; border-bottom: 1px solid var(--pane-line); }

@@ -64,7 +64,7 @@ function fields(body: HTMLElement, site: Site, changed: () => void): { read: () 
     return made;
   };
   const counts = field(usual.counts, { type: "text", id: freshId("counts"), autocomplete: "off" });
-  const prices = new Map(offeredMethods(site).map((method) => [method, field("", { type: "number", min: "0", step: "any", inputmode: "decimal", "aria-label": `Price per hole of ${method}, blank for the block's`, placeholder: "as in the block" })]));
+  const prices = new Map(offeredMethods(site).map((method) => [method, field("", { type: "number", min: "0", step: "any", inputmode: "decimal", "aria-label": `Price per hole of ${method}, blank for the block's`, placeholder: "block\u2019s" })]));
   const methods = choiceList(
     "Methods side by side",
     offeredMethods(site).map((method) => ({ value: method, text: method, beside: element("span", { class: "beside" }, element("span", { class: "label", "aria-hidden": "true" }, "per hole"), prices.get(method)!) })),

@@ -31,7 +31,7 @@ export function resultsView(store: ResultsStore, simulated: SimulatedSource, loc
     figures.hidden = state.table === undefined;
     figures.classList.toggle("old", state.old);
   });
-  const place = element("div", { class: "figures-of-results" });
+  const place = element("div", { class: "simulated-place" });
   simulated.store.subscribe(({ table }) => {
     if (table !== undefined && place.childElementCount === 0) place.append(simulatedPanel(simulated.store, simulated.quick, simulated.actions, writer));
   });
