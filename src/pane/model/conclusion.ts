@@ -1,5 +1,5 @@
 import type { CountRow } from "../../engine/index.js";
-import type { CostRow } from "./cost-drawing.js";
+import type { CostRow } from "./cost-row.js";
 import { countsInWords, holesInWords, moneyStep, sentenceCase, shorten, type NumberWriter } from "./numbers.js";
 
 /** What the table of counts says, in sentences for a person who has to act on it. */

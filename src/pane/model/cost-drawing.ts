@@ -1,9 +1,6 @@
-import type { CountRow } from "../../engine/index.js";
 import { tableStep } from "./conclusion.js";
+import type { CostRow } from "./cost-row.js";
 import { countsInWords, type NumberWriter } from "./numbers.js";
-
-/** What the picture needs of a row of either table, the quick or the simulated. */
-export type CostRow = Pick<CountRow, "count" | "investigation" | "foundation" | "failure" | "delay" | "total" | "standardError" | "notDistinguishable">;
 
 /** The parts of the total, from the base of the stack upwards: what the count hardly moves stands lowest. */
 const PARTS: readonly (readonly [name: string, amount: (row: CostRow) => number])[] = [

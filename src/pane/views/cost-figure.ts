@@ -1,4 +1,5 @@
-import { costDrawing, describeCosts, type CostDrawing, type CostRow } from "../model/cost-drawing.js";
+import { costDrawing, describeCosts, type CostDrawing } from "../model/cost-drawing.js";
+import type { CostRow } from "../model/cost-row.js";
 import { moneyAxis } from "../model/money-axis.js";
 import { shorten, type NumberWriter } from "../model/numbers.js";
 import { element } from "../parts/element.js";
