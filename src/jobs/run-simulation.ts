@@ -42,7 +42,7 @@ export function runPart(task: SimulationTask, from: number, to: number, settings
  *
  * @throws {TargetError} no sum above 0, or no whole number of realisations that a run can hold
  */
-export function requireTarget(target: SimulationTarget): void {
+function requireTarget(target: SimulationTarget): void {
   if ("regret" in target) {
     if (target.regret > 0 && target.regret < Infinity) return;
     throw new TargetError(`The precision is ${target.regret}; it must be a sum of money above 0: what choosing the wrong count may be expected to cost. The price of one hole is usual.`);

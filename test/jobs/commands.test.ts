@@ -6,6 +6,7 @@ import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { merge } from "../../src/formula/simulation/merge.js";
+import { progressText } from "../../src/formula/simulation/progress-line.js";
 import { simulate } from "../../src/formula/simulation/simulate.js";
 import { readSimulateCall } from "../../src/formula/simulation/simulate-call.js";
 import type { Terminal } from "../../src/formula/simulation/terminal.js";
@@ -177,6 +178,12 @@ describe("parts of a run", () => {
     expect(stateOfText(readFileSync(at("begun.part"), "utf8"))).toEqual(state);
     expect(await part(1, 3, "b.part")).toEqual({ code: 2, out: "", err: `${at("b.part")} holds realisations 2 to 3 of a run; give another file.\n` });
   }, 60_000);
+});
+
+it("says in one line how far the run is, how long it takes and what it found so far", () => {
+  const progress = { phase: "computing", done: { elements: 12, form: 1200 }, wanted: { elements: 64, form: 3400 }, share: 0.1899, secondsLeft: 150, table: undefined, threads: 2, notice: "" } as const;
+  expect(progressText(progress)).toBe(" 18 %: 12 of 64 realisations by finite elements, 1,200 of 3,400 by the form, 3 minutes left");
+  expect(progressText({ ...progress, secondsLeft: undefined, phase: "preparing" })).toBe("Preparing the piles and the ground ...");
 });
 
 describe("the words after the command", () => {

@@ -11,7 +11,7 @@ export function smallSiteRows(changes: Readonly<Record<string, string | number>>
 }
 
 /** The small site, read. */
-export function smallSite(changes: Readonly<Record<string, string | number>> = {}): Site {
+function smallSite(changes: Readonly<Record<string, string | number>> = {}): Site {
   return parseSite(smallSiteRows(changes));
 }
 

@@ -1,0 +1,63 @@
+import { nodeThreads } from "../../../src/formula/simulation/node-threads.js";
+import { simulationThreads } from "../../../src/formula/simulation/simulate.js";
+import type { SimulationTask } from "../../../src/engine/index.js";
+import { parseSite, templateRows } from "../../../src/inputs/index.js";
+import { runBatches } from "../../../src/jobs/run-batches.js";
+import { runPart } from "../../../src/jobs/run-simulation.js";
+
+// What only whole runs show: two threads against one, how soon a run is cancelled, how often it tells, what it holds in memory.
+
+const ROUNDS = 3;
+const REALISATIONS = 60;
+
+const site = parseSite(templateRows());
+const task: SimulationTask = { variants: [{ name: site.method, problem: site.problem }], counts: Array.from({ length: 13 }, (_, k) => k), seed: site.problem.seed };
+const median = (values: readonly number[]): number => [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)]!;
+const say = (line: string): void => void process.stdout.write(`${line}\n`);
+
+/** Seconds that a part takes from its start to its end, preparing included. */
+async function seconds(workers: number): Promise<number> {
+  const begun = performance.now();
+  const run = runPart(task, 0, REALISATIONS, {}, simulationThreads(workers), () => undefined);
+  const { kind, message } = await run.end;
+  if (kind !== "done") throw new Error(message);
+  return (performance.now() - begun) / 1000;
+}
+
+/** Milliseconds from cancelling to the end, in the middle of realisations; and progress a second. */
+async function cancelled(): Promise<{ took: number; perSecond: number }> {
+  let pressed = 0;
+  let heard = 0;
+  const begun = performance.now();
+  const run = runPart(task, 0, REALISATIONS, {}, simulationThreads(2), ({ done }) => {
+    heard++;
+    if (done.elements < 10) return;
+    pressed = performance.now();
+    run.cancel();
+  });
+  await run.end;
+  return { took: performance.now() - pressed, perSecond: (1000 * heard) / (pressed - begun) };
+}
+
+/** Megabytes of the whole process, all threads, after so many rows of elements and four times as many of the form. */
+async function megabytes(rows: number): Promise<number> {
+  let most = 0;
+  const run = runBatches({ task: undefined, target: rows, first: 0, most: rows }, {}, nodeThreads(new URL("./wide-thread.ts", import.meta.url), 2), () => {
+    most = Math.max(most, process.memoryUsage.rss());
+  });
+  const { kind, message } = await run.end;
+  if (kind !== "done") throw new Error(message);
+  return Math.max(most, process.memoryUsage.rss()) / 2 ** 20;
+}
+
+const ratios: number[] = [];
+for (let round = 0; round < ROUNDS; round++) {
+  const [one, two] = [await seconds(1), await seconds(2)];
+  ratios.push(one / two);
+  say(`${REALISATIONS} realisations, 12 piles, 13 counts: one thread ${one.toFixed(1)} s, two ${two.toFixed(1)} s`);
+}
+say(`two threads against one: ${median(ratios).toFixed(2)} x, target 1.8 x on idle cores`);
+const ends = [await cancelled(), await cancelled(), await cancelled()];
+say(`cancelled within ${median(ends.map(({ took }) => took)).toFixed(1)} ms, target 200 ms; progress ${median(ends.map(({ perSecond }) => perSecond)).toFixed(1)} a second, target 4`);
+const [few, many] = [await megabytes(1_000), await megabytes(10_000)];
+say(`memory with 1,000 realisations ${few.toFixed(0)} MB, with 10,000 ${many.toFixed(0)} MB: ${((many - few) / 9).toFixed(1)} MB a thousand (each with four by the form, kept twice)`);
