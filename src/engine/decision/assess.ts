@@ -17,7 +17,7 @@ import { Remembered } from "./remembered.js";
  * Relative scatter of the fast failure cost about finite elements, and the part of it that does not cancel between two counts of
  * one site; see the accuracy table that the study command writes.
  */
-export const modelScatter = 0.02;
+const modelScatter = 0.02;
 
 const outcomes = new Remembered<Assessment>(4000);
 

@@ -11,7 +11,7 @@ import type { FamilyNode, PileFamily } from "./pile-family.js";
 /** Parts kept of the second-order form at each length. */
 export const ranks = 4;
 /** Groups of readings in depth that a hole's covariances are kept for. */
-export const readingGroups = 8;
+const readingGroups = 8;
 
 /**
  * Covariances of the unit field as the piles and holes of one ground structure see it, by horizontal distance:

@@ -7,7 +7,8 @@ import { lnStiffnessAt } from "./stiffness-curve.js";
 
 /**
  * What one realisation gives for one variant and count. Costs are money without the investigation, which is the same every time;
- * overDesign: metres beyond what the ground needed, of all piles; damaged, tooShort: 1 or 0.
+ * overDesign: metres beyond what the ground needed, of all piles; damaged: chance of any damage, since surprises are found or not;
+ * tooShort: 1 or 0.
  */
 export const outcomeColumns = ["foundation", "failure", "delay", "surprises", "overDesign", "totalMetres", "damaged", "tooShort"] as const;
 
@@ -18,8 +19,6 @@ export interface RealisedPiles {
   readonly lnStiffness: Float64Array;
   /** ln of the shortest length that is stiff enough, one a pile; Infinity where none is */
   readonly neededLog: Float64Array;
-  /** one uniform a pile: below the found share a surprise is found on site */
-  readonly uniforms: Float64Array;
 }
 
 /** What is built. */
@@ -34,9 +33,9 @@ export interface BuiltPiles {
 /**
  * Prices one realisation of one variant and count.
  *
- * A pile whose needed length exceeds the built one by more than the tolerance is a surprise; a found one is lengthened until its
- * settlement is allowable, or to the longest length. Piles at the longest length cannot be lengthened: nothing on site tells them
- * from the others.
+ * A pile whose needed length exceeds the built one by more than the tolerance is a surprise. Surprises are found together, by the chance
+ * `foundShare`, or not at all; found ones are lengthened until their settlement is allowable, or to the longest length. Both cases are priced and
+ * weighed. Piles at the longest length cannot be lengthened: nothing on site tells them from the others.
  *
  * @param interaction  how piles settle each other, or undefined where each stands alone
  * @param out          receives the columns from `at` on
@@ -44,9 +43,10 @@ export interface BuiltPiles {
 export function priceOutcome(
   { building, delay, prices, piles }: Problem, plan: Plan, built: BuiltPiles, realised: RealisedPiles, interaction: Interaction | undefined, out: Float64Array, at: number,
 ): void {
-  const { logLengths, lnStiffness, neededLog, uniforms } = realised;
+  const { logLengths, lnStiffness, neededLog } = realised;
   const n = built.lengths.length;
   const settlements = new Float64Array(n);
+  const lengthened = new Float64Array(n);
   const lengths = Float64Array.from(built.lengths);
   let delayCost = 0;
   let surprises = 0;
@@ -58,28 +58,30 @@ export function priceOutcome(
     const trial = length + delay.surpriseTolerance;
     const needs = Math.log(load / building.allowableSettlement);
     if (needed < length) overDesign += length - needed;
-    let ln = lnStiffnessAt(logLengths, lnStiffness, i, Math.log(length));
-    if (trial < piles.longest && lnStiffnessAt(logLengths, lnStiffness, i, Math.log(trial)) < needs) {
-      surprises++;
-      if (uniforms[i] < delay.foundShare) {
-        // Softer than needed at the trial length yet stiff enough at a shorter one: the curve dips, and the rig goes on to the end.
-        lengths[i] = needed > trial && needed <= piles.longest ? needed : piles.longest;
-        ln = lnStiffnessAt(logLengths, lnStiffness, i, Math.log(lengths[i]));
-        delayCost += delay.daysPerSurprise * delay.dayCost + (lengths[i] - length) * prices.perPileMetre;
-      }
-    }
-    settlements[i] = load * Math.exp(-ln);
+    settlements[i] = lengthened[i] = load * Math.exp(-lnStiffnessAt(logLengths, lnStiffness, i, Math.log(length)));
+    if (trial >= piles.longest || lnStiffnessAt(logLengths, lnStiffness, i, Math.log(trial)) >= needs) continue;
+    surprises++;
+    // Softer than needed at the trial length yet stiff enough at a shorter one: the curve dips, and the rig goes on to the end.
+    lengths[i] = needed > trial && needed <= piles.longest ? needed : piles.longest;
+    lengthened[i] = load * Math.exp(-lnStiffnessAt(logLengths, lnStiffness, i, Math.log(lengths[i])));
+    delayCost += delay.daysPerSurprise * delay.dayCost + (lengths[i] - length) * prices.perPileMetre;
   }
-  const settled = interaction === undefined ? settlements : interaction.settle(settlements, lengths);
-  let distortion = 0;
-  for (const { first, second, distance } of plan.pairs) distortion = Math.max(distortion, Math.abs(settled[first] - settled[second]) / distance);
-  const failure = building.value * damageShare(building.damage, distortion);
+  const found = surprises > 0 ? delay.foundShare : 0;
+  const loss = (alone: Float64Array, builtLengths: Float64Array): number => {
+    const settled = interaction === undefined ? alone : interaction.settle(alone, builtLengths);
+    let distortion = 0;
+    for (const { first, second, distance } of plan.pairs) distortion = Math.max(distortion, Math.abs(settled[first] - settled[second]) / distance);
+    return building.value * damageShare(building.damage, distortion);
+  };
+  const left = loss(settlements, built.lengths);
+  const putRight = found > 0 ? loss(lengthened, lengths) : 0;
+  const failure = (1 - found) * left + found * putRight;
   out[at] = foundationCost(prices, n, built.metres);
   out[at + 1] = failure;
-  out[at + 2] = delayCost;
+  out[at + 2] = found * delayCost;
   out[at + 3] = surprises;
   out[at + 4] = overDesign;
   out[at + 5] = built.metres;
-  out[at + 6] = failure > 0 ? 1 : 0;
+  out[at + 6] = (left > 0 ? 1 - found : 0) + (putRight > 0 ? found : 0);
   out[at + 7] = built.allowable ? 0 : 1;
 }

@@ -14,7 +14,6 @@ const formKind = 1;
 /** Last number of the path; 0 to 3 are the field's. */
 const errorsPart = 4;
 const levelPart = 5;
-const foundPart = 6;
 
 /** Numbers that one model gives in one realisation: variants x counts x `outcomeColumns`. */
 export function outcomeSize({ task }: Simulation): number {
@@ -35,8 +34,8 @@ export function simulateElements(simulation: Simulation, index: number): Float64
   const size = outcomeSize(simulation);
   const out = new Float64Array(2 * size);
   const built = buildings(simulation, realised.level);
-  price(simulation, built, byElements, realised.uniforms, out, 0);
-  price(simulation, built, byForm, realised.uniforms, out, size);
+  price(simulation, built, byElements, out, 0);
+  price(simulation, built, byForm, out, size);
   return out;
 }
 
@@ -50,23 +49,21 @@ export function simulateElements(simulation: Simulation, index: number): Float64
 export function simulateForm(simulation: Simulation, index: number): Float64Array {
   const realised = realise(simulation, formKind, index);
   const out = new Float64Array(outcomeSize(simulation));
-  price(simulation, buildings(simulation, realised.level), simulation.byForm, realised.uniforms, out, 0);
+  price(simulation, buildings(simulation, realised.level), simulation.byForm, out, 0);
   return out;
 }
 
-/** Draws ground, errors and finds into the simulation's room, and the piles' stiffness by the form. */
-function realise(simulation: Simulation, kind: number, index: number): { level: number; uniforms: Float64Array } {
+/** Draws ground and errors into the simulation's room, and the piles' stiffness by the form. */
+function realise(simulation: Simulation, kind: number, index: number): { level: number } {
   requireDomain(Number.isInteger(index) && index >= 0, "Number of the realisation", index, "a whole number, 0 or above");
-  const { task, plan, ground, field, errors, byForm } = simulation;
+  const { task, ground, field, errors, byForm } = simulation;
   const numbers = (part: number): Stream => stream(task.seed, kind, index, part);
   field.draw(numbers);
   scaleField(ground, field.underPiles);
   drawErrors(errors, numbers(errorsPart));
   const level = Math.sqrt(ground.profile.regionalVariance) * numbers(levelPart).normal();
-  const found = numbers(foundPart);
-  const uniforms = Float64Array.from(plan.piles, () => found.uniform());
   formStiffness(ground, field.underPiles, level, byForm);
-  return { level, uniforms };
+  return { level };
 }
 
 /** What every variant with every count builds on its readings, variant by variant. */
@@ -77,13 +74,13 @@ function buildings({ task, plan, variants, field, errors }: Simulation, level: n
 }
 
 /** Prices all variants and counts in the ground as one model has it. */
-function price({ task, plan, ground, variants, interaction }: Simulation, built: readonly BuiltPiles[], lnStiffness: Float64Array, uniforms: Float64Array, out: Float64Array, at: number): void {
+function price({ task, plan, ground, variants, interaction }: Simulation, built: readonly BuiltPiles[], lnStiffness: Float64Array, out: Float64Array, at: number): void {
   const { logLengths } = ground;
   const { building, piles } = variants[0].problem;
   const from = logLengths[0];
   const to = Math.max(from, Math.min(Math.log(piles.longest), logLengths[logLengths.length - 1]));
   const neededLog = Float64Array.from(plan.piles, ({ load }, i) => neededLogLength(logLengths, lnStiffness, i, from, to, Math.log(load / building.allowableSettlement)));
-  const realised: RealisedPiles = { logLengths, lnStiffness, neededLog, uniforms };
+  const realised: RealisedPiles = { logLengths, lnStiffness, neededLog };
   built.forEach((b, k) => {
     const { problem } = variants[Math.floor(k / task.counts.length)];
     priceOutcome(problem, plan, b, realised, interaction, out, at + k * outcomeColumns.length);

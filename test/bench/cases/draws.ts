@@ -35,7 +35,7 @@ function setup(): State {
     const here = normals.subarray(node * law.size, (node + 1) * law.size);
     return nodeMoments(site.model, holes, here, designLengths(problem, plan, lnDesignValues(law, here), law.ofPile, "mean").lengths, 0);
   });
-  return { problem, plan, moments, weights, draws: standardDraws(plan.piles.length, false, drawsPerNode, problem.seed), block: drawsPerNode };
+  return { problem, plan, moments, weights, draws: standardDraws(plan.piles.length, drawsPerNode, problem.seed), block: drawsPerNode };
 }
 
 const joined = (arrays: readonly Float64Array[]): Float64Array => Float64Array.from(arrays.flatMap((array) => [...array]));
