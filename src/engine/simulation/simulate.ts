@@ -16,7 +16,7 @@ const errorsPart = 4;
 const levelPart = 5;
 
 /** Numbers that one model gives in one realisation: variants x counts x `outcomeColumns`. */
-export function outcomeSize({ task }: Simulation): number {
+function outcomeSize({ task }: Simulation): number {
   return task.variants.length * task.counts.length * outcomeColumns.length;
 }
 
