@@ -85,7 +85,7 @@ function counts(): SheetPlan {
 }
 
 function sensitivity(): SheetPlan {
-  const covs = [0.2, 0.3, 0.4, 0.5, 0.6, 0.8];
+  const covs = [0.2, 0.3, 0.4, 0.5, 0.65, 0.8];
   const first = 4;
   const letters = "BCDEFG";
   const cells: PlannedCell[] = [

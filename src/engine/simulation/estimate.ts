@@ -43,7 +43,7 @@ export function estimate(task: SimulationTask, elements: readonly Float64Array[]
   const rows = alternatives.map(({ v, variant, holes }, k): SimulationRow => {
     const [foundation, failure, delay, surprises, overDesign, totalMetres, damaged, tooShort] = estimated[k].means;
     const best = indexOfLeast(totals, v * task.counts.length, task.counts.length);
-    const seen = { elements: sumOf(samples[k].elements[6]), form: sumOf(samples[k].alone[6]) };
+    const seen = { elements: howManyAbove(samples[k].elements[6]), form: howManyAbove(samples[k].alone[6]) };
     const { unexplained, total } = estimated[k];
     const plain = covarianceOf(total, total);
     const left = covarianceOf(unexplained, unexplained);
@@ -146,4 +146,5 @@ function indexOfLeast(values: Float64Array, from: number, count: number): number
 }
 
 const clamp = (chance: number): number => Math.min(Math.max(chance, 0), 1);
-const sumOf = (values: Float64Array): number => values.reduce((sum, value) => sum + value, 0);
+/** Realisations with any chance of damage: the column holds a chance, since surprises may be found or not. */
+const howManyAbove = (chances: Float64Array): number => chances.reduce((count, chance) => count + (chance > 0 ? 1 : 0), 0);
