@@ -9,6 +9,8 @@ export interface BenchCase<State = unknown, Answer = unknown> {
   readonly run: (state: State, round: number) => Answer;
   /** throws when the answer is wrong: a fast wrong answer is no answer */
   readonly check: (answer: Answer, state: State) => void;
+  /** what else the answers of the timed runs say, in a line; optional */
+  readonly figure?: (answers: readonly Answer[]) => string;
   /** the same work in another language, timed alternately */
   readonly peer?: Peer<State, Answer>;
   readonly target: Target;

@@ -6,13 +6,14 @@ import { pileFamilyCase, pileForm, pileSolve } from "./cases/pile-response.js";
 import { costTable, firstCall, newPiles, oneCount, sensitivity } from "./cases/prices.js";
 import { quasiRandom } from "./cases/quasi-random.js";
 import { ringMeans } from "./cases/ring-means.js";
+import { oneElements, oneForm, prepare, savedAtHigh, savedAtModerate } from "./cases/simulation.js";
 import { PeerProcess, peersAvailable } from "./peer-process.js";
 
 // Times every case, each alternately with its peer, and prints medians, ratios and their share of the target.
 
 /** A list of cases cannot name the state of each; each is handed its own and no other's. */
 type AnyCase = BenchCase<never, never>;
-const CASES = [oneCount, costTable, firstCall, newPiles, sensitivity, draws, bandSolve, pileSolve, pileForm, pileFamilyCase, ...matrices, quasiRandom, ringMeans] as unknown as readonly AnyCase[];
+const CASES = [oneCount, costTable, firstCall, newPiles, sensitivity, draws, bandSolve, pileSolve, pileForm, pileFamilyCase, ...matrices, quasiRandom, ringMeans, prepare, oneElements, oneForm, savedAtModerate, savedAtHigh] as unknown as readonly AnyCase[];
 
 interface Spread {
   readonly low: number;
@@ -34,6 +35,7 @@ async function time(bench: AnyCase, withPeers: boolean): Promise<string[]> {
   const peer = withPeers && bench.peer !== undefined ? new PeerProcess() : undefined;
   const ours: number[] = [];
   const ratios: number[] = [];
+  const answers: never[] = [];
   try {
     if (peer !== undefined) await peer.load(bench.peer!.name, bench.peer!.input(state));
     for (let round = -2; round < bench.rounds; round++) {
@@ -45,12 +47,14 @@ async function time(bench: AnyCase, withPeers: boolean): Promise<string[]> {
       if (other !== undefined) bench.peer!.agree(answer, other.answer);
       if (round < 0) continue; // the compiler is still at work
       ours.push(took);
+      if (bench.figure !== undefined) answers.push(answer);
       if (other !== undefined) ratios.push(took / other.milliseconds);
     }
   } finally {
     peer?.end();
   }
-  return report(bench, spread(ours), ratios.length === 0 ? undefined : spread(ratios));
+  const lines = report(bench, spread(ours), ratios.length === 0 ? undefined : spread(ratios));
+  return bench.figure === undefined ? lines : [...lines, `  found     ${bench.figure(answers)}`];
 }
 
 function report({ name, size, target, peer }: AnyCase, ours: Spread, ratio: Spread | undefined): string[] {

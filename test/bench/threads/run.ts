@@ -8,7 +8,8 @@ import { runPart } from "../../../src/jobs/run-simulation.js";
 // What only whole runs show: two threads against one, how soon a run is cancelled, how often it tells, what it holds in memory.
 
 const ROUNDS = 3;
-const REALISATIONS = 60;
+// as many as a run to a usual precision needs: each thread prepares for a second first
+const REALISATIONS = 200;
 
 const site = parseSite(templateRows());
 const task: SimulationTask = { variants: [{ name: site.method, problem: site.problem }], counts: Array.from({ length: 13 }, (_, k) => k), seed: site.problem.seed };
