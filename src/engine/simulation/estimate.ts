@@ -1,6 +1,6 @@
 import { concreteCarbon } from "../costs/prices.js";
 import { requireDomain } from "../numerics/domain-error.js";
-import { caution, controlledMean, covarianceOf, type ControlledMean } from "./control-variate.js";
+import { caution, controlledMean, covarianceOf, meanOf, type ControlledMean } from "./control-variate.js";
 import { contest } from "./contest.js";
 import { outcomeColumns } from "./outcome.js";
 import { rowSamples, type RowSamples } from "./row-samples.js";
@@ -104,14 +104,25 @@ export function estimateRow(samples: RowSamples): EstimatedRow {
 function totalCovariance(rows: readonly EstimatedRow[], n: number, many: number): Float64Array {
   const k = rows.length;
   const out = new Float64Array(k * k);
-  const ofElements = n < 2 ? 0 : caution(n, many < 2 ? 1 : 2) / n;
+  const ofElements = n < 2 ? 0 : caution(n, many < 2 ? 1 : 2) / (n * (n - 1));
+  const ofForm = many < 2 ? 0 : 1 / (many * (many - 1));
+  const residuals = rows.map(({ residual }) => centred(residual));
+  const explained = rows.map((row) => centred(row.explained));
   for (let i = 0; i < k; i++) {
-    for (let j = 0; j <= i; j++) {
-      const alone = many < 2 ? 0 : covarianceOf(rows[i].explained, rows[j].explained) / many;
-      out[i * k + j] = out[j * k + i] = ofElements * covarianceOf(rows[i].residual, rows[j].residual) + alone;
-    }
+    for (let j = 0; j <= i; j++) out[i * k + j] = out[j * k + i] = ofElements * product(residuals[i], residuals[j]) + ofForm * product(explained[i], explained[j]);
   }
   return out;
+}
+
+function centred(values: Float64Array): Float64Array {
+  const mean = meanOf(values);
+  return values.map((value) => value - mean);
+}
+
+function product(a: Float64Array, b: Float64Array): number {
+  let sum = 0;
+  for (let i = 0; i < a.length; i++) sum += a[i] * b[i];
+  return sum;
 }
 
 function contestWithin(totals: Float64Array, covariance: Float64Array, from: number, count: number): ReturnType<typeof contest> {

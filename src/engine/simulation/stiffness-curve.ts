@@ -42,7 +42,6 @@ export function neededLogLength(
       }
       return high;
     }
-    if (high >= to) break;
     low = high;
   }
   return Infinity;

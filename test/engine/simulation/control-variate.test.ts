@@ -67,6 +67,14 @@ describe("controlledMean", () => {
   });
 });
 
+// By hand: (n - 1) / (n - 2) for the coefficient, and the variance of Student's t, (n - 2) / (n - 4).
+it("caution", () => {
+  expect(caution(12, 2)).toBeCloseTo((11 / 10) * (10 / 8), 12);
+  expect(caution(30, 1)).toBeCloseTo(29 / 27, 12);
+  expect(caution(2, 1)).toBe(10);
+  expect(caution(2, 2)).toBe(10);
+});
+
 // By hand: sums of products over n - 1.
 it("covarianceOf and meanOf", () => {
   expect(covarianceOf(Float64Array.of(1, 2, 6), Float64Array.of(2, 0, 1))).toBeCloseTo(-0.5, 12);

@@ -88,6 +88,15 @@ describe.each([
     expect(Math.max(...all) - Math.min(...all)).toBeGreaterThan(1);
   });
 
+  // Identity: where elements are solved nothing is interpolated.
+  it("leaves solved lengths as they are solved", () => {
+    const cells = ground.rings.length * ground.cellSd.length;
+    for (const [i, k] of [[0, 0], [4, 6], [7, 15]]) {
+      const direct = elementLnStiffness(ground.forms[k], 30e6, fields[2].subarray(i * cells, (i + 1) * cells), ground.levelBounds, undefined);
+      expect(elements[2][i * ground.logLengths.length + k]).toBeCloseTo(direct, 10);
+    }
+  });
+
   // Independent: a direct solution at lengths between the solved ones. Cubics through solved lengths alone miss by two to four times as much.
   it("is a good guide between solved lengths", () => {
     const solved = [0, 3, 6, 9, 12, 15];
@@ -116,6 +125,18 @@ it("the second-order form follows the site's level", () => {
     const worst = form[0].reduce((most, value, at) => Math.max(most, Math.abs(value - elements[0][at])), 0);
     expect(worst).toBeLessThan(0.012);
   }
+});
+
+// By hand: standard deviations of the two layers, in the cells above and below 7 m, under every pile and ring.
+it("scaleField gives each depth its own spread", () => {
+  const ground = groundUnderPiles(layered);
+  const field = new Float64Array(2 * ground.rings.length * ground.cellSd.length).fill(2);
+  scaleField(ground, field);
+  field.forEach((value, c) => {
+    const cell = c % ground.cellSd.length;
+    const middle = (ground.levelBounds[cell] + ground.levelBounds[cell + 1]) / 2;
+    expect(value).toBeCloseTo(2 * Math.sqrt(Math.log1p((middle < 7 ? 0.3 : 0.6) ** 2)), 12);
+  });
 });
 
 it("lengths cover the range, and half as much again where one length is allowed", () => {

@@ -40,6 +40,7 @@ describe("a realisation", () => {
       for (const column of [0, 5, 7]) expect(both[row * width + column]).toBe(both[size + row * width + column]);
     }
     expect([...both].every(Number.isFinite)).toBe(true);
+    expect([...both.subarray(0, size)]).not.toEqual([...both.subarray(size)]);
   });
 
   // Identity: the ground is there before anybody drills, and what a count or variant costs does not depend on what it is compared with.
@@ -85,6 +86,8 @@ it("group interaction changes damage and nothing that is built", () => {
     }
   }
   expect(changed).toBeGreaterThan(5);
+  expect(simulation.interaction).toBeUndefined();
+  expect(group.interaction).toBeDefined();
 });
 
 describe("refusals", () => {

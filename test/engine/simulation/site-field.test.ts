@@ -9,7 +9,7 @@ import { kilonewtons, metres } from "../../../src/units/quantities.js";
 const plan = sortedPlan([[0, 0], [5, 0], [2, 4]].map(([x, y]) => ({ x: metres(x), y: metres(y), load: kilonewtons(100) })));
 const rings = Float64Array.of(0.3, 1.2, 6);
 const levelBounds = Float64Array.of(0, 0.4, 1.2, 3, 8);
-const holes = [[1, 1], [5, 0], [9, -2]].map(([x, y]) => ({ x: metres(x), y: metres(y) }));
+const holes = [[1, 1], [1, 5], [9, -2]].map(([x, y]) => ({ x: metres(x), y: metres(y) }));
 const readingDepths = Float64Array.of(0.5, 1, 4);
 const places = { plan, rings, levelBounds, holes, readingDepths };
 const cells = levelBounds.length - 1;

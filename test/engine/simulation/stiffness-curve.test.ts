@@ -25,6 +25,12 @@ it("neededLogLength ends at the limits", () => {
   expect(neededLogLength(logLengths, two, 1, logLengths[0], 2.2, cubic(2.19))).toBeCloseTo(2.19, 6);
 });
 
+it("neededLogLength looks at no length before the first", () => {
+  // Stiff enough at 4 m, too soft from there to 6.6 m: what lies before the start is not built.
+  const dips = at((x) => (x < 1.5 ? 12 : 8 + x));
+  expect(neededLogLength(logLengths, dips, 0, 1.75, logLengths[8], 10.5)).toBeCloseTo(2.5, 3);
+});
+
 it("neededLogLength takes the first of several lengths", () => {
   const dips = at((x) => (x < 2 ? 9 + x : 8 + x));
   const found = neededLogLength(logLengths, dips, 0, logLengths[0], logLengths[8], 10.8);
