@@ -29,7 +29,7 @@ export function lengthTable(table: LengthTable, units: UnitSystem): ResultTable 
       out(table.meanLength[k]),
       out(table.totalMetres[k]),
     ]),
-    notes: ["All lengths move together, because one design value sets them all: the total at a percentile is the sum of the lengths at that percentile."],
+    notes: ["Mean length times the number of piles is the total at every percentile. Where one design value sets all lengths they move together, and the total is the sum of the columns too."],
   };
 }
 

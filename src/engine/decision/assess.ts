@@ -15,7 +15,7 @@ import { Remembered } from "./remembered.js";
 
 /**
  * Relative scatter of the fast failure cost about finite elements, and the part of it that does not cancel between two counts of
- * one site; see the accuracy table that the study command writes.
+ * one site; see test/study/accuracy.md.
  */
 const modelScatter = 0.02;
 

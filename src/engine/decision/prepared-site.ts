@@ -80,14 +80,15 @@ export function preparedSite(problem: Problem): PreparedSite {
     };
     const nearest = (places: readonly Point[]): DesignLaw => {
       const n = places.length;
-      const alone = (hole: Point): ReadingSums => readingSums([hole], investigation.readingSpacing, relativeSd, correlation);
-      const single = designDistribution(investigation.designRule, alone(places[0]), profile.logModulus, variances);
+      // A hole's own sums are the same wherever it stands.
+      const alone = readingSums([places[0]], investigation.readingSpacing, relativeSd, correlation);
+      const single = designDistribution(investigation.designRule, alone, profile.logModulus, variances);
       const between = new Float64Array(n * n);
       for (let a = 0; a < n; a++) {
         for (let b = 0; b < a; b++) {
           // Two holes' mean covariance out of the sums over both: the off-diagonal half of four equal quarters.
           const both = readingSums([places[a], places[b]], investigation.readingSpacing, relativeSd, correlation);
-          const shared = 2 * both.meanCovariance - alone(places[a]).meanCovariance;
+          const shared = 2 * both.meanCovariance - alone.meanCovariance;
           between[a * n + b] = between[b * n + a] = single.gain ** 2 * (variances.ground * shared + variances.regional + variances.method);
         }
       }
