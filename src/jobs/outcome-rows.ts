@@ -1,7 +1,5 @@
 import type { RowRun } from "./realisations.js";
 
-export type { RowRun };
-
 /** The realisations of one kind by their index, in whatever order they finish. */
 export class OutcomeRows {
   private readonly rows: (Float64Array | undefined)[] = [];

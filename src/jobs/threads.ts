@@ -1,8 +1,6 @@
 import type { BatchJob, Look } from "./batch.js";
 import type { RowKind, RowRun, Totals } from "./realisations.js";
 
-export type { RowKind };
-
 /**
  * What a thread is asked. One that computes gets "prepare" once and then "rows", each after the answer to the one before. One
  * that keeps the books (the clerk) gets "keep" once, then realisations as they finish and now and then a "look".

@@ -2,8 +2,6 @@ import type { OutcomeRows } from "./outcome-rows.js";
 import type { Chunk, RowKind, Totals } from "./realisations.js";
 import type { WorkSpeed } from "./work-speed.js";
 
-export type { Totals };
-
 /** A piece of cheap realisations takes about this long: short enough for cancelling, long enough for the messages not to matter. */
 const CHUNK_MILLISECONDS = 80;
 const FIRST_CHUNK = 4;

@@ -1,6 +1,6 @@
 import type { KeptRows } from "../jobs/batch.js";
-import { OutcomeRows, type RowRun } from "../jobs/outcome-rows.js";
-import type { RowKind } from "../jobs/threads.js";
+import { OutcomeRows } from "../jobs/outcome-rows.js";
+import type { RowKind, RowRun } from "../jobs/realisations.js";
 import type { RunShelf } from "./run-shelf.js";
 
 const KINDS = ["elements", "form"] as const;

@@ -1,6 +1,5 @@
 import type { KeptRows } from "../jobs/batch.js";
-import type { RowRun } from "../jobs/outcome-rows.js";
-import type { RowKind } from "../jobs/threads.js";
+import type { RowKind, RowRun } from "../jobs/realisations.js";
 import { PRODUCT_VERSION } from "../results/index.js";
 import type { RunOrder } from "./run-order.js";
 

@@ -1,7 +1,7 @@
 import type { SimulationRow, SimulationTable } from "../../engine/index.js";
 import type { BatchProgress } from "../../jobs/batch.js";
+import type { Totals } from "../../jobs/realisations.js";
 import { timeInWords } from "../../jobs/time-in-words.js";
-import type { Totals } from "../../jobs/work-list.js";
 import type { RunState } from "../run-store.js";
 import { tableStep } from "./conclusion.js";
 import { holesInWords, sentenceCase, shorten, type NumberWriter } from "./numbers.js";
