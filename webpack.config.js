@@ -1,7 +1,6 @@
 import { readdirSync } from "node:fs";
 import { readFile } from "node:fs/promises";
 import { fileURLToPath } from "node:url";
-import HtmlPlugin from "html-webpack-plugin";
 import { EsbuildPlugin } from "esbuild-loader";
 import webpack from "webpack";
 
@@ -14,7 +13,7 @@ class IconsPlugin {
     compiler.hooks.thisCompilation.tap("icons", (compilation) => {
       compilation.hooks.processAssets.tapPromise({ name: "icons", stage: webpack.Compilation.PROCESS_ASSETS_STAGE_ADDITIONAL }, async () => {
         for (const name of readdirSync(at("assets"))) {
-          if (/\.(png|svg)$/.test(name)) compilation.emitAsset(`assets/${name}`, new webpack.sources.RawSource(await readFile(at(`assets/${name}`))));
+          if (/-\d+\.png$/.test(name)) compilation.emitAsset(`assets/${name}`, new webpack.sources.RawSource(await readFile(at(`assets/${name}`))));
         }
       });
     });
@@ -27,7 +26,7 @@ export default {
   target: "web",
   context: at("."),
   // the pane's page is the shared runtime: it loads the functions first and then what the pane adds to them
-  entry: { functions: at("src/functions/associate.ts"), pane: { import: at("src/pane/main.ts"), dependOn: "functions" } },
+  entry: { functions: at("src/functions/associate.ts"), pane: { import: [at("src/pane/page.css"), at("src/pane/main.ts")], dependOn: "functions" } },
   output: {
     path: at("dist"),
     filename: "[name].js",
@@ -46,5 +45,5 @@ export default {
   experiments: { css: true },
   optimization: { minimizer: [new EsbuildPlugin({ target, css: true, legalComments: "none" })] },
   performance: { hints: false }, // size-limit holds the size
-  plugins: [new IconsPlugin(), new HtmlPlugin({ filename: "pane.html", template: at("src/pane/pane.html"), chunks: ["functions", "pane"], scriptLoading: "defer" })],
+  plugins: [new IconsPlugin()], // pages, functions.json and the manifest depend on where the add-in is served: src/build/build-add-in.ts adds them
 };

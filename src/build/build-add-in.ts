@@ -1,16 +1,29 @@
+import { readFile } from "node:fs/promises";
+import { fileURLToPath } from "node:url";
+import HtmlPlugin from "html-webpack-plugin";
 import webpack, { type Configuration, type Compiler } from "webpack";
 import configuration from "../../webpack.config.js";
+import { PRODUCT_VERSION } from "../results/version.js";
+import { panePolicy } from "./content-policy.js";
+import type { Form } from "./form.js";
 import { helpPage } from "./help-page.js";
+import { manifestFor } from "./manifest.js";
 import { functionsMetadata } from "./metadata.js";
 
-/** Puts functions.json and its help page beside the bundles, so that none of them can disagree about the functions. */
-class FunctionsPlugin {
+const at = (path: string): string => fileURLToPath(new URL(`../../${path}`, import.meta.url));
+
+/** Puts beside the bundles what is made from the functions' own descriptions and from the address, so that none of it can disagree. */
+class FormPlugin {
+  constructor(private readonly form: Form) {}
+
   apply(compiler: Compiler): void {
-    compiler.hooks.thisCompilation.tap("functions", (compilation) => {
-      compilation.hooks.processAssets.tapPromise({ name: "functions", stage: webpack.Compilation.PROCESS_ASSETS_STAGE_ADDITIONAL }, async () => {
-        const json = await functionsMetadata();
-        compilation.emitAsset("functions.json", new webpack.sources.RawSource(`${JSON.stringify(json, null, 2)}\n`));
-        compilation.emitAsset("help.html", new webpack.sources.RawSource(helpPage(json)));
+    compiler.hooks.thisCompilation.tap("form", (compilation) => {
+      compilation.hooks.processAssets.tapPromise({ name: "form", stage: webpack.Compilation.PROCESS_ASSETS_STAGE_ADDITIONAL }, async () => {
+        const emit = (name: string, text: string): void => compilation.emitAsset(name, new webpack.sources.RawSource(text));
+        const json = await functionsMetadata(`${this.form.base}help.html`);
+        emit("functions.json", `${JSON.stringify(json, null, 2)}\n`);
+        emit("help.html", helpPage(json));
+        emit("manifest.xml", manifestFor(await readFile(at("manifest.xml"), "utf8"), this.form));
       });
     });
   }
@@ -20,14 +33,23 @@ class FunctionsPlugin {
  * The add-in's bundler, ready to run or to serve.
  *
  * @param mode  "production" minifies; "development" keeps names and maps
+ * @param form  which add-in, and where it is served
  */
-export function addInCompiler(mode: "production" | "development"): Compiler {
+export function addInCompiler(mode: "production" | "development", form: Form): Compiler {
   const settings = configuration as Configuration;
+  const page = new HtmlPlugin({
+    filename: "pane.html",
+    template: at("src/pane/pane.html"),
+    chunks: ["functions", "pane"],
+    scriptLoading: "defer",
+    hash: true, // a page never runs with an older functions.js out of a cache
+    templateParameters: { policy: panePolicy(form), namespace: form.namespace, version: PRODUCT_VERSION, library: form.library },
+  });
   return webpack({
     ...settings,
     mode,
     devtool: mode === "development" ? "source-map" : false,
-    plugins: [...(settings.plugins ?? []), new FunctionsPlugin()],
+    plugins: [...(settings.plugins ?? []), page, new FormPlugin(form)],
   });
 }
 
@@ -40,11 +62,12 @@ export interface Asset {
 /**
  * Builds the add-in into dist/.
  *
- * @returns what was written
+ * @param form  which add-in, and where it is served
+ * @returns     what was written
  * @throws {Error} with the bundler's own words when something does not build
  */
-export function buildAddIn(): Promise<Asset[]> {
-  const compiler = addInCompiler("production");
+export function buildAddIn(form: Form): Promise<Asset[]> {
+  const compiler = addInCompiler("production", form);
   return new Promise((resolve, reject) => {
     compiler.run((error, stats) => {
       compiler.close(() => {

@@ -4,12 +4,19 @@ import { fileURLToPath } from "node:url";
 const dist = fileURLToPath(new URL("../../dist", import.meta.url));
 
 // Each command loads what it needs and no more: the bundler alone takes half a second to load.
-const COMMANDS: Readonly<Record<string, () => Promise<void>>> = {
-  async build() {
+const COMMANDS: Readonly<Record<string, (words: readonly string[]) => Promise<void>>> = {
+  async build(words) {
+    const { formFrom } = await import("./form.js");
+    const form = formFrom(words);
     const { buildAddIn } = await import("./build-add-in.js");
     const { buildPractice } = await import("./practice-page.js");
-    for (const { name, bytes } of await buildAddIn()) process.stdout.write(`${name.padEnd(28)} ${(bytes / 1000).toFixed(1).padStart(9)} kB\n`);
-    await buildPractice(`${dist}/practice`);
+    for (const { name, bytes } of await buildAddIn(form)) process.stdout.write(`${name.padEnd(28)} ${(bytes / 1000).toFixed(1).padStart(9)} kB\n`);
+    await buildPractice(`${dist}/practice`, form);
+    process.stdout.write(
+      form.namespace === "PROBE"
+        ? `dist/ is ready to be served under ${form.base}; people install dist/manifest.xml.\n`
+        : "dist/ holds the development add-in. For one that people install, give the address that will serve it: npm run build -- --base https://...\n",
+    );
   },
   async start() {
     const { start } = await import("./start.js");
@@ -28,13 +35,13 @@ const COMMANDS: Readonly<Record<string, () => Promise<void>>> = {
   },
 };
 
-const [wanted = ""] = process.argv.slice(2);
+const [wanted = "", ...words] = process.argv.slice(2);
 const command = COMMANDS[wanted];
 if (command === undefined) {
   process.stderr.write(`"${wanted}" is not a command; accepted: ${Object.keys(COMMANDS).join(", ")}.\n`);
   process.exitCode = 1;
 } else {
-  await command().catch((reason: unknown) => {
+  await command(words).catch((reason: unknown) => {
     process.stderr.write(`${reason instanceof Error ? reason.message : String(reason)}\n`);
     process.exitCode = 1;
   });

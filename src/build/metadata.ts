@@ -1,6 +1,7 @@
 import { readdirSync, readFileSync } from "node:fs";
 import { fileURLToPath } from "node:url";
 import { generateCustomFunctionsMetadata } from "custom-functions-metadata";
+import { DEVELOPMENT } from "./form.js";
 
 /** One argument of a cell function as Excel reads it. */
 export interface FunctionParameter {
@@ -38,7 +39,7 @@ const FUNCTIONS = fileURLToPath(new URL("../functions/", import.meta.url));
  * @returns         the content of functions.json, functions sorted by id
  * @throws {Error}  when the generator refuses a signature or two functions carry one id
  */
-export async function functionsMetadata(helpBase = "https://localhost:3000/help.html", folder = FUNCTIONS): Promise<FunctionsJson> {
+export async function functionsMetadata(helpBase = `${DEVELOPMENT.base}help.html`, folder = FUNCTIONS): Promise<FunctionsJson> {
   const sources = readdirSync(folder)
     .filter((name) => name.endsWith(".ts"))
     .map((name) => `${folder.replace(/\/$/, "")}/${name}`)

@@ -2,6 +2,7 @@ import { build } from "esbuild";
 import { copyFile, mkdir, readdir, writeFile } from "node:fs/promises";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
+import { DEVELOPMENT, type Form } from "./form.js";
 import { functionsMetadata } from "./metadata.js";
 
 const source = fileURLToPath(new URL("../", import.meta.url));
@@ -11,8 +12,9 @@ const source = fileURLToPath(new URL("../", import.meta.url));
  * and the functions' metadata.
  *
  * @param output  folder to write into; made if absent
+ * @param form    whose help the functions' descriptions name
  */
-export async function buildPractice(output: string): Promise<void> {
+export async function buildPractice(output: string, form: Form = DEVELOPMENT): Promise<void> {
   await mkdir(output, { recursive: true });
   const settings = {
     bundle: true,
@@ -30,7 +32,7 @@ export async function buildPractice(output: string): Promise<void> {
     build({ ...settings, splitting: true, entryPoints: { main: join(source, "practice/main.ts") } }),
     build({ ...settings, entryPoints: await workers() }),
     copyFile(join(source, "practice/index.html"), join(output, "index.html")),
-    writeFile(join(output, "functions.json"), JSON.stringify(await functionsMetadata())),
+    writeFile(join(output, "functions.json"), JSON.stringify(await functionsMetadata(`${form.base}help.html`))),
   ]);
 }
 
