@@ -45,7 +45,7 @@ function buildSpecification(values: Values): PileSpecification {
   if (step > longest - shortest) throw refusal(values.place("lengthStep"), `is ${amount(step)} m, more than the ${amount(longest - shortest)} m between the shortest and the longest length`);
   return {
     diameter: metres(diameter), modulus: kilopascals(values.number("pileModulus")), shortest: metres(shortest), longest: metres(longest),
-    lengthStep: metres(step), lengthRule: values.text("lengthRule") as LengthRule,
+    lengthStep: metres(step), lengthRule: values.text("lengthRule") as LengthRule, groupInteraction: values.text("groupInteraction") === "on",
   };
 }
 

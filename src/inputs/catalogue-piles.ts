@@ -31,4 +31,12 @@ export const PILES = [
     ],
     help: "Which piles share a length: one for all (as the heaviest needs), one per load, or each by the readings of the hole nearest to it.",
   },
+  {
+    id: "groupInteraction", label: "Group interaction", section: "Piles", kind: "choice", unit: "", zero: "refused", fallback: "off",
+    choices: [
+      { value: "off", text: "off", also: ["no", "n", "false", "none"] },
+      { value: "on", text: "on", also: ["yes", "y", "true"] },
+    ],
+    help: "On: a pile also settles by its neighbours' loads (interaction factors), and the building bends by both. Lengths stay those of single piles; to design for the group, divide the allowable settlement by its settlement ratio.",
+  },
 ] as const satisfies readonly InputEntry[];

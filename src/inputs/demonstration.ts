@@ -42,6 +42,7 @@ export const DEMONSTRATION_VALUES: Partial<Record<InputId, DemonstrationValue>> 
   longestLength: { value: 28, note: "reach of the rig" },
   lengthStep: { value: 0.5, note: "lengths are rounded up to this; 0 for any length" },
   lengthRule: { value: "one per load", note: "or one for all, nearest hole" },
+  groupInteraction: { value: "off", note: "on: neighbours' loads add to a pile's settlement" },
   method: { value: "Pressuremeter", note: "a name of the method table, =PROBE.METHODS(), or own" },
   readingCov: { value: "from the method", note: "error new at each reading" },
   holeCov: { value: "from the method", note: "error that one hole's readings share" },

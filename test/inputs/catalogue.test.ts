@@ -80,6 +80,7 @@ const REACH: readonly [path: string, rows: readonly Row[]][] = [
   ["piles.longest", put(SMALL, "Longest length", 24)],
   ["piles.lengthStep", add(SMALL, ["Length step", 0.5])],
   ["piles.lengthRule", add(SMALL, ["Length rule", "one"])],
+  ["piles.groupInteraction", add(SMALL, ["Group interaction", "on"])],
   ["investigation.readingCov", add(SMALL, ["Reading COV", 0.3])],
   ["investigation.holeCov", add(SMALL, ["Hole COV", 0.3])],
   ["investigation.methodCov", add(SMALL, ["Method COV", 0.3])],

@@ -17,7 +17,7 @@ describe("a site block", () => {
     expect(problem.building.value).toBe(2_000_000);
     expect(problem.building.damage).toEqual([{ distortion: 1 / 500, share: 0 }, { distortion: 1 / 300, share: 0.1 }, { distortion: 1 / 150, share: 1 }]);
     expect(problem.building.allowableSettlement).toBe(0.025);
-    expect(problem.piles).toEqual({ diameter: 0.5, modulus: 30e6, shortest: 3, longest: 25, lengthStep: 0, lengthRule: "load" });
+    expect(problem.piles).toEqual({ diameter: 0.5, modulus: 30e6, shortest: 3, longest: 25, lengthStep: 0, lengthRule: "load", groupInteraction: false });
     expect(problem.investigation).toEqual({
       readingCov: 0.05, holeCov: 0.058, methodCov: 0.35, readingSpacing: 0.5, holeDepth: 15.5, holes: undefined,
       designRule: { name: "geometric", deviations: 0.5, update: false },
@@ -91,6 +91,9 @@ describe("values", () => {
     }
     expect(parseSite(add(SMALL, ["Regional COV", 0.3], ["Regional update", false])).problem.investigation.designRule.update).toBe(false);
     expect(parseSite(add(SMALL, ["Regional COV", 0.3], ["Regional update", true])).problem.investigation.designRule.update).toBe(true);
+    for (const [word, on] of [["on", true], ["Yes", true], [true, true], ["off", false], ["no", false], [false, false]] as const) {
+      expect(parseSite(add(SMALL, ["Group interaction", word])).problem.piles.groupInteraction).toBe(on);
+    }
     expect(parseSite(add(SMALL, ["Regional COV", 0.3])).problem.investigation.designRule.update).toBe(true);
   });
 

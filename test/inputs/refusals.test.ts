@@ -110,6 +110,8 @@ const WORDS: readonly Refusal[] = [
   ["choice as a number", add(SMALL, ["Length rule", 3]), "Length rule (row 25 of the site block) is 3; accepted: one for all, one per load or nearest hole."],
   ["choice as an error", add(SMALL, ["Length rule", "#N/A"]), 'Length rule (row 25 of the site block) is "#N/A"; accepted: one for all, one per load or nearest hole.'],
   ["blank choice", add(SMALL, ["Length rule", ""]), "Length rule (row 25 of the site block) is blank or zero; accepted: one for all, one per load or nearest hole; or take the row out for the default (one per load)."],
+  ["neither on nor off", add(SMALL, ["Group interaction", "perhaps"]), 'Group interaction (row 25 of the site block) is "perhaps"; accepted: off or on.'],
+  ["blank instead of off", add(SMALL, ["Group interaction", 0]), "Group interaction (row 25 of the site block) is blank or zero; accepted: off or on; or take the row out for the default (off)."],
   ["blank seed", add(SMALL, ["Seed", 0]), "Seed (row 25 of the site block) is blank or zero; write a number or a word, or take the row out for the default (1)."],
   ["truth value as a seed", add(SMALL, ["Seed", false]), "Seed (row 25 of the site block) is FALSE; a number or a word is needed."],
   ["error as a seed", add(SMALL, ["Seed", "#N/A"]), 'Seed (row 25 of the site block) is "#N/A"; a number or a word is needed.'],

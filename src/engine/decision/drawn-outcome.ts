@@ -1,9 +1,10 @@
 import { normalDistribution } from "../numerics/normal.js";
 import { gaussLegendre } from "../numerics/gauss-legendre.js";
 import { lnDesignValues, outerNodes, type DesignLaw } from "./design-law.js";
+import { interactionOf, type Interaction } from "./group-interaction.js";
 import type { HoleCovariance } from "./hole-covariance.js";
 import { nodeMoments } from "./node-moments.js";
-import { chanceTooSoft, expectedLnStiffness, lengthLaws, trialLength, type LengthLaws, type TrialLength } from "./needed-length.js";
+import { chanceTooSoft, expectedLnStiffness, lengthLaws, placeOfGain, placeOfLength, trialLength, type LengthLaws, type TrialLength } from "./needed-length.js";
 import { distortionDraws, type FoundSurprises } from "./node-draws.js";
 import { designLengths, softestAllowable } from "./design-lengths.js";
 import type { Plan } from "./plan.js";
@@ -48,6 +49,7 @@ export function drawnOutcome(problem: Problem, model: SiteModel, holes: HoleCova
   const { distortion, foundDistortion, surprises: drawnSurprises, draw } = distortionDraws(plan, drawsPerNode);
   const needed = Float64Array.from(plan.piles, (p) => Math.log(p.load / problem.building.allowableSettlement));
   const laws = lengthLaws(model);
+  const interaction = rememberedInteraction(problem, model, laws);
   const out = {
     metres: new Float64Array(count), surprises: new Float64Array(count), extensions: new Float64Array(count),
     distortion: new Float64Array(count * drawsPerNode),
@@ -64,13 +66,23 @@ export function drawnOutcome(problem: Problem, model: SiteModel, holes: HoleCova
     out.metres[node] = metres;
     out.surprises[node] = surprises;
     out.extensions[node] = extension;
-    draw(moments, draws.subarray(node * width, (node + 1) * width), finds ? foundSurprises(problem, moments.lengths, laws, needed) : undefined);
+    draw(moments, draws.subarray(node * width, (node + 1) * width), finds ? foundSurprises(problem, moments.lengths, laws, needed) : undefined, interaction);
     out.distortion.set(distortion, node * drawsPerNode);
     if (!finds) continue;
     out.foundDistortion.set(foundDistortion, node * drawsPerNode);
     out.drawnSurprises.set(drawnSurprises, node * drawsPerNode);
   }
   return { ...out, weights: nodes.weights, drawsPerNode, tooShortChance: tooShort(problem, plan, law, Math.min(tooShortSampled, 1)) };
+}
+
+const interactions = new WeakMap<SiteModel, Interaction>();
+
+/** Interaction on the laws' lengths; all counts of a site share one table. */
+function rememberedInteraction(problem: Problem, model: SiteModel, laws: LengthLaws): Interaction | undefined {
+  if (!problem.piles.groupInteraction) return undefined;
+  let known = interactions.get(model);
+  if (known === undefined) interactions.set(model, (known = interactionOf(problem, model.plan, laws.logLengths)));
+  return known;
 }
 
 /** Chance that the longest length is not enough: in closed form for one design value, where few nodes would give it in steps. */
@@ -119,5 +131,7 @@ function foundSurprises(problem: Problem, lengths: Float64Array, laws: LengthLaw
       return trial < longest ? gain(i, trial) : Infinity;
     }),
     toLongest: Float64Array.from({ length: n }, (_, i) => gain(i, longest)),
+    designPlace: (i) => placeOfLength(laws, lengths[i]),
+    builtPlace: (i, lnStiffness) => placeOfGain(laws, lengths[i], Math.min(needed[i] - lnStiffness, gain(i, longest))),
   };
 }

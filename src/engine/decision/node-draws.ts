@@ -1,4 +1,5 @@
 import type { DamagePoint } from "../costs/damage.js";
+import type { Interaction } from "./group-interaction.js";
 import type { Plan } from "./plan.js";
 import { quadraticWidth } from "./second-order-terms.js";
 import type { NodeMoments } from "./node-moments.js";
@@ -13,6 +14,9 @@ export interface FoundSurprises {
   /** gain of E ln K from the design length to design length plus tolerance, and to the longest length, one a pile */
   readonly toTolerance: Float64Array;
   readonly toLongest: Float64Array;
+  /** place of a pile's length among those of the interaction's table: as designed, and lengthened where ln K is this at the design length */
+  designPlace(pile: number): number;
+  builtPlace(pile: number, lnStiffness: number): number;
 }
 
 /** Draws the largest angular distortion of a plan, one block of draws after another, in room that is made once. */
@@ -25,11 +29,12 @@ export interface DistortionDraws {
   /**
    * Draws a block.
    *
-   * @param moments  of the piles at the design values
-   * @param values   dimensions x block: a standard normal a pile for the ground, one a pile for the rest of the second-order term
-   * @param found    undefined where no surprise is looked for
+   * @param moments      of the piles at the design values
+   * @param values       dimensions x block: a standard normal a pile for the ground, one a pile for the rest of the second-order term
+   * @param found        undefined where no surprise is looked for
+   * @param interaction  how piles settle each other; left out where each stands alone
    */
-  draw(moments: NodeMoments, values: Float64Array, found: FoundSurprises | undefined): void;
+  draw(moments: NodeMoments, values: Float64Array, found: FoundSurprises | undefined, interaction?: Interaction): void;
 }
 
 /** Loops run along the draws of a block, because there the numbers lie next to each other. */
@@ -40,6 +45,8 @@ export function distortionDraws(plan: Plan, block: number): DistortionDraws {
   const row = new Float64Array(block);
   const settlement = new Float64Array(n * block);
   const lengthened = new Float64Array(n * block);
+  const together = new Float64Array(n * block);
+  const places = new Float64Array(n * block);
   const distortion = new Float64Array(block);
   const foundDistortion = new Float64Array(block);
   const surprises = new Float64Array(block);
@@ -47,7 +54,7 @@ export function distortionDraws(plan: Plan, block: number): DistortionDraws {
     distortion,
     foundDistortion,
     surprises,
-    draw(moments, values, found) {
+    draw(moments, values, found, interaction) {
       const { means, factor, residual } = moments;
       surprises.fill(0);
       xi.fill(0);
@@ -60,16 +67,28 @@ export function distortionDraws(plan: Plan, block: number): DistortionDraws {
         const at = i * block;
         for (let m = 0; m < block; m++) settlement[at + m] = load * Math.exp(-lnStiffness[m]);
         if (found === undefined) continue;
+        if (interaction !== undefined) places.fill(found.designPlace(i), at, at + block);
         for (let m = 0; m < block; m++) {
           lengthened[at + m] = settlement[at + m];
           if (lnStiffness[m] + found.toTolerance[i] >= found.needed[i]) continue;
           // Lengthened until the settlement is allowable, or to the longest length where that is not enough.
           lengthened[at + m] = load * Math.exp(-Math.min(found.needed[i], lnStiffness[m] + found.toLongest[i]));
+          if (interaction !== undefined) places[at + m] = found.builtPlace(i, lnStiffness[m]);
           surprises[m]++;
         }
       }
-      largestDistortion(plan, settlement, block, distortion);
-      if (found !== undefined) largestDistortion(plan, lengthened, block, foundDistortion);
+      if (interaction === undefined) {
+        largestDistortion(plan, settlement, block, distortion);
+        if (found !== undefined) largestDistortion(plan, lengthened, block, foundDistortion);
+        return;
+      }
+      const factors = interaction.factors(moments.lengths);
+      together.fill(0);
+      for (let i = 0; i < n; i++) addRows(together, i * block, factors, i * n, n, settlement, block);
+      largestDistortion(plan, together, block, distortion);
+      if (found === undefined) return;
+      interaction.settleDraws(lengthened, places, block, together);
+      largestDistortion(plan, together, block, foundDistortion);
     },
   };
 }

@@ -13,4 +13,6 @@ export interface PileSpecification {
   /** lengths are rounded up to a multiple of this above the shortest; 0: any length */
   readonly lengthStep: Metres;
   readonly lengthRule: LengthRule;
+  /** whether a pile also settles by its neighbours' loads; design lengths stay those of single piles */
+  readonly groupInteraction: boolean;
 }

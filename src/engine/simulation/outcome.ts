@@ -1,8 +1,8 @@
 import { damageShare } from "../costs/damage.js";
 import { foundationCost } from "../costs/prices.js";
+import type { Interaction } from "../decision/group-interaction.js";
 import type { Plan } from "../decision/plan.js";
 import type { Problem } from "../decision/problem.js";
-import type { Interaction } from "./group-interaction.js";
 import { lnStiffnessAt } from "./stiffness-curve.js";
 
 /**
@@ -41,7 +41,7 @@ export interface BuiltPiles {
  * @param out          receives the columns from `at` on
  */
 export function priceOutcome(
-  { building, delay, prices, piles }: Problem, plan: Plan, built: BuiltPiles, realised: RealisedPiles, interaction: Interaction | undefined, out: Float64Array, at: number,
+  { building, delay, prices, piles }: Problem, plan: Plan, built: BuiltPiles, realised: RealisedPiles, interaction: Pick<Interaction, "settle"> | undefined, out: Float64Array, at: number,
 ): void {
   const { logLengths, lnStiffness, neededLog } = realised;
   const n = built.lengths.length;

@@ -1,7 +1,5 @@
+import { interactionOf, type Interaction } from "../decision/group-interaction.js";
 import { sortedPlan, type Plan } from "../decision/plan.js";
-import type { Problem } from "../decision/problem.js";
-import { gaussLegendre } from "../numerics/gauss-legendre.js";
-import { groupInteraction, type Interaction } from "./group-interaction.js";
 import { bandOf, groundUnderPiles, type GroundUnderPiles } from "./ground-under-piles.js";
 import { holePlaces } from "./hole-places.js";
 import { errorDraws, type ErrorDraws } from "./readings.js";
@@ -46,23 +44,9 @@ export function prepareSimulation(task: SimulationTask): Simulation {
     field: siteField(ground.terms, { plan, rings: ground.rings, levelBounds: ground.levelBounds, holes: places.holes, readingDepths: places.depths }),
     errors: errorDraws(places),
     variants: problems.map((problem, v) => preparedVariant(problem, ground.profile, places, places.variants[v])),
-    interaction: task.interaction === true ? interactionOf(problems[0], plan, ground) : undefined,
+    interaction: problems[0].piles.groupInteraction ? interactionOf(problems[0], plan, ground.logLengths) : undefined,
     byForm: new Float64Array(stiffnesses),
     byElements: new Float64Array(stiffnesses),
     band: bandOf(ground),
   };
-}
-
-/** The tip stands in the ground above it where a layer ends there. */
-const aboveTip = 1 - 1e-9;
-
-/** Interaction in the median ground: factors are ratios of settlements, which the ground's variation about it changes little. */
-function interactionOf({ ground: { poissonRatio }, piles }: Problem, plan: Plan, { profile, logLengths }: GroundUnderPiles): Interaction {
-  const shear = (depth: number): number => (profile.modulus * profile.shape(depth)) / (2 * (1 + poissonRatio));
-  const { nodes, weights } = gaussLegendre(12);
-  const average = (length: number): number => nodes.reduce((sum, node, q) => sum + weights[q] * shear(length * node), 0);
-  const pileOf = (length: number) => ({
-    length, radius: piles.diameter / 2, tipShearModulus: shear(length * aboveTip), averageRatio: average(length) / shear(length * aboveTip), poisson: poissonRatio, pileModulus: piles.modulus as number,
-  });
-  return groupInteraction(logLengths, pileOf, plan.distances, plan.distanceOf);
 }

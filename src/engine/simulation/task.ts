@@ -15,8 +15,6 @@ export interface SimulationTask {
   /** numbers of holes, whole, from 0 */
   readonly counts: readonly number[];
   readonly seed: string;
-  /** whether piles settle each other (interaction factors); left out: each pile stands alone */
-  readonly interaction?: boolean;
 }
 
 /**
@@ -38,8 +36,8 @@ export function requireTask({ variants, counts }: SimulationTask): void {
 
 /** What all variants have in common, as text. */
 function shared({ ground, building, piles }: Problem): string {
-  const { diameter, modulus, shortest, longest } = piles;
-  return JSON.stringify([ground, building.piles, building.value, building.damage, building.allowableSettlement, diameter, modulus, shortest, longest]);
+  const { diameter, modulus, shortest, longest, groupInteraction } = piles;
+  return JSON.stringify([ground, building.piles, building.value, building.damage, building.allowableSettlement, diameter, modulus, shortest, longest, groupInteraction]);
 }
 
 /** Price of a number of holes of a variant, money. */

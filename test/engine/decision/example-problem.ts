@@ -14,6 +14,7 @@ export interface Change {
   readonly holes?: readonly (readonly [number, number])[];
   readonly covs?: readonly [number, number, number];
   readonly foundShare?: number;
+  readonly groupInteraction?: boolean;
   readonly seed?: string;
 }
 
@@ -32,7 +33,7 @@ export function ninePiles(change: Change = {}): Problem {
       footprint: { length: metres(15), width: metres(15) }, value: 2e6,
       damage: [{ distortion: 1 / 500, share: 0 }, { distortion: 1 / 150, share: 1 }], allowableSettlement: metres(0.025),
     },
-    piles: { diameter: metres(0.5), modulus: kilopascals(30e6), shortest: metres(3), longest: metres(25), lengthStep: metres(0), lengthRule: change.lengthRule ?? "load" },
+    piles: { diameter: metres(0.5), modulus: kilopascals(30e6), shortest: metres(3), longest: metres(25), lengthStep: metres(0), lengthRule: change.lengthRule ?? "load", groupInteraction: change.groupInteraction ?? false },
     investigation: {
       readingCov, holeCov, methodCov, readingSpacing: metres(0.5), holeDepth: metres(15.6), holes: change.holes?.map(([x, y]) => ({ x: metres(x), y: metres(y) })),
       designRule: { name: change.rule ?? "geometric", deviations: change.deviations ?? 1, update: change.update ?? false },

@@ -73,7 +73,7 @@ it("one factor on loads and stiffnesses changes nothing", () => {
 
 // Common sense of elasticity: neighbours' loads only add settlement, and most to the piles in the middle, which carry most.
 it("group interaction changes damage and nothing that is built", () => {
-  const group = prepareSimulation({ ...task, interaction: true });
+  const group = prepareSimulation({ ...task, variants: task.variants.map(({ name, problem }) => ({ name, problem: { ...problem, piles: { ...problem.piles, groupInteraction: true } } })) });
   let changed = 0;
   for (let index = 0; index < 4; index++) {
     const [alone, together] = [simulateForm(simulation, index), simulateForm(group, index)];

@@ -1,5 +1,4 @@
 import { requireDomain } from "../numerics/domain-error.js";
-import { lagrangeWeights } from "../numerics/lagrange.js";
 
 /** A pile about whose neighbours is asked. */
 export interface InteractingPile {
@@ -48,57 +47,4 @@ function stiffness({ length, radius, averageRatio, poisson, tipShearModulus, pil
   const perShaft = (Math.tanh(muLength) / muLength) * (length / radius);
   const base = 4 / ((1 - poisson) * softening);
   return (base + ((2 * Math.PI * averageRatio) / zeta) * perShaft) / (1 + (base * perShaft) / (Math.PI * lambda));
-}
-
-/** How the piles of a plan settle each other. */
-export interface Interaction {
-  /**
-   * Settlements with what the other piles add.
-   *
-   * @param alone    settlement of each pile by its own load, m
-   * @param lengths  of the piles, m
-   * @returns        m; a new array
-   */
-  settle(alone: Float64Array, lengths: Float64Array): Float64Array;
-}
-
-/**
- * Interaction of all piles of a plan by superposing pairs: s_i = sum over j of alpha_ij P_j / K_j. A pair of unequal lengths takes
- * the factor of the length half way between in the logarithm, so that the factors are symmetric as reciprocity wants them.
- *
- * @param logLengths  even in the logarithm, at least 4
- * @param pileOf      the pile at a length, m
- * @param distances   distinct distances of the plan, m, 0 first
- * @param distanceOf  class of each ordered pair, piles x piles
- */
-export function groupInteraction(logLengths: Float64Array, pileOf: (length: number) => InteractingPile, distances: Float64Array, distanceOf: Int32Array): Interaction {
-  const count = logLengths.length;
-  const table = new Float64Array(distances.length * count);
-  for (let d = 1; d < distances.length; d++) {
-    for (let k = 0; k < count; k++) table[d * count + k] = interactionFactor(pileOf(Math.exp(logLengths[k])), distances[d]);
-  }
-  return {
-    settle(alone, lengths) {
-      const n = alone.length;
-      const settled = Float64Array.from(alone);
-      const logs = lengths.map(Math.log);
-      let last = Number.NaN;
-      let start = 0;
-      let weights: Float64Array = new Float64Array(4);
-      for (let i = 0; i < n; i++) {
-        for (let j = 0; j < i; j++) {
-          const between = (logs[i] + logs[j]) / 2;
-          if (between !== last) {
-            ({ start, weights } = lagrangeWeights(logLengths, between));
-            last = between;
-          }
-          const at = distanceOf[i * n + j] * count + start;
-          const alpha = weights[0] * table[at] + weights[1] * table[at + 1] + weights[2] * table[at + 2] + weights[3] * table[at + 3];
-          settled[i] += alpha * alone[j];
-          settled[j] += alpha * alone[i];
-        }
-      }
-      return settled;
-    },
-  };
 }
