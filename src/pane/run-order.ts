@@ -10,8 +10,6 @@ export interface RunOrder {
   readonly units: "SI" | "US";
   /** whose money; "" where nobody wrote it */
   readonly money: string;
-  /** the variant that is the site block as it stood; -1: none of them */
-  readonly own: number;
   /** short name of the site block's inputs as they stood */
   readonly block: string;
   /** where the site block stood */

@@ -29,8 +29,8 @@ describe("hashes", () => {
   it("of inputs know every value and no order of properties", () => {
     const task = smallTask();
     expect(inputsHash(task)).toMatch(/^[0-9a-f]{16}$/);
-    expect(inputsHash({ seed: task.seed, counts: task.counts, variants: task.variants, interaction: undefined })).toBe(inputsHash(task));
-    const others = [smallTask({ Seed: 12 }), smallTask({ "Stiffness COV": 0.66 }), smallTask({ "Price per hole": 651 }), { ...task, counts: [0, 1] }, { ...task, interaction: true }, { ...task, counts: [1, 0, 3] }];
+    expect(inputsHash({ seed: task.seed, counts: task.counts, variants: task.variants, left: undefined } as typeof task)).toBe(inputsHash(task));
+    const others = [smallTask({ Seed: 12 }), smallTask({ "Stiffness COV": 0.66 }), smallTask({ "Price per hole": 651 }), { ...task, counts: [0, 1] }, smallTask({ "Group interaction": "on" }), { ...task, counts: [1, 0, 3] }];
     expect(new Set([task, ...others].map(inputsHash)).size).toBe(others.length + 1);
     // text and number, list and nesting stay apart
     expect(new Set([["1"], [1], [[1]], { 0: 1 }, null, "null", [], [null]].map(inputsHash)).size).toBe(8);

@@ -31,7 +31,7 @@ describe("the choices of a run", () => {
     const made = order({});
     expect(made.task).toEqual({ variants: [{ name: site.method, problem }], counts: site.counts, seed: problem.seed });
     expect(made.target).toEqual({ regret: Number(usual.sum) });
-    expect(made).toMatchObject({ own: 0, place: "Site!A1:D60", at: 5, money: site.money, units: site.units, block: inputsHash(problem) });
+    expect(made).toMatchObject({ place: "Site!A1:D60", at: 5, money: site.money, units: site.units, block: inputsHash(problem) });
   });
 
   it("offer every method of the table and every design rule of the block", () => {
@@ -46,8 +46,6 @@ describe("the choices of a run", () => {
     expect(third!.problem.investigation.readingCov).toBe(other.readingCov);
     expect(last!.problem.investigation.designRule.name).toBe("quartile");
     expect(new Set(made.task.variants.map(({ problem }) => JSON.stringify([problem.ground, problem.building, problem.piles]))).size).toBe(1);
-    expect(made.own).toBe(0);
-    expect(order({ methods: [other.name] }).own).toBe(-1);
   });
 
   it("take a price per hole of their own for a method", () => {
@@ -56,9 +54,15 @@ describe("the choices of a run", () => {
     expect(made.task.variants[0]!.problem.prices.perHole).toBe(site.problem.prices.perHole);
   });
 
-  it("keep the piles' interaction out of the task unless it is asked for, so that its hash stays the same", () => {
-    expect("interaction" in order({}).task).toBe(false);
-    expect(order({ interaction: true }).task.interaction).toBe(true);
+  it("let piles settle their neighbours as the block says, unless the person says otherwise", () => {
+    const settling = (block: readonly (readonly unknown[])[], choice: boolean | undefined): boolean[] => {
+      const usual = usualChoices(parseSite(block));
+      const made = orderOf(parseSite(block), block, { ...usual, interaction: choice ?? usual.interaction, methods: [site.method, other.name] }, "", 0);
+      return "part" in made ? [] : made.task.variants.map(({ problem }) => problem.piles.groupInteraction);
+    };
+    const on = [...templateRows(), ["Group interaction", "on"]].filter(([label], k, all) => label !== "Group interaction" || k === all.length - 1);
+    expect([settling(templateRows(), undefined), settling(templateRows(), true)]).toEqual([[false, false], [true, true]]);
+    expect([settling(on, undefined), settling(on, false)]).toEqual([[true, true], [false, false]]);
   });
 
   it("read counts as the block does", () => {

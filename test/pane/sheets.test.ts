@@ -6,7 +6,8 @@ import { inputsHash } from "../../src/jobs/inputs-hash.js";
 import { numberWriter } from "../../src/pane/model/numbers.js";
 import { briefInWords, briefSheet } from "../../src/pane/sheets/brief-sheet.js";
 import { inLines } from "../../src/pane/sheets/cells.js";
-import { contentOf, reportOf, type SimulationReport } from "../../src/pane/sheets/simulation-report.js";
+import { contentOf, type SimulationReport } from "../../src/pane/sheets/simulation-report.js";
+import { reportOf } from "../../src/pane/run-report.js";
 import type { RunState } from "../../src/pane/run-store.js";
 import { orderOfDemonstration, simulatedRow, simulatedTable } from "./simulated-rows.js";
 
@@ -74,12 +75,12 @@ describe("the client brief", () => {
   it("says in one paragraph what is recommended and what it saves over the client's count", () => {
     // 52,000 less 41,000; the investigation costs 6,000 more than none
     expect(briefInWords(report(), 0, 0, writer)).toBe(
-      "For this foundation of 12 piles, two holes (Cone) are expected to cost least: 41,000\u00a0EUR in all, give or take 20, for the investigation, the foundation, repair of damage and delay together. Against buying none, as proposed it saves 11,000\u00a0EUR in expectation, although the investigation costs 6,000\u00a0EUR more. Four holes cannot be told from it at this accuracy. With these holes the chance of any damage to the building is 20\u00a0%, and 1.3 of the 12 piles are expected to need more length than was built.",
+      "For this foundation of 12 piles, two holes (Cone) are expected to cost least: 41,000\u00a0EUR in all, give or take 20, for the investigation, the foundation, repair of damage and delay together. Against buying none, as proposed, this saves 11,000\u00a0EUR in expectation, although the investigation costs 6,000\u00a0EUR more. Four holes cannot be told from it at this accuracy. With these holes the chance of any damage to the building is 20\u00a0%, and 1.3 of the 12 piles are expected to need more length than was built.",
     );
   });
 
   it("states no saving where there is none to state", () => {
-    expect(briefInWords(report(), 0, 4, writer)).toMatch(/At this accuracy that cannot be told from the four holes proposed, at 41,010/);
+    expect(briefInWords(report(), 0, 4, writer)).toContain("Against the four holes proposed, this is 10\u00a0EUR less in expectation, but the difference is within its own error, so at this accuracy the two cannot be told apart.");
     expect(briefInWords(report(), 0, 4, writer)).not.toMatch(/Four holes cannot/);
     expect(briefInWords(report(), 0, 2, writer)).toMatch(/That is the number proposed\./);
     expect(briefInWords(report(), 0, 7, writer)).toMatch(/Seven holes, as proposed, are not among the counts compared/);
@@ -88,7 +89,7 @@ describe("the client brief", () => {
 
   it("gives a bound where nobody saw damage", () => {
     const unseen = simulatedTable(rows.map((row) => ({ ...row, failureChanceAtMost: 0.005 })));
-    expect(briefInWords({ order, table: unseen }, 0, undefined, writer)).toMatch(/No realised ground saw damage to the building, so its chance is below 0\.5\u00a0%/);
+    expect(briefInWords({ run: order, table: unseen }, 0, undefined, writer)).toMatch(/No realised ground saw damage to the building, so its chance is below 0\.5\u00a0%/);
   });
 
   it("puts the picture's cells under their name, and cautions and stamp below", () => {

@@ -24,6 +24,6 @@ export function orderOfDemonstration(change: Partial<RunOrder> = {}): RunOrder {
   const { problem } = parseSite(templateRows());
   return {
     task: { variants: [{ name: "Cone", problem }], counts: [0, 2, 4], seed: "7" }, target: { realisations: 9 },
-    units: "SI", money: "EUR", own: 0, block: "block", place: "Site!A1:D60", at: 0, ...change,
+    units: "SI", money: "EUR", block: "block", place: "Site!A1:D60", at: 0, ...change,
   };
 }

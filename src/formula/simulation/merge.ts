@@ -1,6 +1,8 @@
+import { basename } from "node:path";
 import { inputsHash } from "../../jobs/inputs-hash.js";
 import { runSimulation } from "../../jobs/run-simulation.js";
 import { simulationStamp } from "../../jobs/simulation-stamp.js";
+import { simulationReport } from "../../pane/sheets/simulation-report.js";
 import { simulationText } from "../../results/index.js";
 import { FormulaLineError, misused, unreadable } from "../failure.js";
 import { joinedParts, type JoinedParts, type NamedPart } from "./join-parts.js";
@@ -8,6 +10,7 @@ import { readOptions, wholeNumber, type Options } from "./options.js";
 import { ProgressLine } from "./progress-line.js";
 import { requirePlace, writeResult, type ResultPlace } from "./result-file.js";
 import { simulationThreads, type ThreadsFor } from "./simulate.js";
+import { BRIEF_MEANING, briefOf } from "./simulate-call.js";
 import { siteSource, taskOf } from "./site-source.js";
 import { readStateFile } from "./state-file.js";
 import type { Terminal } from "./terminal.js";
@@ -19,6 +22,7 @@ const USAGE = `Joins parts of a simulation into the table that one run would hav
 
   --out FILE      writes the table on a sheet of a new workbook
   --book FILE     the workbook that the parts were made from; --out then writes a copy of it with the table on a new sheet
+  --brief COUNT   adds a client brief of one page to --out, with the saving over the number of holes that the client has in mind, or --brief none
   --overwrite     lets --out replace a file that is there
   --workers N     threads that compute what parts do not hold, the second-order form; without it one for each core
 
@@ -26,7 +30,7 @@ Parts of other inputs or another version, with gaps or overlaps, are refused. Ex
 on standard error; 2 for a call that cannot be carried out as given; 130 after Ctrl-C, and the parts stay as they are.
 `;
 
-const KNOWN = { values: { "--out": "a file", "--book": "a file", "--workers": "a number" }, flags: ["--overwrite"], plain: "parts" };
+const KNOWN = { values: { "--out": "a file", "--book": "a file", "--brief": BRIEF_MEANING, "--workers": "a number" }, flags: ["--overwrite"], plain: "parts" };
 const MOST_WORKERS = 64;
 const INTERRUPTED = 130;
 
@@ -67,7 +71,7 @@ async function carriedOut(options: Options, terminal: Terminal, threadsFor: Thre
   if (end.kind !== "done" || end.table === undefined) return end.kind === "cancelled" ? INTERRUPTED : 1;
   const stamp = simulationStamp(parts.task, end.table, new Date());
   terminal.out(`${simulationText(end.table, stamp, parts.labels.units, parts.labels.money)}\n`);
-  if (place !== undefined) terminal.err(writeResult(place, { table: end.table, stamp, ...parts.labels, warnings: [] }));
+  if (place !== undefined) terminal.err(writeResult(place, simulationReport({ task: parts.task, ...parts.labels, place: place.origin }, end.table, { isFinished: true, hasChanged: false }, new Date())));
   return 0;
 }
 
@@ -77,14 +81,16 @@ function namedPart(path: string): NamedPart {
   return { path, state };
 }
 
-function placeOf({ values, flags }: Options, { task }: JoinedParts): ResultPlace | undefined {
-  const [out, path, overwrite] = [values.get("--out"), values.get("--book"), flags.has("--overwrite")];
+function placeOf(options: Options, { task }: JoinedParts): ResultPlace | undefined {
+  const { values, flags } = options;
+  const [out, path, overwrite, brief] = [values.get("--out"), values.get("--book"), flags.has("--overwrite"), briefOf(options)];
   if (out === undefined) {
-    if (overwrite || path !== undefined) throw misused(`${overwrite ? "--overwrite" : "--book"} goes with --out.`);
+    const lone = overwrite ? "--overwrite" : path !== undefined ? "--book" : brief !== undefined ? "--brief" : undefined;
+    if (lone !== undefined) throw misused(`${lone} goes with --out.`);
     return undefined;
   }
-  if (path === undefined) return { out, overwrite, book: undefined, sheets: [] };
-  const { site, xlsx, sheets } = siteSource(path);
-  if (inputsHash(taskOf(site, task.counts, task.interaction === true)) !== inputsHash(task)) throw unreadable(`The site block of ${path} is not the one that the parts were made from; take the workbook as it was, or leave --book out.`);
-  return { out, overwrite, book: xlsx === undefined ? undefined : { path, xlsx }, sheets };
+  if (path === undefined) return { out, overwrite, book: undefined, sheets: [], brief, origin: `parts ${options.plain.map((part) => basename(part)).join(", ")}` };
+  const { site, xlsx, sheets, origin } = siteSource(path);
+  if (inputsHash(taskOf(site, task.counts, task.variants[0]!.problem.piles.groupInteraction)) !== inputsHash(task)) throw unreadable(`The site block of ${path} is not the one that the parts were made from; take the workbook as it was, or leave --book out.`);
+  return { out, overwrite, book: xlsx === undefined ? undefined : { path, xlsx }, sheets, brief, origin };
 }

@@ -1,12 +1,15 @@
 import { existsSync, statSync } from "node:fs";
 import { dirname, extname } from "node:path";
-import { simulationSheet, type SimulationContent } from "../../host/simulation-sheet.js";
+import { simulationSheet } from "../../host/simulation-sheet.js";
 import type { SheetPlan } from "../../host/workbook.js";
+import { numberWriter } from "../../pane/model/numbers.js";
+import { briefSheet } from "../../pane/sheets/brief-sheet.js";
+import { contentOf, type SimulationReport } from "../../pane/sheets/simulation-report.js";
 import { misused } from "../failure.js";
 import { checkPlace, writeNewFile } from "../files.js";
 import { withSheet } from "../xlsx/add-sheet.js";
 import { newWorkbook } from "../xlsx/new-workbook.js";
-import type { XlsxBook } from "../xlsx/read-book.js";
+import { readXlsx, type XlsxBook } from "../xlsx/read-book.js";
 
 /** Where the result goes. */
 export interface ResultPlace {
@@ -16,8 +19,14 @@ export interface ResultPlace {
   readonly book: { readonly path: string; readonly xlsx: XlsxBook } | undefined;
   /** the other sheets of a new workbook */
   readonly sheets: readonly SheetPlan[];
+  /** the client brief that goes with the figures, for a count that the client has in mind or none; undefined: no brief */
+  readonly brief: { readonly client: number | undefined } | undefined;
+  /** where the inputs were read */
+  readonly origin: string;
 }
 
+/** The language of the terminal's own table, so that both say the same. */
+const LOCALE = "en-US";
 const EMPTY_SHEET: SheetPlan = { name: "Simulation", cells: [] };
 
 /**
@@ -39,19 +48,28 @@ export function requirePlace({ out, overwrite, book }: ResultPlace): void {
 }
 
 /**
- * Writes the workbook with the simulation on a new sheet.
+ * Writes the workbook with the simulation, and the client brief where one is wanted, on new sheets.
  *
  * @returns sentences for the person
  * @throws {FormulaLineError} a file that cannot be written
  */
-export function writeResult({ out, overwrite, book, sheets }: ResultPlace, content: SimulationContent): string {
-  const plan = simulationSheet(content);
+export function writeResult({ out, overwrite, book, sheets, brief }: ResultPlace, report: SimulationReport): string {
+  const plans = [simulationSheet(contentOf(report)), ...(brief === undefined ? [] : [briefSheet(report, 0, brief.client, numberWriter(LOCALE))])];
   if (book === undefined) {
-    writeNewFile(out, newWorkbook([...sheets, plan]), overwrite);
-    return `Written to ${out}, sheet ${plan.name}.\n`;
+    writeNewFile(out, newWorkbook([...sheets, ...plans]), overwrite);
+    return written(out, plans.map(({ name }) => name));
   }
-  const { bytes, sheet } = withSheet(book.xlsx, plan);
-  writeNewFile(out, bytes, overwrite);
+  let { xlsx } = book;
+  const added = plans.map((plan) => {
+    const { bytes, sheet } = withSheet(xlsx, plan);
+    xlsx = readXlsx(bytes);
+    return { bytes, sheet };
+  });
+  writeNewFile(out, added.at(-1)!.bytes, overwrite);
   const signed = book.xlsx.isSigned ? "The workbook was signed; the signature does not hold for the copy.\n" : "";
-  return `${signed}Written to ${out}, sheet ${sheet}.\n`;
+  return signed + written(out, added.map(({ sheet }) => sheet));
+}
+
+function written(out: string, sheets: readonly string[]): string {
+  return `Written to ${out}, ${sheets.length === 1 ? "sheet" : "sheets"} ${sheets.join(" and ")}.\n`;
 }

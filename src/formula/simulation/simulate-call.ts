@@ -8,6 +8,7 @@ export interface SimulateCall {
   readonly book: string | undefined;
   readonly out: string | undefined;
   readonly overwrite: boolean;
+  readonly brief: BriefCall | undefined;
   /** undefined: what the site block asks for */
   readonly counts: readonly number[] | undefined;
   /** undefined: the price of one hole */
@@ -16,6 +17,11 @@ export interface SimulateCall {
   readonly workers: number | undefined;
   readonly state: string | undefined;
   readonly part: PartCall | undefined;
+}
+
+/** A client brief; client: the count that the client has in mind, undefined where none. */
+export interface BriefCall {
+  readonly client: number | undefined;
 }
 
 /** A part of a larger run; realisations are counted from 1, ends included. */
@@ -34,11 +40,12 @@ export const SIMULATE_USAGE = `Simulates the site of a workbook by finite elemen
 
   --book FILE        an xlsx or xlsm workbook, or a csv, with a site block named Site; without it the demonstration
   --out FILE         writes a copy of the workbook with the table on a new sheet (for a csv or the demonstration, a new workbook)
+  --brief COUNT      adds a client brief of one page to --out, with the saving over the number of holes that the client has in mind, or --brief none
   --overwrite        lets --out replace a file that is there
   --counts LIST      numbers of holes, such as 0-12 or 0,2,4-8; without it those of the site block
   --precision MONEY  stops when choosing the wrong number of holes is expected to cost less; without it the price of one hole
   --realisations N   stops after so many realisations by finite elements instead
-  --interaction      lets the piles of the group settle each other
+  --interaction      lets piles settle their neighbours, also where the block says off
   --workers N        threads that compute; without it one for each core
   --state FILE       keeps what is done in this file, and goes on from it where it is there
   --from A --to B --part FILE
@@ -49,11 +56,13 @@ same to the last digit for any number of threads and after any interruption. Exi
 only an unfinished one, with the reason on standard error; 2 for a call that cannot be carried out as given; 130 after Ctrl-C.
 `;
 
+/** What stands after --brief. */
+export const BRIEF_MEANING = "the number of holes that the client has in mind, or none,";
 const MOST_REALISATIONS = 100_000;
 const MOST_WORKERS = 64;
 const KNOWN = {
   values: {
-    "--book": "a file", "--out": "a file", "--counts": "numbers of holes, such as 0-12,", "--precision": "a sum of money", "--realisations": "a number",
+    "--book": "a file", "--out": "a file", "--brief": BRIEF_MEANING, "--counts": "numbers of holes, such as 0-12,", "--precision": "a sum of money", "--realisations": "a number",
     "--workers": "a number", "--state": "a file", "--from": "a number", "--to": "a number", "--part": "a file",
   },
   flags: ["--overwrite", "--interaction"],
@@ -71,10 +80,11 @@ export function readSimulateCall(words: readonly string[]): SimulateCall | "help
   if (options === "help") return "help";
   const { values, flags } = options;
   const call: SimulateCall = {
-    book: values.get("--book"), out: values.get("--out"), overwrite: flags.has("--overwrite"), counts: countsOf(values.get("--counts")), target: targetOf(options),
+    book: values.get("--book"), out: values.get("--out"), overwrite: flags.has("--overwrite"), brief: briefOf(options), counts: countsOf(values.get("--counts")), target: targetOf(options),
     interaction: flags.has("--interaction"), workers: wholeNumber(options, "--workers", 1, MOST_WORKERS), state: values.get("--state"), part: partOf(options),
   };
   if (call.overwrite && call.out === undefined) throw misused("--overwrite goes with --out.");
+  if (call.brief !== undefined && call.out === undefined) throw misused("--brief goes with --out, the workbook that it is written into.");
   const clash = call.part === undefined ? undefined : ["--out", "--state", "--precision", "--realisations"].find((name) => values.has(name));
   if (clash !== undefined) throw misused(`--part and ${clash} do not go together: a part has realisations but no table; npm run merge joins parts and writes it.`);
   return call;
@@ -89,6 +99,20 @@ function targetOf(options: Options): SimulationTarget | undefined {
   const regret = Number(precision);
   if (precision.trim() === "" || !(regret > 0 && regret < Infinity)) throw misused(`The option --precision is ${precision}; a sum of money above 0 is needed: what choosing the wrong number of holes may be expected to cost.`);
   return { regret };
+}
+
+/**
+ * The brief that a command asks for.
+ *
+ * @throws {FormulaLineError} neither a number of holes nor "none"
+ */
+export function briefOf({ values }: Options): BriefCall | undefined {
+  const text = values.get("--brief");
+  if (text === undefined) return undefined;
+  if (text.trim().toLowerCase() === "none") return { client: undefined };
+  const client = Number(text);
+  if (text.trim() === "" || !Number.isInteger(client) || client < 0 || client > LARGEST_COUNT) throw misused(`The option --brief is ${text}; ${BRIEF_MEANING} is needed, from 0 to ${LARGEST_COUNT}.`);
+  return { client };
 }
 
 function partOf(options: Options): PartCall | undefined {

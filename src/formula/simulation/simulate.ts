@@ -4,6 +4,7 @@ import { runPart, runSimulation } from "../../jobs/run-simulation.js";
 import { loadState, saveState, type TableLabels } from "../../jobs/simulation-state.js";
 import { simulationStamp } from "../../jobs/simulation-stamp.js";
 import type { Threads } from "../../jobs/threads.js";
+import { simulationReport } from "../../pane/sheets/simulation-report.js";
 import { simulationText } from "../../results/index.js";
 import { FormulaLineError } from "../failure.js";
 import { nodeThreads } from "./node-threads.js";
@@ -56,9 +57,9 @@ export async function simulate(words: readonly string[], terminal: Terminal, thr
 }
 
 function orderOf(call: SimulateCall): Order {
-  const { site, xlsx, sheets } = siteSource(call.book);
+  const { site, xlsx, sheets, origin } = siteSource(call.book);
   const task = taskOf(site, call.counts, call.interaction);
-  const place = call.out === undefined ? undefined : { out: call.out, overwrite: call.overwrite, book: xlsx === undefined || call.book === undefined ? undefined : { path: call.book, xlsx }, sheets };
+  const place = call.out === undefined ? undefined : { out: call.out, overwrite: call.overwrite, book: xlsx === undefined || call.book === undefined ? undefined : { path: call.book, xlsx }, sheets, brief: call.brief, origin };
   if (place !== undefined) requirePlace(place);
   const labels = labelsOf(site);
   if (call.part !== undefined) return { task, labels, kept: loadPart(call.part, task), keepIn: call.part.file, call, place };
@@ -114,7 +115,7 @@ function concluded(order: Order, run: BatchRun<SimulationTable>, end: BatchEnd<S
     return end.kind === "cancelled" ? INTERRUPTED : 1;
   }
   if (call.part !== undefined) terminal.err(`Realisations ${call.part.from} to ${call.part.to} are in ${call.part.file}; npm run merge joins the parts.\n`);
-  if (place !== undefined && end.table !== undefined) terminal.err(writeResult(place, { table: end.table, stamp: simulationStamp(task, end.table, new Date()), ...labels, warnings: [] }));
+  if (place !== undefined && end.table !== undefined) terminal.err(writeResult(place, simulationReport({ task, ...labels, place: place.origin }, end.table, { isFinished: true, hasChanged: false }, new Date())));
   return 0;
 }
 

@@ -22,6 +22,8 @@ export interface SiteSource {
   readonly xlsx: XlsxBook | undefined;
   /** the sheets of a new one */
   readonly sheets: readonly SheetPlan[];
+  /** where the inputs stand, in words */
+  readonly origin: string;
 }
 
 /**
@@ -31,28 +33,30 @@ export interface SiteSource {
  * @throws {FormulaLineError} with the reason in words
  */
 export function siteSource(path: string | undefined): SiteSource {
-  if (path === undefined) return { site: siteOf(demonstrationBook(), "The demonstration"), xlsx: undefined, sheets: [siteSheet()] };
+  if (path === undefined) return { site: siteOf(demonstrationBook(), "The demonstration"), xlsx: undefined, sheets: [siteSheet()], origin: "the demonstration" };
   const kind = extname(path).toLowerCase();
   const bytes = readNamedFile(path);
   if (kind === ".csv" || kind === ".tsv" || kind === ".txt") {
     const book = readCsv(bytes, basename(path, extname(path)));
-    return { site: siteOf(book, basename(path)), xlsx: undefined, sheets: [planOf(book)] };
+    return { site: siteOf(book, basename(path)), xlsx: undefined, sheets: [planOf(book)], origin: basename(path) };
   }
   if (![".xlsx", ".xlsm", ".xls", ".xlsb", ".ods"].includes(kind)) throw misused(`--book takes an xlsx, xlsm or csv file, and ${basename(path)} is none by its name.`);
   const xlsx = readXlsx(bytes);
-  return { site: siteOf(xlsx.book, basename(path)), xlsx, sheets: [] };
+  return { site: siteOf(xlsx.book, basename(path)), xlsx, sheets: [], origin: `${basename(path)}, name Site` };
 }
 
 /**
  * The task of a site: its own method and design rule, one row a count.
  *
- * @param counts  undefined: those that the block asks for
+ * @param counts       undefined: those that the block asks for
+ * @param interaction  true lets piles settle their neighbours, whatever the block says
  * @throws {FormulaLineError} a count that the site does not allow
  */
 export function taskOf(site: Site, counts: readonly number[] | undefined, interaction: boolean): SimulationTask {
   const wanted = inWords(() => counts?.map((count) => requireCount(site, count, "A number of --counts")));
-  const { problem, method } = site;
-  return { variants: [{ name: method, problem }], counts: wanted ?? site.counts ?? usualCounts(site), seed: problem.seed, ...(interaction ? { interaction: true } : {}) };
+  const { problem: own, method } = site;
+  const problem = interaction ? { ...own, piles: { ...own.piles, groupInteraction: true } } : own;
+  return { variants: [{ name: method, problem }], counts: wanted ?? site.counts ?? usualCounts(site), seed: problem.seed };
 }
 
 /** How the site's tables are labelled. */

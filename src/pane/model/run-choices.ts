@@ -17,6 +17,7 @@ export interface RunChoices {
   readonly stop: "precision" | "number";
   readonly sum: string;
   readonly realisations: string;
+  /** whether piles settle their neighbours */
   readonly interaction: boolean;
 }
 
@@ -62,7 +63,7 @@ export function usualChoices(site: Site): RunChoices {
     stop: "precision",
     sum: String(priceOfHole(site, counts)),
     realisations: String(USUAL_REALISATIONS),
-    interaction: false,
+    interaction: site.problem.piles.groupInteraction,
   };
 }
 
@@ -103,11 +104,9 @@ export function orderOf(site: Site, cells: readonly (readonly unknown[])[], choi
     if ("part" in made) return made;
     variants.push(made);
   }
-  const own = choices.prices[site.method]?.trim() ? -1 : ways.findIndex(({ method, rule }) => method === site.method && rule === site.problem.investigation.designRule.name);
   const { seed } = site.problem;
   return {
-    task: { variants, counts, seed, ...(choices.interaction ? { interaction: true } : {}) },
-    target, units: site.units, money: site.money, own, block: inputsHash(site.problem), place, at: now,
+    task: { variants, counts, seed }, target, units: site.units, money: site.money, block: inputsHash(site.problem), place, at: now,
   };
 }
 
@@ -144,6 +143,7 @@ function variantOf(site: Site, cells: readonly (readonly unknown[])[], { method,
     ...(method === site.method ? [] : ["Method", method]),
     ...(rule === site.problem.investigation.designRule.name ? [] : ["Design rule", words]),
     ...(price === "" ? [] : ["Price per hole", Number(price)]),
+    ...(choices.interaction === site.problem.piles.groupInteraction ? [] : ["Group interaction", choices.interaction ? "on" : "off"]),
   ];
   try {
     return { name, problem: parseSite(cells, pairs).problem };

@@ -4,7 +4,7 @@ import { IS, IS_NOT, SMALL_SUMS } from "../../results/cautions.js";
 import { resultIn, resultUnit } from "../../units/result-units.js";
 import { tableStep } from "../model/conclusion.js";
 import { countsInWords, holesInWords, sentenceCase, shorten, type NumberWriter } from "../model/numbers.js";
-import { boundInWords, rowsOfWay } from "../model/run-words.js";
+import { boundInWords, rowsOfWay } from "../model/ways.js";
 import { inLines, rowOf, type Content } from "./cells.js";
 import { stampTable } from "../../results/index.js";
 import type { SimulationReport } from "./simulation-report.js";
@@ -24,7 +24,7 @@ const MIDDLE = lengthPercentiles.indexOf(50);
  * @param writer   writes the numbers in the paragraph
  */
 export function briefSheet(report: SimulationReport, variant: number, client: number | undefined, writer: NumberWriter): SheetPlan {
-  const { order, table } = report;
+  const { run, table } = report;
   const { rows } = rowsOfWay(table, variant);
   const cells: PlannedCell[] = [...rowOf(0, [{ value: "How many holes before the piles are priced", style: "title" }])];
   let row = 2;
@@ -37,11 +37,11 @@ export function briefSheet(report: SimulationReport, variant: number, client: nu
   paragraph(briefInWords(report, variant, client, writer), "label");
   row++;
   const head = row++;
-  const length = resultUnit("length", order.units);
-  const inMoney = order.money === "" ? "" : ` (${shorten(order.money, 12)})`;
+  const length = resultUnit("length", run.units);
+  const inMoney = run.money === "" ? "" : ` (${shorten(run.money, 12)})`;
   const heads = ["Holes", "Investigation", "Foundation", "Failure", "Delay", `Total${inMoney}`, "Give or take", "Chance cheapest", `Mean pile (${length})`];
   cells.push(...rowOf(head, heads.map((value): Content => ({ value, style: "numberhead" }))));
-  for (const each of rows) cells.push(...rowOf(row++, tableRow(each, order.units)));
+  for (const each of rows) cells.push(...rowOf(row++, tableRow(each, run.units)));
   const data = `A${head + 1}:F${row}`;
   paragraph("Give or take is two standard errors. Chance cheapest is among the counts of this table, given the errors. Mean pile: half of all outcomes are shorter.", "note");
   row++;
@@ -49,7 +49,7 @@ export function briefSheet(report: SimulationReport, variant: number, client: nu
   for (const caution of [IS, IS_NOT, SMALL_SUMS]) paragraph(caution, "note");
   row++;
   cells.push(...rowOf(row++, banner("Stamp")));
-  paragraph(`${[...stampTable(report.stamp).rows, ["Inputs read from", order.place]].map(([label, value]) => `${String(label)}: ${String(value)}`).join("; ")}.`, "note");
+  paragraph(`${[...stampTable(report.stamp).rows, ["Inputs read from", run.place]].map(([label, value]) => `${String(label)}: ${String(value)}`).join("; ")}.`, "note");
   return {
     name: "Client brief",
     cells,
@@ -65,13 +65,13 @@ function banner(words: string): Content[] {
 }
 
 /** The paragraph of the brief. */
-export function briefInWords({ order, table }: Pick<SimulationReport, "order" | "table">, variant: number, client: number | undefined, writer: NumberWriter): string {
+export function briefInWords({ run, table }: Pick<SimulationReport, "run" | "table">, variant: number, client: number | undefined, writer: NumberWriter): string {
   const { rows, cheapest } = rowsOfWay(table, variant);
   const best = rows.find(({ count }) => count === cheapest)!;
   const step = tableStep(rows);
-  const unit = order.money === "" ? "" : `\u00a0${shorten(order.money, 12)}`;
+  const unit = run.money === "" ? "" : `\u00a0${shorten(run.money, 12)}`;
   const amount = (value: number): string => `${writer.money(value, step)}${unit}`;
-  const piles = order.task.variants[variant]!.problem.building.piles.length;
+  const piles = run.task.variants[variant]!.problem.building.piles.length;
   const way = shorten(best.name, 60);
   const subject = cheapest === 0 ? "no holes at all is" : `${holesInWords(cheapest)} (${way}) ${cheapest === 1 ? "is" : "are"}`;
   const sentences = [
@@ -93,8 +93,9 @@ function savingInWords(rows: readonly SimulationRow[], best: SimulationRow, clie
   if (theirs === undefined) return `${sentenceCase(holesInWords(client))}, as proposed, ${client === 1 ? "is" : "are"} not among the counts compared, so no saving is stated.`;
   const more = theirs.investigation - best.investigation;
   const price = more === 0 ? "" : more > 0 ? `, of which ${amount(more)} is saved on the investigation itself` : `, although the investigation costs ${amount(-more)} more`;
-  if (theirs.notDistinguishable) return `At this accuracy that cannot be told from ${proposal}, at ${amount(theirs.total)}.`;
-  return `Against ${proposal} it saves ${amount(theirs.total - best.total)} in expectation${price}.`;
+  const dearer = amount(theirs.total - best.total);
+  if (theirs.notDistinguishable) return `Against ${proposal}, this is ${dearer} less in expectation, but the difference is within its own error, so at this accuracy the two cannot be told apart.`;
+  return `Against ${proposal}, this saves ${dearer} in expectation${price}.`;
 }
 
 function tiesInWords(rows: readonly SimulationRow[], best: SimulationRow, client: number | undefined): string {

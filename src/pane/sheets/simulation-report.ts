@@ -1,40 +1,53 @@
-import type { SimulationTable } from "../../engine/index.js";
+import type { SimulationTable, SimulationTask } from "../../engine/index.js";
 import type { SimulationContent } from "../../host/simulation-sheet.js";
 import { simulationStamp } from "../../jobs/simulation-stamp.js";
 import type { SimulationStamp } from "../../results/index.js";
-import type { RunOrder } from "../run-order.js";
-import type { RunState } from "../run-store.js";
+import type { UnitSystem } from "../../units/result-units.js";
+
+/** What a report needs to know of the run besides its figures. */
+export interface ReportedRun {
+  readonly task: SimulationTask;
+  readonly units: UnitSystem;
+  /** whose money; "" where nobody wrote it */
+  readonly money: string;
+  /** where the inputs were read */
+  readonly place: string;
+}
+
+/** How a run stood when its report was made. */
+export interface ReportedStanding {
+  readonly isFinished: boolean;
+  /** the site block is no longer the one that was run */
+  readonly hasChanged: boolean;
+}
 
 /** A run as it is written into sheets. */
 export interface SimulationReport {
-  readonly order: RunOrder;
+  readonly run: ReportedRun;
   readonly table: SimulationTable;
   readonly stamp: SimulationStamp;
+  /** sentences that must be read before the figures */
   readonly warnings: readonly string[];
 }
 
 /**
- * The report of a run as it stands.
+ * The report of a run.
  *
- * @param state  of the run
- * @param now    date of the writing
- * @returns      undefined where there is no table
+ * @param now  date of the writing
  */
-export function reportOf({ order, table, end, phase, changed }: RunState, now: Date): SimulationReport | undefined {
-  if (order === undefined || table === undefined) return undefined;
-  const isFinished = phase === "ended" && end === "done";
-  return { order, table, stamp: simulationStamp(order.task, table, now), warnings: warningsOf(order, isFinished, changed) };
+export function simulationReport(run: ReportedRun, table: SimulationTable, standing: ReportedStanding, now: Date): SimulationReport {
+  return { run, table, stamp: simulationStamp(run.task, table, now), warnings: warningsOf(run, standing) };
 }
 
 /** What the sheet of all figures needs of a report. */
-export function contentOf({ order, table, stamp, warnings }: SimulationReport): SimulationContent {
-  return { table, stamp, units: order.units, money: order.money, warnings };
+export function contentOf({ run: { units, money }, table, stamp, warnings }: SimulationReport): SimulationContent {
+  return { table, stamp, units, money, warnings };
 }
 
-function warningsOf({ task }: RunOrder, isFinished: boolean, hasChanged: boolean): string[] {
+function warningsOf({ task }: ReportedRun, { isFinished, hasChanged }: ReportedStanding): string[] {
   return [
     ...(isFinished ? [] : ["This run was not finished: it has not reached the precision or the number of grounds that was asked for."]),
     ...(hasChanged ? ["The site block has changed since this run was ordered. These figures are for the inputs as they were."] : []),
-    ...(task.interaction === true ? ["Piles settle their neighbours in these figures (interaction factors); in the cell functions each pile stands alone."] : []),
+    ...(task.variants[0]!.problem.piles.groupInteraction ? ["Piles settle their neighbours in these figures (group interaction is on)."] : []),
   ];
 }

@@ -99,6 +99,7 @@ function fields(body: HTMLElement, site: Site, changed: () => void): { read: () 
   regret.addEventListener("input", () => (byPrecision.checked = true));
   realisations.addEventListener("input", () => (byNumber.checked = true));
   const interaction = element("input", { type: "checkbox", class: "tick" });
+  interaction.checked = usual.interaction;
   interaction.addEventListener("change", changed);
   const stop = element(
     "fieldset",

@@ -1,6 +1,7 @@
-import { bestInWords, progressInWords, rowsOfWay, standingInWords, surenessInWords, waysOf } from "../model/run-words.js";
 import { numberWriter, shorten, type NumberWriter } from "../model/numbers.js";
 import { orderInWords } from "../model/run-choices.js";
+import { bestInWords, progressInWords, standingInWords, surenessInWords } from "../model/run-words.js";
+import { rowsOfWay, waysOf } from "../model/ways.js";
 import { button } from "../parts/button.js";
 import { element, freshId } from "../parts/element.js";
 import type { RunState, RunStore } from "../run-store.js";

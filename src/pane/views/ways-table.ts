@@ -1,7 +1,7 @@
 import type { SimulationTable } from "../../engine/index.js";
 import { tableStep } from "../model/conclusion.js";
 import { shorten, type NumberWriter } from "../model/numbers.js";
-import { rowsOfWay, waysOf } from "../model/run-words.js";
+import { rowsOfWay, waysOf } from "../model/ways.js";
 import { textTable } from "../parts/text-table.js";
 
 /**
