@@ -1,10 +1,14 @@
 import { demonstrationWorkbook } from "../host/demonstration-workbook.js";
-import type { PlannedCell } from "../host/workbook.js";
+import type { PlannedCell, SheetPlan } from "../host/workbook.js";
 import type { Book, BookCell } from "./book.js";
 
 /** The demonstration workbook, of the same sheets as on the practice page; its formulas spill as they do there. */
 export function demonstrationBook(): Book {
-  const plans = demonstrationWorkbook();
+  return bookOfPlans(demonstrationWorkbook());
+}
+
+/** Planned sheets as a workbook whose formulas all spill. */
+export function bookOfPlans(plans: readonly SheetPlan[]): Book {
   return {
     sheets: plans.map(({ name, cells }) => ({ name, cells: cells.flatMap(bookCell) })),
     names: plans.flatMap(({ name: sheet, names }) => (names ?? []).map(({ name, range }) => ({ name, sheet: undefined, meaning: `'${sheet.replaceAll("'", "''")}'!${fixed(range)}` }))),

@@ -140,3 +140,41 @@ it("makes a new workbook that another reader opens, with its defined names, the 
   expect(own.names).toEqual([{ name: "Costs", sheet: undefined, meaning: "'It''s a sheet'!$A$3:$B$4" }]);
   expect((await JSZip.loadAsync(bytes, { checkCRC32: true })).file("xl/workbook.xml")).not.toBeNull();
 });
+
+describe("the defined names of an added sheet", () => {
+  const NAMED: SheetPlan = { ...PLAN, name: "It's", names: [{ name: "SimulatedCosts", range: "A3:B4" }] };
+  const workbookPart = (bytes: Uint8Array): string => Buffer.from(new ZipFile(bytes).read("xl/workbook.xml")!).toString();
+  const others = (bytes: Uint8Array) => readXlsx(bytes).book.names.filter(({ name }) => !name.startsWith("SimulatedCosts"));
+
+  it("stands beside those of a workbook that a spreadsheet program saved, which another reader sees unchanged", async () => {
+    const before = readFileSync(BID);
+    const first = withSheet(readXlsx(before), NAMED);
+    const second = withSheet(readXlsx(first.bytes), NAMED);
+    expect([first.names, second.names]).toEqual([["SimulatedCosts"], ["SimulatedCosts2"]]);
+    expect(others(before).length).toBeGreaterThan(2);
+    expect(others(second.bytes)).toEqual(others(before));
+    const [old, now] = await Promise.all([readBack(before), readBack(second.bytes)]);
+    expect(now.definedNames.getRanges("SimulatedCosts").ranges).toEqual(["'It''s'!$A$3:$B$4"]);
+    expect(now.definedNames.getRanges("SimulatedCosts2").ranges).toEqual(["'It''s (2)'!$A$3:$B$4"]);
+    expect(now.definedNames.model.filter(({ name }) => !name.startsWith("Simulated"))).toEqual(old.definedNames.model);
+    expect(workbookPart(second.bytes).replace(/<definedName name="SimulatedCosts2?">[^<]*<\/definedName>/g, "").replace(/<sheet name="It's[^>]*>/g, "")).toBe(workbookPart(Buffer.from(before)));
+  });
+
+  it("comes behind the sheets and what belongs to them, with the workbook's own prefix, where there was no list or an empty one", () => {
+    const plain = workbookParts({ S: "" });
+    const within = (xml: string, more: string): string => workbookPart(withSheet(readXlsx(packed({ ...plain, "xl/workbook.xml": xml.replace("</workbook>", `${more}</workbook>`) })), NAMED).bytes);
+    const name = "<definedName name=\"SimulatedCosts\">'It''s'!$A$3:$B$4</definedName>";
+    expect(within(plain["xl/workbook.xml"]!, '<calcPr calcId="1"/>')).toContain(`</sheets><definedNames>${name}</definedNames><calcPr calcId="1"/>`);
+    expect(within(plain["xl/workbook.xml"]!, "<functionGroups/><externalReferences><externalReference r:id=\"x\"/></externalReferences><oleSize ref=\"A1\"/>")).toContain(`</externalReferences><definedNames>${name}</definedNames><oleSize`);
+    expect(within(plain["xl/workbook.xml"]!, "<definedNames/><calcPr/>")).toContain(`</sheets><definedNames>${name}</definedNames><calcPr/>`);
+    const prefixed = plain["xl/workbook.xml"]!.replace(/<(\/?)(workbook|sheets|sheet)\b/g, "<$1x:$2").replace("xmlns=", "xmlns:x=");
+    const { bytes } = withSheet(readXlsx(packed({ ...plain, "xl/workbook.xml": prefixed })), NAMED);
+    expect(workbookPart(bytes)).toContain("</x:sheets><x:definedNames><x:definedName name=\"SimulatedCosts\">'It''s'!$A$3:$B$4</x:definedName></x:definedNames></x:workbook>");
+  });
+
+  it("takes no name that another name has in other letters, or a table", () => {
+    const table = '<table xmlns="http://schemas.openxmlformats.org/spreadsheetml/2006/main" id="1" name="T" displayName="SIMULATEDCOSTS" ref="A1:A2"><tableColumns count="1"><tableColumn id="1" name="a"/></tableColumns></table>';
+    expect(withSheet(readXlsx(packed(workbookParts({ S: "" }, { tables: [table] }))), NAMED).names).toEqual(["SimulatedCosts2"]);
+    expect(withSheet(readXlsx(packed(workbookParts({ S: "" }, { names: '<definedName name="simulatedcosts">S!$A$1</definedName><definedName name="SimulatedCosts2" localSheetId="0">S!$A$1</definedName>' }))), NAMED).names).toEqual(["SimulatedCosts3"]);
+  });
+});

@@ -61,13 +61,14 @@ export function writeResult({ out, overwrite, book, sheets, brief }: ResultPlace
   }
   let { xlsx } = book;
   const added = plans.map((plan) => {
-    const { bytes, sheet } = withSheet(xlsx, plan);
+    const { bytes, sheet, names } = withSheet(xlsx, plan);
     xlsx = readXlsx(bytes);
-    return { bytes, sheet };
+    return { bytes, sheet, names };
   });
   writeNewFile(out, added.at(-1)!.bytes, overwrite);
   const signed = book.xlsx.isSigned ? "The workbook was signed; the signature does not hold for the copy.\n" : "";
-  return signed + written(out, added.map(({ sheet }) => sheet));
+  const names = added.flatMap((each) => each.names);
+  return `${signed}${written(out, added.map(({ sheet }) => sheet))}${names.length === 0 ? "" : `The costs are named ${names.join(", ")}.\n`}`;
 }
 
 function written(out: string, sheets: readonly string[]): string {

@@ -1,5 +1,6 @@
 import type { SheetPlan } from "../../host/workbook.js";
 import { unreadable } from "../failure.js";
+import { withNames } from "./added-names.js";
 import { addedStyles } from "./added-styles.js";
 import type { XlsxBook } from "./read-book.js";
 import { relations, relationsPart } from "./relations.js";
@@ -15,11 +16,11 @@ const LONGEST_NAME = 31;
  * Adds a sheet of values behind the others; everything else in the file stays as it is written.
  *
  * @param source  the workbook as read
- * @param plan    the sheet; a name that is taken gets a number, formulas and defined names are left out
- * @returns       the new file and the name that was free
+ * @param plan    the sheet with its defined names; a name that is taken gets a number, formulas and charts are left out
+ * @returns       the new file, and the names of sheet and cells that were free
  * @throws {FormulaLineError} a workbook that allows no sheet more
  */
-export function withSheet({ zip, book }: XlsxBook, plan: SheetPlan): { bytes: Uint8Array; sheet: string } {
+export function withSheet({ zip, book }: XlsxBook, plan: SheetPlan): { bytes: Uint8Array; sheet: string; names: string[] } {
   const main = relations(zip, "").find(({ kind }) => kind === "officeDocument")?.part ?? "xl/workbook.xml";
   const related = relations(zip, main);
   const workbook = textOf(zip, main);
@@ -35,12 +36,13 @@ export function withSheet({ zip, book }: XlsxBook, plan: SheetPlan): { bytes: Ui
   const styleOf = new Map(added === undefined ? [] : looks.map((look, k) => [lookKey(look), added.numbers[k] as number]));
   const parts = new Map<string, Uint8Array>();
   const put = (name: string, xml: string): void => void parts.set(name, inItsEncoding(zip, name, xml));
-  put(main, withSheetNamed(workbook, sheet, id));
+  const named = withNames(withSheetNamed(workbook, sheet, id), plan, sheet, book.tables.map(({ name }) => name));
+  put(main, named.xml);
   put(relationsPart(main), withRelation(textOf(zip, relationsPart(main)), id, `/${part}`));
   put("[Content_Types].xml", withType(textOf(zip, "[Content_Types].xml"), part));
   if (styles !== undefined && added !== undefined) put(styles, added.xml);
-  put(part, sheetXml(plan, root, styleOf));
-  return { bytes: zip.withParts(parts), sheet };
+  put(part, sheetXml(plan, { namespace: root, styleOf }));
+  return { bytes: zip.withParts(parts), sheet, names: named.names };
 }
 
 function textOf(zip: ZipFile, part: string): string {

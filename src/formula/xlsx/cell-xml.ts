@@ -29,17 +29,24 @@ export function newCell(prefix: string, address: string, value: CellValue): stri
   return `<${prefix}c r="${address}"${typeAttribute(value)}>${valueXml(prefix, value)}</${prefix}c>`;
 }
 
-function typeAttribute(value: CellValue): string {
+/** The attribute that tells of what kind a value is; none for numbers and blanks. */
+export function typeAttribute(value: CellValue): string {
   if (typeof value === "string") return ' t="str"';
   if (typeof value === "boolean") return ' t="b"';
   return value instanceof ErrorValue ? ' t="e"' : "";
 }
 
-function valueXml(prefix: string, value: CellValue): string {
+/** The element that holds a value; nothing for a blank. */
+export function valueXml(prefix: string, value: CellValue): string {
   if (value === null) return "";
   const text = value instanceof ErrorValue ? (STORED_ERRORS.has(value.code) ? value.code : "#VALUE!") : typeof value === "boolean" ? (value ? "1" : "0") : typeof value === "number" ? String(value) : withCodes(value);
   const keepsSpace = typeof value === "string" && text !== text.trim() ? ' xml:space="preserve"' : "";
   return `<${prefix}v${keepsSpace}>${escaped(text)}</${prefix}v>`;
+}
+
+/** A text within an element, as a cell of a new sheet holds it. */
+export function inlineXml(text: string): string {
+  return `<is><t xml:space="preserve">${escaped(withCodes(text))}</t></is>`;
 }
 
 /** Signs that XML cannot hold become _x000B_; a text that looks like such a code gets its first sign written as one. */

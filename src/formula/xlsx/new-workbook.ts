@@ -1,6 +1,13 @@
 import type { SheetPlan } from "../../host/workbook.js";
-import { addedStyles } from "./added-styles.js";
-import { lookKey, looksOf, sheetXml } from "./sheet-xml.js";
+import { COLUMNS } from "../addresses.js";
+import type { CellValue } from "../cell-value.js";
+import { CELL_METADATA } from "./cell-metadata.js";
+import { chartXml, type CellAt } from "./chart-xml.js";
+import { PROPERTY_KINDS, propertyParts, type About } from "./document-properties.js";
+import { drawingXml } from "./drawing-xml.js";
+import { lookKey, looksOf, sheetXml, writtenCells, type SheetSurroundings } from "./sheet-xml.js";
+import type { Namespace } from "./stored-formula.js";
+import { workbookStyles } from "./workbook-styles.js";
 import { escaped } from "./xml.js";
 import { ZipFile } from "./zip.js";
 
@@ -8,36 +15,110 @@ const HEAD = '<?xml version="1.0" encoding="UTF-8" standalone="yes"?>\n';
 const MAIN = "http://schemas.openxmlformats.org/spreadsheetml/2006/main";
 const OFFICE = "http://schemas.openxmlformats.org/officeDocument/2006/relationships";
 const PACKAGE = "http://schemas.openxmlformats.org/package/2006";
-const TYPE = "application/vnd.openxmlformats-officedocument.spreadsheetml";
-const STYLES = `${HEAD}<styleSheet xmlns="${MAIN}"><fonts count="1"><font><sz val="11"/><name val="Calibri"/><family val="2"/></font></fonts><fills count="2"><fill><patternFill patternType="none"/></fill><fill><patternFill patternType="gray125"/></fill></fills><borders count="1"><border><left/><right/><top/><bottom/><diagonal/></border></borders><cellStyleXfs count="1"><xf numFmtId="0" fontId="0" fillId="0" borderId="0"/></cellStyleXfs><cellXfs count="1"><xf numFmtId="0" fontId="0" fillId="0" borderId="0" xfId="0"/></cellXfs><cellStyles count="1"><cellStyle name="Normal" xfId="0" builtinId="0"/></cellStyles></styleSheet>`;
+const TYPE = "application/vnd.openxmlformats-officedocument";
+
+/** What a new workbook holds besides its plans. */
+export interface WorkbookContents {
+  /** the table that a formula gives, for readers that do not calculate; absent: formulas are left out */
+  readonly valuesOf?: (sheet: number, row: number, column: number) => readonly (readonly CellValue[])[] | undefined;
+  /** of the add-in that calculates our functions; absent: the installed one */
+  readonly functions?: Namespace;
+  readonly about?: About;
+}
+
+interface Part {
+  readonly name: string;
+  readonly xml: string;
+  readonly content: string;
+}
 
 /**
- * A workbook of values in the xlsx format.
+ * A workbook in the xlsx format.
  *
- * @param plans  its sheets with their defined names; formulas are left out
+ * @param plans  its sheets with their defined names, rules, charts and print set-up
  * @returns      the file; equal plans give equal bytes
  */
-export function newWorkbook(plans: readonly SheetPlan[]): Uint8Array {
+export function newWorkbook(plans: readonly SheetPlan[], { valuesOf, functions = "PROBE", about }: WorkbookContents = {}): Uint8Array {
   const looks = looksOf(plans);
-  const styles = addedStyles(STYLES, looks);
-  const styleOf = new Map(looks.map((look, k) => [lookKey(look), styles?.numbers[k] ?? 0]));
-  const relation = (id: string, kind: string, target: string): string => `<Relationship Id="${id}" Type="${OFFICE}/${kind}" Target="${target}"/>`;
-  const override = (part: string, kind: string): string => `<Override PartName="/xl/${part}" ContentType="${TYPE}.${kind}+xml"/>`;
-  const names = plans.flatMap(({ name: sheet, names: own }) => (own ?? []).map(({ name, range }) => `<definedName name="${escaped(name)}">'${escaped(sheet.replaceAll("'", "''"))}'!${fixed(range)}</definedName>`));
-  const sheets = plans.map(({ name }, k) => `<sheet name="${escaped(name)}" sheetId="${k + 1}" r:id="rId${k + 1}"/>`).join("");
-  const parts: Record<string, string> = {
-    "[Content_Types].xml": `${HEAD}<Types xmlns="${PACKAGE}/content-types"><Default Extension="rels" ContentType="application/vnd.openxmlformats-package.relationships+xml"/><Default Extension="xml" ContentType="application/xml"/>${override("workbook.xml", "sheet.main")}${override("styles.xml", "styles")}${plans.map((_, k) => override(`worksheets/sheet${k + 1}.xml`, "worksheet")).join("")}</Types>`,
-    "_rels/.rels": `${HEAD}<Relationships xmlns="${PACKAGE}/relationships">${relation("rId1", "officeDocument", "xl/workbook.xml")}</Relationships>`,
-    "xl/workbook.xml": `${HEAD}<workbook xmlns="${MAIN}" xmlns:r="${OFFICE}"><sheets>${sheets}</sheets>${names.length === 0 ? "" : `<definedNames>${names.join("")}</definedNames>`}</workbook>`,
-    "xl/_rels/workbook.xml.rels": `${HEAD}<Relationships xmlns="${PACKAGE}/relationships">${plans.map((_, k) => relation(`rId${k + 1}`, "worksheet", `worksheets/sheet${k + 1}.xml`)).join("")}${relation(`rId${plans.length + 1}`, "styles", "styles.xml")}</Relationships>`,
-    "xl/styles.xml": styles?.xml ?? STYLES,
-    ...Object.fromEntries(plans.map((plan, k) => [`xl/worksheets/sheet${k + 1}.xml`, sheetXml(plan, MAIN, styleOf)])),
-  };
-  return new ZipFile(EMPTY_ZIP).withParts(new Map(Object.entries(parts).map(([name, xml]) => [name, Buffer.from(xml)])));
+  const styleOf = new Map(looks.map((look, k) => [lookKey(look), k + 1]));
+  const footer = about === undefined ? undefined : `${about.program} ${about.version}`;
+  const drawings: Part[] = [];
+  const charts: Part[] = [];
+  const relationParts: Part[] = [];
+  const sheets = plans.map((plan, k): Part => {
+    const own: Pick<SheetSurroundings, "styleOf" | "valuesOf"> = { styleOf, ...(valuesOf === undefined ? {} : { valuesOf: (row, column) => valuesOf(k, row, column) }) };
+    const name = `xl/worksheets/sheet${k + 1}.xml`;
+    const isDrawn = (plan.charts ?? []).length > 0;
+    if (isDrawn) {
+      const drawing = `xl/drawings/drawing${drawings.length + 1}.xml`;
+      relationParts.push(relationsOf(name, [relation("rId1", "drawing", `/${drawing}`)]));
+      const at = cellsAt(plan, own);
+      const first = charts.length;
+      for (const chart of plan.charts ?? []) charts.push({ name: `xl/charts/chart${charts.length + 1}.xml`, xml: chartXml(chart, plan.name, at), content: `${TYPE}.drawingml.chart+xml` });
+      drawings.push({ name: drawing, xml: drawingXml(plan.charts ?? [], (chart) => `rId${chart + 1}`), content: `${TYPE}.drawing+xml` });
+      relationParts.push(relationsOf(drawing, charts.slice(first).map((chart, c) => relation(`rId${c + 1}`, "chart", `/${chart.name}`))));
+    }
+    const around: SheetSurroundings = { ...own, namespace: MAIN, functions, isShown: k === 0, ...(footer === undefined ? {} : { footer }), ...(isDrawn ? { drawing: "rId1" } : {}) };
+    return { name, xml: sheetXml(plan, around), content: `${TYPE}.spreadsheetml.worksheet+xml` };
+  });
+  const spills = sheets.some(({ xml }) => / cm="/.test(xml));
+  const main: Part[] = [
+    { name: "xl/workbook.xml", xml: workbookXml(plans, valuesOf !== undefined), content: `${TYPE}.spreadsheetml.sheet.main+xml` },
+    { name: "xl/styles.xml", xml: workbookStyles(looks), content: `${TYPE}.spreadsheetml.styles+xml` },
+    ...(spills ? [{ name: "xl/metadata.xml", xml: CELL_METADATA, content: `${TYPE}.spreadsheetml.sheetMetadata+xml` }] : []),
+  ];
+  const workbookRelations = [...sheets.map(({ name }, k) => relation(`rId${k + 1}`, "worksheet", `/${name}`)), relation(`rId${sheets.length + 1}`, "styles", "/xl/styles.xml"), ...(spills ? [relation(`rId${sheets.length + 2}`, "sheetMetadata", "/xl/metadata.xml")] : [])];
+  const properties = Object.entries(about === undefined ? {} : propertyParts(about)).map(([name, xml]): Part => ({ name, xml, content: PROPERTY_KINDS[name]!.content }));
+  const packageRelations = [relation("rId1", "officeDocument", "xl/workbook.xml"), ...properties.map(({ name }, k) => `<Relationship Id="rId${k + 2}" Type="${PROPERTY_KINDS[name]!.relation}" Target="${name}"/>`)];
+  const parts = [...main, ...sheets, ...drawings, ...charts, ...properties];
+  const all = [typesPart(parts), relationsOf("", packageRelations), main[0]!, relationsOf("xl/workbook.xml", workbookRelations), ...main.slice(1), ...sheets, ...relationParts, ...drawings, ...charts, ...properties];
+  return new ZipFile(EMPTY_ZIP).withParts(new Map(all.map(({ name, xml }) => [name, Buffer.from(xml)])));
 }
 
 /** A zip file without parts is the end of its directory alone. */
 const EMPTY_ZIP = Uint8Array.of(0x50, 0x4b, 5, 6, ...new Array<number>(18).fill(0));
+
+function relation(id: string, kind: string, target: string): string {
+  return `<Relationship Id="${id}" Type="${OFFICE}/${kind}" Target="${target}"/>`;
+}
+
+/** The part that holds the relations of a part; "" for those of the package. */
+function relationsOf(part: string, relations: readonly string[]): Part {
+  const slash = part.lastIndexOf("/");
+  return { name: `${part.slice(0, slash + 1)}_rels/${part.slice(slash + 1)}.rels`, xml: `${HEAD}<Relationships xmlns="${PACKAGE}/relationships">${relations.join("")}</Relationships>`, content: "" };
+}
+
+function typesPart(parts: readonly Part[]): Part {
+  const overrides = parts.map(({ name, content }) => `<Override PartName="/${name}" ContentType="${content}"/>`).join("");
+  return { name: "[Content_Types].xml", xml: `${HEAD}<Types xmlns="${PACKAGE}/content-types"><Default Extension="rels" ContentType="application/vnd.openxmlformats-package.relationships+xml"/><Default Extension="xml" ContentType="application/xml"/>${overrides}</Types>`, content: "" };
+}
+
+/** @param isCalculated  the file holds formulas, whose figures a program with the add-in makes anew as it opens */
+function workbookXml(plans: readonly SheetPlan[], isCalculated: boolean): string {
+  const sheets = plans.map(({ name }, k) => `<sheet name="${escaped(name)}" sheetId="${k + 1}" r:id="rId${k + 1}"/>`).join("");
+  const names = plans.flatMap((plan, k) => {
+    const named = (name: string, meaning: string, attributes = ""): string => `<definedName name="${escaped(name)}"${attributes}>${escaped(meaning)}</definedName>`;
+    const here = quoted(plan.name);
+    const { frozenRows = 0, printed } = plan;
+    return [
+      ...(printed === undefined ? [] : [named("_xlnm.Print_Area", `${here}!${fixed(printed)}`, ` localSheetId="${k}"`)]),
+      ...(frozenRows === 0 || plan.onePage === true ? [] : [named("_xlnm.Print_Titles", `${here}!$1:$${frozenRows}`, ` localSheetId="${k}"`)]),
+      ...(plan.names ?? []).map(({ name, range }) => named(name, `${here}!${fixed(range)}`)),
+    ];
+  });
+  const calculation = isCalculated ? '<calcPr calcId="191029" fullCalcOnLoad="1"/>' : "";
+  return `${HEAD}<workbook xmlns="${MAIN}" xmlns:r="${OFFICE}"><bookViews><workbookView activeTab="0"/></bookViews><sheets>${sheets}</sheets>${names.length === 0 ? "" : `<definedNames>${names.join("")}</definedNames>`}${calculation}</workbook>`;
+}
+
+/** The values that a chart's cells show. */
+function cellsAt(plan: SheetPlan, own: Pick<SheetSurroundings, "styleOf" | "valuesOf">): CellAt {
+  const values = new Map(writtenCells(plan, own).map(({ row, column, value }) => [row * COLUMNS + column, value]));
+  return (row, column) => values.get(row * COLUMNS + column) ?? null;
+}
+
+function quoted(sheet: string): string {
+  return `'${sheet.replaceAll("'", "''")}'`;
+}
 
 function fixed(range: string): string {
   return range.replace(/([A-Z]+)([0-9]+)/g, "$$$1$$$2");
