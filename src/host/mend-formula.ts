@@ -14,11 +14,11 @@ const PIECES = new RegExp(`("(?:[^"]|"")*(?:"|$))|(${BEFORE})?(${NAME})(?=\\s*\\
  * @returns          the formula; as it was where nothing is wrong. Texts and everybody else's functions are never changed
  */
 export function mendedFormula(formula: string, namespace: string, ids: ReadonlySet<string>): string {
-  return formula.replace(PIECES, (piece: string, text: string | undefined, before: string | undefined, name: string | undefined) => {
+  return formula.replace(PIECES, (piece: string, text: string | undefined, _before: string | undefined, name: string | undefined) => {
     if (text !== undefined || name === undefined) return piece;
     const marked = markedId(name, namespace, ids);
     if (marked !== undefined) return `${namespace}.${marked}`;
-    return before !== undefined && ownId(name, namespace, ids) !== undefined ? name : piece;
+    return ownId(name, namespace, ids) === undefined ? piece : name;
   });
 }
 

@@ -51,6 +51,8 @@ it("gives every cell its look once, in few areas", () => {
   }
   expect(painted).toEqual(new Map(cells.map(({ row, column, style, look }) => [`${row},${column}`, `${style} ${look}`])));
   expect(areas).toHaveLength(3);
+  const apart: PlannedCell[] = [0, 2].map((row) => ({ row, column: 0, value: 1, style: "input" }));
+  expect(lookAreas(apart).map(({ top, bottom }) => [top, bottom])).toEqual([[0, 0], [2, 2]]);
 });
 
 it("rewrites the namespace outside texts and sheet names only", () => {
