@@ -32,10 +32,11 @@ class FormPlugin {
 /**
  * The add-in's bundler, ready to run or to serve.
  *
- * @param mode  "production" minifies; "development" keeps names and maps
- * @param form  which add-in, and where it is served
+ * @param mode    "production" minifies; "development" keeps names and maps
+ * @param form    which add-in, and where it is served
+ * @param output  folder to write into; dist/ when omitted
  */
-export function addInCompiler(mode: "production" | "development", form: Form): Compiler {
+export function addInCompiler(mode: "production" | "development", form: Form, output?: string): Compiler {
   const settings = configuration as Configuration;
   const page = new HtmlPlugin({
     filename: "pane.html",
@@ -48,6 +49,7 @@ export function addInCompiler(mode: "production" | "development", form: Form): C
   return webpack({
     ...settings,
     mode,
+    ...(output === undefined ? {} : { output: { ...settings.output, path: output } }),
     devtool: mode === "development" ? "source-map" : false,
     plugins: [...(settings.plugins ?? []), page, new FormPlugin(form)],
   });
@@ -60,14 +62,15 @@ export interface Asset {
 }
 
 /**
- * Builds the add-in into dist/.
+ * Builds the add-in.
  *
- * @param form  which add-in, and where it is served
- * @returns     what was written
+ * @param form    which add-in, and where it is served
+ * @param output  folder to write into; dist/ when omitted
+ * @returns       what was written
  * @throws {Error} with the bundler's own words when something does not build
  */
-export function buildAddIn(form: Form): Promise<Asset[]> {
-  const compiler = addInCompiler("production", form);
+export function buildAddIn(form: Form, output?: string): Promise<Asset[]> {
+  const compiler = addInCompiler("production", form, output);
   return new Promise((resolve, reject) => {
     compiler.run((error, stats) => {
       compiler.close(() => {

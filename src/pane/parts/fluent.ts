@@ -1,7 +1,7 @@
 // The controls that the pane uses, one by one: the whole set would be four times as large.
 import "@fluentui/web-components/button.js";
 import "@fluentui/web-components/progress-bar.js";
-import "@fluentui/web-components/slider.js";
+import "./slider.js";
 import "@fluentui/web-components/tab.js";
 import "@fluentui/web-components/tablist.js";
 

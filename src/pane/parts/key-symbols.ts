@@ -18,7 +18,9 @@ export function keySymbol(symbol: KeySymbol): SVGElement {
  * @param fill  the part's fill
  */
 export function keySwatch(fill: string): SVGElement {
-  return drawn("svg", { viewBox: "0 0 18 14", width: 18, height: 14, "aria-hidden": "true", class: "key-symbol" }, drawn("rect", { x: 3, y: 1, width: 12, height: 12, style: `fill:${fill}`, class: "swatch" }));
+  const square = drawn("rect", { x: 3, y: 1, width: 12, height: 12, class: "swatch" });
+  square.style.fill = fill; // the page's policy refuses a style attribute
+  return drawn("svg", { viewBox: "0 0 18 14", width: 18, height: 14, "aria-hidden": "true", class: "key-symbol" }, square);
 }
 
 const SHAPES: Record<KeySymbol, () => SVGElement[]> = {

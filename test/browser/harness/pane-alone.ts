@@ -1,3 +1,4 @@
+import "../../../src/pane/page.css";
 import type { CellValue, RangeText, SheetPlan, Workbook } from "../../../src/host/workbook.js";
 import { templateRows } from "../../../src/inputs/index.js";
 import { mountPane } from "../../../src/pane/mount-pane.js";

@@ -4,6 +4,8 @@ import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import type { Browser, BrowserContextOptions, Page } from "playwright-core";
+import { panePolicy } from "../../../src/build/content-policy.js";
+import { DEVELOPMENT } from "../../../src/build/form.js";
 import { functionsMetadata } from "../../../src/build/metadata.js";
 import { servePractice } from "../../../src/build/practice-server.js";
 import { launchBrowser } from "./browser.js";
@@ -91,10 +93,10 @@ const PAGE = `<!doctype html>
 <html lang="en">
   <head>
     <meta charset="utf-8" />
-    <meta http-equiv="Content-Security-Policy" content="default-src 'none'; script-src 'self'; style-src 'self' 'unsafe-inline'; img-src data:; connect-src 'self'; worker-src 'self'" />
+    <meta http-equiv="Content-Security-Policy" content="${panePolicy(DEVELOPMENT)}" />
     <title>Pane</title>
     <link rel="icon" href="data:," />
-    <style>html, body, #pane { height: 100%; margin: 0; }</style>
+    <link rel="stylesheet" href="page.css" />
     <script type="module" src="page.js"></script>
   </head>
   <body><div id="pane"></div></body>
