@@ -75,6 +75,6 @@ export interface BatchSettings {
   readonly kept?: KeptRows;
   /** longest time, in hours, that a run whose end nobody has fixed may be likely to take */
   readonly longestHours?: number;
-  /** milliseconds without an answer after which a thread counts as lost */
+  /** milliseconds without an answer after which a thread counts as lost, at most */
   readonly longestWait?: number;
 }

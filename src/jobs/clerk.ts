@@ -1,6 +1,6 @@
 import type { BatchJob, Look } from "./batch.js";
 import type { RowKind, RowRun, Totals } from "./realisations.js";
-import { LONGEST_TICK, LONGEST_WAIT } from "./thread-crew.js";
+import { LONGEST_TICK, LONGEST_WAIT, SHORTEST_WAIT, WAIT_TIMES } from "./thread-crew.js";
 import type { Thread, ThreadReply, Threads } from "./threads.js";
 
 /** Whom the clerk answers. */
@@ -28,6 +28,8 @@ export class Clerk<Table> {
   private asked: Question | undefined;
   private losses = 0;
   private waited = 0;
+  /** milliseconds of the last look; undefined before */
+  private took: number | undefined;
   private hasEnded = false;
 
   constructor(
@@ -66,7 +68,8 @@ export class Clerk<Table> {
   tick(milliseconds: number): void {
     if (this.asked === undefined) return;
     this.waited += Math.min(milliseconds, LONGEST_TICK);
-    if (this.waited > this.longestWait) this.lose(`it has not answered for ${Math.round(this.waited / 1000)} seconds`);
+    const patience = this.took === undefined ? this.longestWait : Math.min(this.longestWait, Math.max(SHORTEST_WAIT, WAIT_TIMES * this.took));
+    if (this.waited > patience) this.lose(`it has not answered for ${Math.round(this.waited / 1000)} seconds`);
   }
 
   end(): void {
@@ -104,6 +107,7 @@ export class Clerk<Table> {
       const question = this.asked;
       this.asked = undefined;
       this.losses = 0;
+      this.took = reply.milliseconds;
       this.desk.looked(question, reply.look as Look<Table>, reply.milliseconds);
     }
   }

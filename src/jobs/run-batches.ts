@@ -2,7 +2,7 @@ import type { BatchEnd, BatchJob, BatchProgress, BatchRun, BatchSettings, KeptRo
 import { Clerk, type Desk, type Question } from "./clerk.js";
 import { OutcomeRows } from "./outcome-rows.js";
 import type { Chunk, RowKind, RowRun, Totals } from "./realisations.js";
-import { ThreadCrew, type Office } from "./thread-crew.js";
+import { LONGEST_WAIT, SHORTEST_WAIT, ThreadCrew, WAIT_TIMES, type Office } from "./thread-crew.js";
 import type { Threads } from "./threads.js";
 import { timeInWords } from "./time-in-words.js";
 import { WorkList } from "./work-list.js";
@@ -53,7 +53,7 @@ class Run<Table> implements BatchRun<Table>, Office, Desk<Table> {
     this.end = new Promise((resolve) => (this.settle = resolve));
     this.finished = { elements: new OutcomeRows(job.first), form: new OutcomeRows() };
     this.checkpoint = { elements: job.first, form: 0 };
-    this.crew = new ThreadCrew(threads, job.task, this, settings.longestWait);
+    this.crew = new ThreadCrew(threads, job.task, this);
     this.clerk = new Clerk(threads, job, this, settings.longestWait);
     this.attempt(() => {
       for (const kind of ["elements", "form"] as const) for (const run of settings.kept?.[kind] ?? []) this.finished[kind].add(run);
@@ -105,6 +105,12 @@ class Run<Table> implements BatchRun<Table>, Office, Desk<Table> {
     this.said = sentence;
   }
 
+  patience(work: Chunk | undefined): number {
+    const longest = this.settings.longestWait ?? LONGEST_WAIT;
+    const each = work === undefined ? undefined : this.speed.of(work.of);
+    return work === undefined || each === undefined ? longest : Math.min(longest, Math.max(SHORTEST_WAIT, WAIT_TIMES * each * work.count));
+  }
+
   private lookAtCheckpoint(): void {
     const { elements, form } = this.unbroken();
     if (!this.hasEnded && !this.clerk.isBusy && elements >= this.checkpoint.elements && form >= this.checkpoint.form) this.clerk.ask({ totals: this.checkpoint, isCheckpoint: true });
@@ -140,7 +146,7 @@ class Run<Table> implements BatchRun<Table>, Office, Desk<Table> {
       const totals = this.unbroken();
       if (now >= this.lookAgainAt && !this.clerk.isBusy && !(this.latest !== undefined && same(totals, this.latest.totals))) this.clerk.ask({ totals, isCheckpoint: false });
       const progress = this.progress();
-      if (this.isTooLong(progress)) this.finish("too long", `To the wanted precision this run would take about ${timeInWords(progress.secondsLeft ?? 0)} on this machine; accept a larger sum, or ask for a number of realisations.`);
+      if (this.isTooLong(progress)) this.finish("too long", `To the wanted precision this run would take about ${timeInWords(progress.secondsLeft ?? 0)} on this machine; accept a larger sum, or stop after a number of grounds.`);
       else this.on(progress);
     });
   }

@@ -11,6 +11,8 @@ export interface Office {
   giveUp(kind: "refused" | "failed", sentence: string): void;
   /** something went wrong and was put right; a sentence */
   notice(sentence: string): void;
+  /** milliseconds without an answer after which a thread counts as lost; undefined: it prepares */
+  patience(work: Chunk | undefined): number;
 }
 
 interface Member {
@@ -27,8 +29,12 @@ interface Member {
 }
 
 const MOST_TRIES = 3;
-/** A browser may end a thread without a word; a realisation takes seconds. */
+/** A browser may end a thread without a word. So long is waited while nobody knows what the work takes. */
 export const LONGEST_WAIT = 300_000;
+/** So long at least where it is known: a machine that is short of memory or very busy is slow, not dead. */
+export const SHORTEST_WAIT = 20_000;
+/** So many times the known time of the work. */
+export const WAIT_TIMES = 50;
 /** A tick that comes later than this is a laptop that slept, not a thread that hangs. */
 export const LONGEST_TICK = 1_000;
 
@@ -43,7 +49,6 @@ export class ThreadCrew {
     private readonly threads: Threads,
     private readonly task: unknown,
     private readonly office: Office,
-    private readonly longestWait = LONGEST_WAIT,
   ) {
     this.members = Array.from({ length: Math.max(1, threads.size) }, () => ({ thread: undefined, chunk: undefined, isBusy: false, isReady: false, losses: 0, isOut: false, waited: 0 }));
   }
@@ -82,7 +87,7 @@ export class ThreadCrew {
     for (const member of this.members) {
       if (!member.isBusy) continue;
       member.waited += Math.min(milliseconds, LONGEST_TICK);
-      if (member.waited > this.longestWait) this.lose(member, `it has not answered for ${Math.round(member.waited / 1000)} seconds`);
+      if (member.waited > this.office.patience(member.chunk)) this.lose(member, `it has not answered for ${Math.round(member.waited / 1000)} seconds`);
     }
   }
 

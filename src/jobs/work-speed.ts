@@ -1,6 +1,8 @@
 import type { RowKind } from "./realisations.js";
 
 const REMEMBERED = 24;
+/** One alone may be the one during which the machine slept. */
+const FEWEST = 2;
 
 /**
  * How long realisations take: the median of the last ones, because a machine's speed changes while people work on it, and the
@@ -26,10 +28,10 @@ export class WorkSpeed {
     return this.recent[kind].length;
   }
 
-  /** Milliseconds that one realisation takes in its thread; undefined before the first. */
+  /** Milliseconds that one realisation takes in its thread; undefined before the second piece of work. */
   of(kind: RowKind): number | undefined {
     const times = this.recent[kind];
-    return times.length === 0 ? undefined : [...times].sort((a, b) => a - b)[Math.floor((times.length - 1) / 2)];
+    return times.length < FEWEST ? undefined : [...times].sort((a, b) => a - b)[Math.floor((times.length - 1) / 2)];
   }
 
   /**

@@ -75,10 +75,14 @@ describe("the list of work", () => {
 it("tells the time left by the median of the last pieces, because a machine may have slept during one", () => {
   const speed = new WorkSpeed();
   expect(speed.seconds(4, 0, 1)).toBeUndefined();
+  speed.add("elements", 8 * 3_600_000, 1);
+  expect(speed.seconds(4, 0, 1)).toBeUndefined();
+  speed.add("elements", 1_000, 1);
+  expect(speed.seconds(4, 0, 1)).toBe(4);
   for (const time of [2_000, 1_000, 3_600_000, 1_000, 1_000]) speed.add("elements", time, 1);
   expect(speed.seconds(4, 0, 2)).toBe(2);
   expect(speed.seconds(4, 1, 2)).toBeUndefined();
-  speed.add("form", 30, 3);
+  for (const time of [30, 60]) speed.add("form", time, 3);
   expect(speed.seconds(4, 100, 1)).toBe(5);
   for (let k = 0; k < 24; k++) speed.add("elements", 500, 1);
   expect(speed.seconds(4, 0, 1)).toBe(2);

@@ -193,7 +193,7 @@ describe("faults", () => {
   it("says how long an absurd precision would take, and keeps what is there", async () => {
     const { end } = await run(drawsToPrecision({ seed: SEED, busy: { elements: 20 } }, 1e-9), inPage(1));
     expect(end.kind).toBe("too long");
-    expect(end.message).toMatch(/^To the wanted precision this run would take about [\d,]+ (days|years) on this machine; accept a larger sum, or ask for a number of realisations\.$/);
+    expect(end.message).toMatch(/^To the wanted precision this run would take about [\d,]+ (days|years) on this machine; accept a larger sum, or stop after a number of grounds\.$/);
     expect(end.table).toEqual(straight(end.used.elements, end.used.form));
   });
 });

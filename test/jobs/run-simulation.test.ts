@@ -85,7 +85,7 @@ it("refuses rows that another arithmetic made, before anything is added to them"
 it("says of an absurd precision how long it would take", async () => {
   const { end } = await run(2, { regret: 1e-6 });
   expect(end.kind).toBe("too long");
-  expect(end.message).toMatch(/about [\d,]+ (days|years) on this machine; accept a larger sum, or ask for a number of realisations\.$/);
+  expect(end.message).toMatch(/about [\d,]+ (days|years) on this machine; accept a larger sum, or stop after a number of grounds\.$/);
   expect(end.table!.elements).toBeGreaterThanOrEqual(16);
 }, 120_000);
 
