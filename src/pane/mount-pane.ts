@@ -2,6 +2,7 @@ import "./parts/fluent.js";
 import { simulationSheet } from "../host/simulation-sheet.js";
 import { siteSheet } from "../host/site-sheet.js";
 import type { InsertedSheet, SheetPlan, Workbook } from "../host/workbook.js";
+import { WorkbookRefusal } from "../host/workbook-refusal.js";
 import { webThreads, type PageWorker } from "../jobs/web-threads.js";
 import { PRODUCT_VERSION } from "../results/version.js";
 import { exampleSheet } from "./model/example-sheet.js";
@@ -25,7 +26,7 @@ import { contentOf, type SimulationReport } from "./sheets/simulation-report.js"
 import { SiteStore } from "./site-store.js";
 import { startCountsWorker, startSimulationWorker } from "./start-worker.js";
 import { adoptStyles } from "./style/adopt-styles.js";
-import { helpView } from "./views/help-view.js";
+import { helpView, type Versions } from "./views/help-view.js";
 import { resultsView, type SimulatedSource } from "./views/results-view.js";
 import { runView } from "./views/run-view.js";
 import { siteView } from "./views/site-view.js";
@@ -36,8 +37,12 @@ export interface PaneOptions {
   readonly functions?: { readonly functions: readonly FunctionMetadata[] };
   /** what stands before the functions' names; "PROBE" when omitted */
   readonly namespace?: string;
-  /** version of the cell functions as they themselves state it; omitted where they are part of the same program */
-  readonly functionsVersion?: string;
+  /** versions of the page and of the cell functions as each states its own; omitted where they are one program */
+  readonly versions?: Versions;
+  /** enters formulas again that are stuck, and says what it did; omitted where formulas cannot get stuck */
+  readonly repair?: () => Promise<string>;
+  /** why there is no workbook, in a sentence */
+  readonly withoutWorkbook?: string;
   /** starts the engine's thread; omitted: the one that the build puts beside the page */
   readonly startWorker?: () => WorkerLike;
   /** starts a thread of a simulation; omitted as above */
@@ -48,6 +53,12 @@ export interface PaneOptions {
 
 /** A pane in place. */
 export interface Pane {
+  /** brings a view into sight; one that the pane has not got changes nothing */
+  show(view: "Site" | "Run" | "Results" | "Help"): void;
+  /** puts the template of the site block on a new sheet and reads it; says why where that cannot be */
+  insertTemplate(): Promise<void>;
+  /** repairs formulas and says what was done */
+  repair(): Promise<void>;
   /** takes the pane off the page and ends its thread */
   unmount(): void;
 }
@@ -67,11 +78,14 @@ export function mountPane(host: HTMLElement, workbook: Workbook | undefined, opt
   const { line, tell } = statusLine();
   const theme = themeSwitch(root, tell);
   const working = workbook === undefined ? undefined : workingViews(workbook, options, tell);
-  const views = tabs([...(working?.views ?? []), helpTab(workbook, working?.siteName ?? (() => "Site"), options, tell)]);
+  const repair = repairOf(options, tell);
+  const views = tabs([...(working?.views ?? []), helpTab(workbook, working?.siteName ?? (() => "Site"), options, repair, tell)]);
   const header = element("header", { class: "header" }, element("h1", {}, toolMark(), "Probeworth"), theme.button);
   root.append(hatchPatterns(), element("div", { class: "top" }, header, views.list), element("main", { class: "main" }, ...views.panels), line);
-  if (workbook === undefined) tell("No workbook is connected to this page, so only the help is shown.");
   return {
+    show: views.show,
+    insertTemplate: async () => working?.insertTemplate(),
+    repair: async () => repair?.(),
     unmount: () => {
       theme.stop();
       working?.close();
@@ -80,7 +94,7 @@ export function mountPane(host: HTMLElement, workbook: Workbook | undefined, opt
   };
 }
 
-function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence: string) => void): { readonly views: TabView[]; readonly siteName: () => string; readonly close: () => void } {
+function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence: string) => void): { readonly views: TabView[]; readonly siteName: () => string; readonly insertTemplate: () => Promise<void>; readonly close: () => void } {
   const site = new SiteStore(workbook);
   const startCounts = options.startWorker ?? startCountsWorker;
   const pricing = new Pricing(startCounts);
@@ -110,6 +124,7 @@ function workingViews(workbook: Workbook, options: PaneOptions, tell: (sentence:
       { name: "Run", content: () => runView(simulation.store, site, options.locale) },
       { name: "Results", content: () => resultsView(results, simulation, options.locale), seen: (visible) => results.look(visible) },
     ],
+    insertTemplate,
     siteName: () => (site.state.source?.kind === "name" ? site.state.source.name : "Site"),
     close: () => {
       site.close();
@@ -151,17 +166,30 @@ function simulationOf(workbook: Workbook, options: PaneOptions, startCounts: () 
   };
 }
 
-function helpTab(workbook: Workbook | undefined, siteName: () => string, options: PaneOptions, tell: (sentence: string) => void): TabView {
-  const versions = [
-    { part: "Pane", version: PRODUCT_VERSION },
-    { part: "Cell functions", version: options.functionsVersion ?? PRODUCT_VERSION },
-  ];
+function repairOf({ repair }: PaneOptions, tell: (sentence: string) => void): (() => Promise<void>) | undefined {
+  if (repair === undefined) return undefined;
+  let isRunning = false;
+  return async () => {
+    if (isRunning) return;
+    isRunning = true;
+    tell("Looking through the formulas of this workbook.");
+    try {
+      tell(await repair());
+    } catch (reason) {
+      tell(reason instanceof WorkbookRefusal ? reason.message : `The formulas could not be looked through: ${inWords(reason)}.`);
+    } finally {
+      isRunning = false;
+    }
+  };
+}
+
+function helpTab(workbook: Workbook | undefined, siteName: () => string, options: PaneOptions, repair: (() => Promise<void>) | undefined, tell: (sentence: string) => void): TabView {
   const insert = async (id: string, formula: string): Promise<void> => {
     const inserted = workbook === undefined ? undefined : await addSheet(workbook, exampleSheet(id, formula), tell);
     if (inserted !== undefined) tell(`The example stands on the new sheet ${inserted.sheet}.`);
   };
-  const content = { functions: options.functions?.functions, namespace: options.namespace ?? "PROBE", siteName, versions };
-  const actions = { copy: copyText, insert: workbook === undefined ? undefined : (id: string, formula: string) => void insert(id, formula), tell };
+  const content = { functions: options.functions?.functions, namespace: options.namespace ?? "PROBE", siteName, versions: options.versions ?? { pane: PRODUCT_VERSION, functions: PRODUCT_VERSION }, notice: workbook === undefined ? (options.withoutWorkbook ?? "No workbook is connected to this page, so only the help is shown.") : undefined };
+  const actions = { ...(repair === undefined ? {} : { repair: () => void repair() }),  copy: copyText, insert: workbook === undefined ? undefined : (id: string, formula: string) => void insert(id, formula), tell };
   return { name: "Help", content: () => helpView(content, actions) };
 }
 

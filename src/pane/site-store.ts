@@ -1,5 +1,6 @@
 import { checkSite, InputError, parseSite, type CheckRow, type Site } from "../inputs/index.js";
 import type { RangeText, Workbook } from "../host/workbook.js";
+import { WorkbookRefusal } from "../host/workbook-refusal.js";
 
 /** Where the site block comes from. */
 export type Source = { readonly kind: "name"; readonly name: string } | { readonly kind: "selection" };
@@ -80,7 +81,7 @@ export class SiteStore {
     try {
       range = source.kind === "name" ? await this.workbook.readName(source.name) : await this.workbook.readSelection();
     } catch (reason) {
-      if (turn === this.turn) this.nothing(`The workbook could not be read: ${reason instanceof Error ? reason.message : String(reason)}.`);
+      if (turn === this.turn) this.nothing(reason instanceof WorkbookRefusal ? reason.message : `The workbook could not be read: ${reason instanceof Error ? reason.message : String(reason)}.`);
       return;
     }
     if (turn !== this.turn) return;

@@ -14,8 +14,9 @@ export interface TabView {
  * A row of tabs with their panels; arrows move between tabs, Tab goes into the panel.
  *
  * @param views  at least one; the first is shown
+ * @returns      the tabs, the panels, and what brings a view into sight by its name
  */
-export function tabs(views: readonly TabView[]): { readonly list: HTMLElement; readonly panels: readonly HTMLElement[] } {
+export function tabs(views: readonly TabView[]): { readonly list: HTMLElement; readonly panels: readonly HTMLElement[]; readonly show: (name: string) => void } {
   const ids = views.map(() => ({ tab: freshId("tab"), panel: freshId("panel") }));
   const list = element("fluent-tablist", { class: "tabs", size: "small", "aria-label": "Views", activeid: ids[0]!.tab }) as FluentTablist;
   list.append(...views.map((view, k) => element("fluent-tab", { id: ids[k]!.tab, "aria-controls": ids[k]!.panel }, view.name)));
@@ -38,5 +39,9 @@ export function tabs(views: readonly TabView[]): { readonly list: HTMLElement; r
     fill(next);
     views[shown]!.seen?.(true);
   });
-  return { list, panels };
+  const show = (name: string): void => {
+    const k = views.findIndex((view) => view.name === name);
+    if (k >= 0) list.activeid = ids[k]!.tab;
+  };
+  return { list, panels, show };
 }

@@ -1,5 +1,6 @@
 import { IS, IS_NOT, PRIVACY, SMALL_SUMS } from "../../results/cautions.js";
 import { helpEntries, searchHelp, type FunctionMetadata, type HelpEntry } from "../model/help-entries.js";
+import { button } from "../parts/button.js";
 import { element, freshId } from "../parts/element.js";
 import { helpEntry, type ExampleActions } from "./help-entry.js";
 
@@ -10,18 +11,33 @@ export interface HelpContent {
   readonly namespace: string;
   /** the name under which the examples find the site block */
   readonly siteName: () => string;
-  /** each part of the program with its version; they can differ for a day after an update */
-  readonly versions: readonly { readonly part: string; readonly version: string }[];
+  readonly versions: Versions;
+  /** why nothing but the help is here; undefined where the pane is whole */
+  readonly notice: string | undefined;
+}
+
+/** The parts of the program that are loaded at different times. */
+export interface Versions {
+  readonly pane: string;
+  /** as the cell functions themselves state it */
+  readonly functions: string;
+}
+
+/** What the buttons of the Help view do. */
+export interface HelpActions extends ExampleActions {
+  /** enters stuck formulas again; undefined where formulas cannot get stuck */
+  readonly repair?: () => void;
 }
 
 /**
- * The Help view: every function, the cautions, what happens to data, and the versions.
+ * The Help view: every function, repair, the cautions, what happens to data, and the versions.
  *
  * @param content  what it is made from
- * @param actions  what the buttons of an example do
+ * @param actions  what the buttons do
  */
-export function helpView(content: HelpContent, actions: ExampleActions): HTMLElement {
-  return element("div", { class: "view" }, functionsPanel(content, actions), textPanel("What the figures are and are not", [IS, IS_NOT, SMALL_SUMS]), textPanel("Your data", PRIVACY), versionsPanel(content));
+export function helpView(content: HelpContent, actions: HelpActions): HTMLElement {
+  const notice = content.notice === undefined ? undefined : element("p", { class: "refusal notice" }, content.notice);
+  return element("div", { class: "view" }, notice, functionsPanel(content, actions), repairPanel(content, actions), textPanel("What the figures are and are not", [IS, IS_NOT, SMALL_SUMS]), textPanel("Your data", PRIVACY), versionsPanel(content));
 }
 
 function functionsPanel(content: HelpContent, actions: ExampleActions): HTMLElement {
@@ -54,15 +70,31 @@ function textPanel(heading: string, sentences: readonly string[]): HTMLElement {
   return element("section", { "aria-labelledby": title, class: "caution" }, element("h2", { id: title }, heading), ...sentences.map((sentence) => element("p", {}, sentence)));
 }
 
-function versionsPanel(content: HelpContent): HTMLElement {
+function repairPanel({ namespace }: HelpContent, { repair }: HelpActions): HTMLElement | undefined {
+  if (repair === undefined) return undefined;
   const title = freshId("title");
-  const rows = content.versions.flatMap(({ part, version }) => [element("dt", {}, part), element("dd", {}, version)]);
-  const differ = new Set(content.versions.map(({ version }) => version)).size > 1;
+  return element(
+    "section",
+    { "aria-labelledby": title },
+    element("h2", { id: title }, "Cells that are stuck"),
+    element("p", {}, `Cells that stay at #BUSY! or #NAME?, and formulas that show [2]!_xldudf_${namespace}_ or a file in front of a function's name, are entered again on all sheets. Formulas that work and formulas of others are not touched.`),
+    element("div", { class: "row" }, button("Repair formulas", repair)),
+  );
+}
+
+function versionsPanel({ versions: { pane, functions } }: HelpContent): HTMLElement {
+  const title = freshId("title");
   return element(
     "section",
     { "aria-labelledby": title },
     element("h2", { id: title }, "Versions"),
-    element("dl", { class: "versions" }, ...rows),
-    differ ? element("p", { class: "refusal" }, "The versions differ. The cell functions may be kept for up to a day after an update; figures in cells and in this pane may differ until then.") : undefined,
+    element("dl", { class: "versions" }, element("dt", {}, "Pane"), element("dd", {}, pane), element("dt", {}, "Cell functions"), element("dd", {}, functions)),
+    pane === functions
+      ? undefined
+      : element(
+          "p",
+          { class: "refusal" },
+          `The cell functions are of version ${functions}, this pane of version ${pane}. After an update Excel may keep the old functions for up to 24 hours, and until then figures in cells and in this pane may differ. Save your work, close Excel and start it again; in Excel on the web, reload the page. If they still differ a day later, tell whoever installed the program.`,
+        ),
   );
 }
