@@ -1,0 +1,135 @@
+import type { FunctionsJson } from "../../../src/build/metadata.js";
+import { ErrorValue } from "../../../src/formula/cell-value.js";
+import { UnsupportedFormula } from "../../../src/formula/unsupported.js";
+import { prepared, type Blanks, type Given } from "./function-arguments.js";
+import { functionResult, type FunctionResult, type RawResult } from "./function-results.js";
+import type { Message } from "./events.js";
+
+/** Kinds of messages to the library's runtime of custom functions. */
+const CATEGORY = 1;
+const INVOKE = 1_000;
+const CANCEL = 1_001;
+/** What a message says of the function: may be cancelled, takes error values. */
+const CANCELABLE = 1;
+const TAKES_ERRORS = 4;
+
+/** What the formula engine calls a value that is still on its way; cells show #BUSY!. */
+export const BUSY = "#GETTING_DATA";
+
+interface Call {
+  readonly id: number;
+  readonly isCancelable: boolean;
+  message: Message | undefined;
+  result: FunctionResult | undefined;
+  isUsed: boolean;
+}
+
+/** One call as a test sees it. */
+export interface SeenCall {
+  readonly name: string;
+  readonly values: readonly unknown[];
+}
+
+/** Calls functions of the page through the library's own runtime: a message there, a result back some time later. */
+export class CustomFunctions {
+  /** every call that was sent, in order */
+  readonly seen: SeenCall[] = [];
+  /** formulas that Excel would call in a way that this model does not know */
+  readonly troubles: string[] = [];
+  private readonly calls = new Map<string, Call>();
+  private isReady = false;
+  private made = 0;
+
+  constructor(
+    readonly metadata: FunctionsJson | undefined,
+    private readonly blanks: Blanks,
+    private readonly send: (messages: readonly Message[]) => void,
+    private readonly arrived: () => void,
+  ) {}
+
+  /** The page has loaded its functions. */
+  ready(): void {
+    this.isReady = true;
+    this.sendWaiting();
+  }
+
+  /** Called before the formulas are calculated. */
+  startPass(): void {
+    for (const call of this.calls.values()) call.isUsed = false;
+  }
+
+  /** Called after the formulas are calculated: calls what is new and gives up what no formula asks for any more. */
+  endPass(): void {
+    for (const [key, call] of this.calls) {
+      if (call.isUsed) continue;
+      this.calls.delete(key);
+      if (call.result === undefined && call.message === undefined && call.isCancelable) this.send([[CATEGORY, CANCEL, "", JSON.stringify({ invocationId: call.id }), call.id]]);
+    }
+    this.sendWaiting();
+  }
+
+  /**
+   * The value of a function in a cell.
+   *
+   * @param place  the cell, so that two cells never share a call
+   * @throws {UnsupportedFormula} while the function has not answered
+   */
+  value(id: string, given: readonly Given[], place: string, address: string): FunctionResult {
+    const entry = this.metadata?.functions.find((each) => each.id === id);
+    if (entry === undefined) throw new UnsupportedFormula(`No function ${id} is registered.`, "#NAME?", false);
+    if (given.flat(3).some((each) => each instanceof ErrorValue && each.code === BUSY)) throw busy(id);
+    const options = (entry as { options?: { cancelable?: boolean } }).options;
+    const made = prepared(entry.parameters, given, this.blanks, this.metadata?.allowErrorForDataTypeAny === true);
+    if (made instanceof ErrorValue) return { values: [[made]] };
+    if (typeof made === "string") {
+      this.troubles.push(`${id}: ${made}`);
+      return { values: [[new ErrorValue("#VALUE!")]], message: made };
+    }
+    const key = JSON.stringify([place, id, made.values]);
+    let call = this.calls.get(key);
+    if (call === undefined) {
+      const number = ++this.made;
+      const flags = (options?.cancelable === true ? CANCELABLE : 0) | (made.takesErrors ? TAKES_ERRORS : 0);
+      call = { id: number, isCancelable: options?.cancelable === true, message: [CATEGORY, INVOKE, "", JSON.stringify([number, id, made.values, address, flags]), number], result: undefined, isUsed: true };
+      this.calls.set(key, call);
+      this.seen.push({ name: id, values: made.values });
+    }
+    call.isUsed = true;
+    if (call.result === undefined) throw busy(id);
+    return call.result;
+  }
+
+  /** Results of the page; one of a call that is no longer wanted is dropped. */
+  receive(results: readonly RawResult[]): void {
+    for (const result of results) {
+      for (const call of this.calls.values()) if (call.id === result[0]) call.result = functionResult(result);
+    }
+    this.arrived();
+  }
+
+  /** Forgets answers, so that everything is called again. @param isMeant  by the cell */
+  forget(isMeant: (place: string) => boolean): void {
+    for (const [key, call] of this.calls) if (call.result !== undefined && isMeant((JSON.parse(key) as [string])[0])) this.calls.delete(key);
+  }
+
+  /** How many calls have not been answered. */
+  get waiting(): number {
+    return [...this.calls.values()].filter(({ result }) => result === undefined).length;
+  }
+
+  private sendWaiting(): void {
+    if (!this.isReady) return;
+    const messages: Message[] = [];
+    for (const call of this.calls.values()) {
+      if (call.message === undefined) continue;
+      messages.push(call.message);
+      call.message = undefined;
+    }
+    if (messages.length > 0) this.send(messages);
+  }
+}
+
+function busy(id: string): UnsupportedFormula {
+  return new UnsupportedFormula(`${id} has not answered yet.`, BUSY, false);
+}
+

@@ -1,0 +1,146 @@
+import { build } from "esbuild";
+import { readFile } from "node:fs/promises";
+import { fileURLToPath } from "node:url";
+import type { Browser, BrowserContext, Page, Route } from "playwright-core";
+import type { FunctionsJson } from "../../../src/build/metadata.js";
+import { ExcelHost } from "./excel-host.js";
+import { OUTRIGHT } from "./faults.js";
+import type { Blanks } from "./function-arguments.js";
+import { libraryFile, LIBRARY_ADDRESS } from "./library.js";
+import type { SupportedSets } from "./requirement-sets.js";
+import type { WireRequest } from "./wire.js";
+
+/** Which Excel, and what it opens. */
+export interface ExcelOptions {
+  /** the page that the manifest names; its origin is the only one that may be asked for anything, besides the library */
+  readonly address: string;
+  /** how far ExcelApi goes: "1.9" is the perpetual Excel of 2021 */
+  readonly excelApi?: string;
+  /** blank cells as the desktop (0) or the web (null) hands them to functions */
+  readonly blanks?: Blanks;
+  /** what Excel reads from functions.json; without it no cell function exists */
+  readonly metadata?: FunctionsJson;
+  readonly namespace?: string;
+  readonly colorScheme?: "light" | "dark";
+  readonly viewport?: { readonly width: number; readonly height: number };
+}
+
+/** A page of the add-in beside a model of Excel. */
+export interface Excel {
+  readonly page: Page;
+  readonly host: ExcelHost;
+  /** what the page said to its console, threw, or asked for elsewhere: nothing of that may happen */
+  readonly complaints: string[];
+  /** Does something to the workbook as a person would, and lets Excel calculate and tell the page. */
+  person(act: (host: ExcelHost) => void): Promise<void>;
+  /** Waits until no cell function is on its way and nothing waits to be calculated. */
+  calculated(): Promise<void>;
+  close(): Promise<void>;
+}
+
+/**
+ * Opens a page of the add-in in a browser context of its own, with Excel around it.
+ *
+ * @param browser  shared by the tests
+ */
+export async function startExcel(browser: Browser, options: ExcelOptions): Promise<Excel> {
+  const sets = supportedSets(options.excelApi ?? "1.20");
+  const context = await browser.newContext({ viewport: options.viewport ?? { width: 320, height: 900 }, colorScheme: options.colorScheme ?? "light" });
+  const page = await context.newPage();
+  const complaints = listen(page);
+  const host = new ExcelHost({ sets, namespace: options.namespace ?? "PROBEDEV", metadata: options.metadata, blanks: options.blanks ?? 0 }, (messages) => {
+    void page.evaluate((each) => (window as unknown as { excelDeliver(all: unknown): void }).excelDeliver(each), messages).catch(() => undefined);
+  });
+  await route(context, new URL(options.address).origin, complaints);
+  await context.exposeBinding("excelExecute", async (_source, method: number, text: string) => execute(host, method, text));
+  await context.addInitScript({ content: `window.excelSettings = ${JSON.stringify({ matrix: JSON.stringify(sets), flags: SHARED_RUNTIME | CUSTOM_FUNCTIONS })};\n${await standIn()}` });
+  await page.goto(options.address);
+  return {
+    page,
+    host,
+    complaints,
+    person: async (act) => {
+      act(host);
+      host.settle();
+    },
+    calculated: async () => {
+      const end = Date.now() + 20_000;
+      do {
+        host.settle();
+        if (host.functions.waiting === 0) return;
+        await new Promise((resolve) => setTimeout(resolve, 20));
+      } while (Date.now() < end);
+      throw new Error(`${host.functions.waiting} cell functions have not answered in 20 s.`);
+    },
+    close: () => context.close(),
+  };
+}
+
+const EXECUTE_RICH_API = 93;
+const SHARED_RUNTIME = 1;
+const CUSTOM_FUNCTIONS = 2;
+/** a request of the runtime of custom functions carries this among its flags */
+const OF_FUNCTIONS = 2_048;
+
+/** One call of window.external.Execute, decided on the test's side. */
+async function execute(host: ExcelHost, method: number, text: string): Promise<{ status: number; body: string }> {
+  if (method !== EXECUTE_RICH_API) return { status: UNKNOWN_METHOD, body: "" };
+  const [params] = JSON.parse(text) as [[string, string, string, string[], string, number, number]];
+  const body = params[4];
+  const flags = params[6];
+  const outright = await host.faults.outright(body.length, (flags & DELAY_FOR_CELL_EDIT) !== 0);
+  if (outright !== undefined) return { status: outright, body: "" };
+  const reply = JSON.stringify(host.perform(JSON.parse(body) as WireRequest, (flags & OF_FUNCTIONS) !== 0));
+  // events come after the answer to what caused them
+  setTimeout(() => host.settle(), 0);
+  return reply.length > host.faults.largest ? { status: OUTRIGHT.responseTooLarge, body: "" } : { status: 0, body: reply };
+}
+
+const UNKNOWN_METHOD = 5_001;
+const DELAY_FOR_CELL_EDIT = 64;
+
+function supportedSets(excelApi: string): SupportedSets {
+  return {
+    ExcelApi: excelApi,
+    CustomFunctions: "1.7",
+    CustomFunctionsRuntime: "1.4",
+    SharedRuntime: "1.1",
+    RibbonApi: "1.1",
+    DelayForCellEdit: "1.1",
+    ...(excelApi === "1.9" ? {} : { ExcelApiOnline: "1.1" }),
+  };
+}
+
+async function route(context: BrowserContext, origin: string, complaints: string[]): Promise<void> {
+  await context.route("**/*", async (each: Route) => {
+    const url = each.request().url();
+    const library = [LIBRARY_ADDRESS, `${origin}/office-js/`].find((folder) => url.startsWith(folder));
+    if (library !== undefined) {
+      const file = libraryFile(new URL(url).pathname.slice(new URL(library).pathname.length));
+      await each.fulfill({ contentType: "text/javascript; charset=utf-8", headers: { "Access-Control-Allow-Origin": "*" }, body: await readFile(file) });
+    } else if (url.startsWith(`${origin}/`)) await each.continue();
+    else {
+      complaints.push(`asked for ${url}`);
+      await each.abort();
+    }
+  });
+}
+
+function listen(page: Page): string[] {
+  const complaints: string[] = [];
+  page.on("console", (message) => {
+    if (message.type() === "error" || message.type() === "warning") complaints.push(message.text());
+  });
+  page.on("pageerror", (error) => complaints.push(`uncaught: ${error.message}`));
+  page.on("dialog", (dialog) => {
+    complaints.push(`dialog: ${dialog.message()}`);
+    void dialog.dismiss();
+  });
+  return complaints;
+}
+
+let bundled: Promise<string> | undefined;
+function standIn(): Promise<string> {
+  bundled ??= build({ entryPoints: [fileURLToPath(new URL("stand-in.ts", import.meta.url))], bundle: true, format: "iife", target: "es2022", write: false, logLevel: "warning" }).then(({ outputFiles }) => outputFiles[0]!.text);
+  return bundled;
+}
