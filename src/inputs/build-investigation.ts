@@ -68,7 +68,12 @@ export function buildInvestigation(values: Values, regionalCov: number, piles: r
   if (depth / spacing > MOST_READINGS) {
     throw refusal(values.place("readingSpacing"), `is ${amount(spacing)} m, which makes ${Math.floor(depth / spacing)} readings in a hole of ${amount(depth)} m; at most ${MOST_READINGS} are used, so average nearer readings and write the distance of the averages`);
   }
-  return { readingCov, holeCov, methodCov, readingSpacing: metres(spacing), holeDepth: metres(depth), holes: buildHoles(values, piles), designRule: buildDesignRule(values, regionalCov) };
+  const designRule = buildDesignRule(values, regionalCov);
+  // a table begins with few holes, and one reading has no standard deviation
+  if (designRule.name === "lessdeviations" && depth < 2 * spacing * (1 - 1e-9)) {
+    throw refusal(values.place("holeDepth"), `is ${amount(depth)} m, which gives a hole one reading at ${values.named("readingSpacing")} of ${amount(spacing)} m; the design rule mean less deviations needs at least two, so read more closely or drill deeper`);
+  }
+  return { readingCov, holeCov, methodCov, readingSpacing: metres(spacing), holeDepth: metres(depth), holes: buildHoles(values, piles), designRule };
 }
 
 function buildHoles(values: Values, piles: readonly PilePoint[] | undefined): Point[] | undefined {

@@ -181,6 +181,7 @@ const HOLES: readonly Refusal[] = [
   ["two holes in one place", list("Hole list", [1, 2], [3, 4], [1, 2]), "Holes 1 and 3 of the hole list (rows 26 and 28 of the site block) stand in one place; give each hole its own."],
   ["hole far away", list("Hole list", [1, 2], [500000, 200000]), "Hole 2 of the hole list (row 27 of the site block) stands 538513 m from the middle of the piles; holes and piles need the same coordinates."],
   ["too many holes", list("Hole list", ...Array.from({ length: 61 }, (_, k) => [k, 1])), "Hole list (row 25 of the site block) has 61 rows; at most 60 are accepted."],
+  ["one reading for a rule of deviations", add(put(SMALL, "Hole depth", 3.5), ["Reading spacing", 2, "m"], ["Design rule", "mean less deviations"]), "Hole depth (row 20 of the site block) is 3.5 m, which gives a hole one reading at Reading spacing (row 25 of the site block) of 2 m; the design rule mean less deviations needs at least two, so read more closely or drill deeper."],
   ["hole shallower than its spacing", add(put(SMALL, "Hole depth", 1), ["Reading spacing", 2, "m"]), "Hole depth (row 20 of the site block) is 1 m, less than Reading spacing (row 25 of the site block) of 2 m: no hole would have a reading."],
   ["readings too near", add(put(SMALL, "Hole depth", 30), ["Reading spacing", 5, "cm"]), "Reading spacing (row 25 of the site block) is 0.05 m, which makes 600 readings in a hole of 30 m; at most 400 are used, so average nearer readings and write the distance of the averages."],
 ];

@@ -18,6 +18,11 @@ export interface ProfileTask {
 const trials = 48;
 /** Depth below the tip, in diameters, over which the ground under the base is averaged. */
 const underBase = 2;
+/**
+ * Smallest radius of influence, in shaft radii. A tip in a layer far stiffer than those above makes the form's radius so small that the
+ * shaft would seem rigid, or inside the shaft; no pile of two diameters or more in uniform or linearly stiffening ground comes below this.
+ */
+const leastInfluence = 2;
 
 /**
  * A designer of lengths in layered ground or ground that stiffens with depth: Randolph & Wroth's form with the average modulus along the
@@ -40,7 +45,7 @@ export function profileDesign(task: ProfileTask): (load: Kilonewtons, modulus: n
     const below = (mean(length + underBase * diameter) * (length + underBase * diameter) - along * length) / (underBase * diameter);
     return randolphWroth({
       length: metres(length), radius: metres(diameter / 2), baseRatio: 1, tipShearModulus: (modulus * at) / (2 * (1 + poisson)),
-      averageRatio: along / at, baseStiffnessRatio: at / below, poisson, pileModulus,
+      averageRatio: along / at, baseStiffnessRatio: at / below, poisson, pileModulus, leastInfluence,
     }).stiffness;
   };
   return (load, modulus, allowable, step) => {

@@ -19,6 +19,8 @@ export interface ShaftAndBase {
   readonly poisson: number;
   /** Young's modulus of the pile as an equivalent solid, kPa, > 0 */
   readonly pileModulus: number;
+  /** smallest radius of influence over the shaft radius; absent: 1, and a pile for which it would be smaller is refused */
+  readonly leastInfluence?: number;
 }
 
 /** What the closed form gives. */
@@ -43,14 +45,14 @@ export interface ShaftAndBaseAnswer {
  *   with r_m = [0.25 + xi (2.5 rho (1 - nu) - 0.25)] L
  */
 export function randolphWroth(pile: ShaftAndBase): ShaftAndBaseAnswer {
-  const { length, radius, baseRatio: eta, tipShearModulus: shear, averageRatio: rho, baseStiffnessRatio: xi, poisson: nu, pileModulus } = pile;
+  const { length, radius, baseRatio: eta, tipShearModulus: shear, averageRatio: rho, baseStiffnessRatio: xi, poisson: nu, pileModulus, leastInfluence = 0 } = pile;
   requireDomain(radius > 0 && radius < Infinity, "Pile radius", radius, "above 0 m");
   requireDomain(length > 0 && length < Infinity, "Pile length", length, "above 0 m");
   requireDomain(shear > 0 && shear < Infinity, "Shear modulus of the ground", shear, "above 0 kPa");
   requireDomain(pileModulus > 0 && pileModulus < Infinity, "Pile modulus", pileModulus, "above 0 kPa");
   requireDomain(nu >= 0 && nu <= 0.5, "Poisson's ratio", nu, "from 0 to 0.5");
   requireDomain(eta > 0 && rho > 0 && xi > 0 && eta < Infinity && rho < Infinity && xi < Infinity, "Ratio of radii or moduli", Math.min(eta, rho, xi), "above 0");
-  const influence = (0.25 + xi * (2.5 * rho * (1 - nu) - 0.25)) * length;
+  const influence = Math.max((0.25 + xi * (2.5 * rho * (1 - nu) - 0.25)) * length, leastInfluence * radius);
   const zeta = Math.log(influence / radius);
   requireDomain(zeta > 0, "Length over radius", length / radius, "large enough for the radius of influence to lie outside the shaft");
   const lambda = pileModulus / shear;

@@ -40,6 +40,19 @@ describe("design length in ground that changes with depth", () => {
     expect(Math.abs(1500 / Math.exp(response.lnStiffness) / 0.025 - 1)).toBeLessThan(0.15);
   });
 
+  // Independent method: finite elements. A short pile whose tip just stands in a far stiffer layer has a radius of influence near or inside
+  // its shaft by the published form, which then made it ten times too stiff or refused it; the form is up to 1.6 times stiff for stubby piles.
+  it.each([8, 20, 60, 300])("takes no short pile for rigid because its tip stands in a layer %i times as stiff", (times) => {
+    const shape = (z: number): number => (z < 1.8 ? 1 : times);
+    const stubby = { diameter: metres(1), pileModulus: kilopascals(30e6), poisson: 0.3, shortest: metres(2), longest: metres(2.2) };
+    const { lnStiffness } = pileResponse({ diameter: stubby.diameter, pileModulus: stubby.pileModulus, poissonRatio: 0.3, length: stubby.shortest }, (z) => kilopascals(5000 * shape(z)), { withForm: false });
+    const settlement = 1000 / Math.exp(lnStiffness);
+    const design = profileDesign({ ...stubby, shape });
+    expect(design(kilonewtons(1000), 5000, metres(settlement), metres(0))).toEqual({ length: 2, allowable: true });
+    const half = design(kilonewtons(1000), 5000, metres(settlement / 2), metres(0));
+    expect(half.allowable && half.length === 2).toBe(false);
+  });
+
   it("rounds up to the step and says when nothing is enough", () => {
     const design = profileDesign({ ...pile, shape: (z) => 1 + 0.05 * z });
     const free = design(kilonewtons(1500), 8000, allowable, metres(0)).length;
