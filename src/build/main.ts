@@ -1,12 +1,12 @@
 import { mkdir, writeFile } from "node:fs/promises";
 import { fileURLToPath } from "node:url";
+import { DEVELOPMENT, formFrom } from "./form.js";
 
 const dist = fileURLToPath(new URL("../../dist", import.meta.url));
 
 // Each command loads what it needs and no more: the bundler alone takes half a second to load.
 const COMMANDS: Readonly<Record<string, (words: readonly string[]) => Promise<void>>> = {
   async build(words) {
-    const { formFrom } = await import("./form.js");
     const form = formFrom(words);
     const { buildAddIn } = await import("./build-add-in.js");
     const { buildPractice } = await import("./practice-page.js");
@@ -29,9 +29,25 @@ const COMMANDS: Readonly<Record<string, (words: readonly string[]) => Promise<vo
     await writeFile(`${dist}/functions.json`, `${JSON.stringify(json, null, 2)}\n`);
     process.stdout.write(`${json.functions.length} functions: dist/functions.json\n`);
   },
+  async kernels() {
+    const { compiledKernels, KERNEL_CODE } = await import("./kernels.js");
+    const { file } = await compiledKernels();
+    await writeFile(KERNEL_CODE, file);
+    process.stdout.write(`${KERNEL_CODE}: ${file.length} characters\n`);
+  },
   async develop() {
     const { develop } = await import("./develop.js");
+    const { onTheWeb } = await import("./excel.js");
     await develop();
+    process.stdout.write(`Serving the development add-in at ${DEVELOPMENT.base} (stop with Ctrl+C). For Excel on the web:\n${onTheWeb()}\n`);
+  },
+  async excel() {
+    const { openInExcel } = await import("./excel.js");
+    await openInExcel();
+  },
+  async unload() {
+    const { unloadFromExcel } = await import("./excel.js");
+    await unloadFromExcel();
   },
 };
 

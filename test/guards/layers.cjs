@@ -31,7 +31,7 @@ module.exports = {
       name: "no-orphan",
       comment: "A file that nothing imports and that imports nothing has no place.",
       severity: "error",
-      from: { orphan: true, pathNot: "\\.d\\.ts$" },
+      from: { orphan: true, pathNot: "(\\.d\\.ts$|^src/kernels/)" }, // kernels are compiled, not imported
       to: {},
     },
     {
@@ -54,6 +54,13 @@ module.exports = {
       severity: "error",
       from: { path: "^src/(units|engine)/" },
       to: { path: "node_modules/", pathNot: "node_modules/(jstat|seedrandom)/" },
+    },
+    {
+      name: "kernels-are-compiled",
+      comment: "Sources of the WebAssembly module mean nothing to JavaScript.",
+      severity: "error",
+      from: { path: "^src/", pathNot: "^src/kernels/" },
+      to: { path: "^src/kernels/" },
     },
     {
       name: "no-node-in-pages",

@@ -1,104 +1,108 @@
+import { placeInEnvelope, tileEdge, type BandEnvelope } from "./band-envelope.js";
+import { kernels } from "./chosen-kernels.js";
 import { DomainError, requireDomain } from "./domain-error.js";
-export { solveBanded, solveBandedMany } from "./banded-solve.js";
+import type { Kernels, Room } from "./kernels.js";
 
-/** Tile edge: nine sums and six operands are what the registers hold without spilling; 2 is slower by a fifth, 4 no faster. */
-const TILE = 3;
-const TILE_SIZE = TILE * TILE;
-
-/** Room for the tiled copy, kept between calls because a fresh megabyte costs as much as a tenth of the work. */
-let workspace = new Float64Array(0);
+// Rows of the factor are made from the top. Each entry takes off its products in the order of their columns and is then multiplied by the
+// reciprocal of its column's pivot: an order of sums that does not hang on how many entries a kernel works on at once.
 
 /**
- * Cholesky factor of a symmetric positive definite band matrix, in place.
+ * Cholesky factor of a symmetric positive definite matrix inside an envelope, in place.
  *
- * Row i of the lower triangle holds columns i - h ... i, so that entry (i, j) stands at `band[i * (h + 1) + j - i + h]`;
- * places left of column 0 are neither read nor written. The band is copied into 3 x 3 tiles padded with zeros, where the
- * inner loop makes nine products from six loads, and copied back.
- *
- * @param band  lower triangle of the matrix, n x (h + 1), row by row; on return the lower factor in the same places
- * @param n  number of unknowns, > 0
- * @param halfBandwidth  h, number of places left of the diagonal, 0 to n - 1
- * @throws {DomainError} the matrix is not positive definite (the row is named), or its shape is wrong
+ * @param matrix  lower triangle, by `placeInEnvelope`; on return the factor, with the reciprocals of its pivots on the diagonal
+ * @param envelope  where entries stand
+ * @param using  the kernels
+ * @throws {DomainError} the matrix is not positive definite (the row is named), or the array is too short
  */
-export function factorBanded(band: Float64Array, n: number, halfBandwidth: number): void {
-  const h = halfBandwidth;
-  requireDomain(Number.isInteger(n) && n > 0, "Number of unknowns", n, "a whole number above 0");
-  requireDomain(Number.isInteger(h) && h >= 0 && h < n, "Half bandwidth", h, "a whole number from 0 to below the number of unknowns");
-  requireDomain(band.length >= n * (h + 1), "Length of the band", band.length, `at least ${n * (h + 1)}`);
-  const tileRows = Math.ceil(n / TILE);
-  const tilesPerRow = Math.ceil(h / TILE) + 1;
-  const size = tileRows * tilesPerRow * TILE_SIZE;
-  if (workspace.length < size) workspace = new Float64Array(size);
-  else workspace.fill(0, 0, size);
-  const tiles = workspace;
-  const inverse = new Float64Array(tileRows * TILE);
-  copyBand(band, tiles, n, h, tilesPerRow, true);
-  for (let i = n; i < tileRows * TILE; i++) tiles[tileOrigin(i, tilesPerRow) + i * TILE] = 1; // identity below the last row
-  for (let row = 0; row < tileRows; row++) factorTileRow(tiles, inverse, row, tilesPerRow);
-  copyBand(band, tiles, n, h, tilesPerRow, false);
+export function factorBanded(matrix: Float64Array, envelope: BandEnvelope, using: Kernels = kernels()): void {
+  requireLength(matrix, envelope);
+  const { size } = envelope;
+  const room = layOut(envelope, 0, using);
+  room.doubles.set(matrix.length === size ? matrix : matrix.subarray(0, size));
+  factorInRoom(room, envelope, using);
+  matrix.set(room.doubles.subarray(0, size));
 }
 
-/** Place of (i, column 0) in the tiles, were it inside the band; column k follows k * TILE further on. */
-function tileOrigin(i: number, tilesPerRow: number): number {
-  const row = (i / TILE) | 0;
-  return row * tilesPerRow * TILE_SIZE + (tilesPerRow - 1 - row) * TILE_SIZE + (i - row * TILE);
+/**
+ * Solves with the factor of `factorBanded`, in place, many right-hand sides at once.
+ *
+ * @param factor  as `factorBanded` leaves it
+ * @param envelope  of the matrix
+ * @param right  right-hand sides, rows x columns, row by row, from unknown `from` on; on return the solutions
+ * @param columns  number of right-hand sides, > 0
+ * @param from  first unknown, a multiple of the tile's edge: those above it are eliminated already, and what is left has the same displacements
+ * @param using  the kernels
+ * @throws {DomainError} an array is too short, or a number is out of range
+ */
+export function solveBanded(factor: Float64Array, envelope: BandEnvelope, right: Float64Array, columns = 1, from = 0, using: Kernels = kernels()): void {
+  const { unknowns, tileRows, size } = envelope;
+  requireLength(factor, envelope);
+  requireDomain(Number.isInteger(columns) && columns > 0, "Number of right-hand sides", columns, "a whole number above 0");
+  requireDomain(from >= 0 && from < unknowns && from % tileEdge === 0, "First unknown", from, `a multiple of ${tileEdge} below the number of unknowns`);
+  const numbers = (unknowns - from) * columns;
+  requireDomain(right.length >= numbers, "Length of the right-hand sides", right.length, `at least ${numbers}`);
+  const width = columns + (columns % 2); // kernels take columns in pairs
+  const firstRow = from / tileEdge;
+  const rows = (tileRows - firstRow) * tileEdge;
+  const room = layOut(envelope, rows * width, using);
+  const { doubles } = room;
+  const at = rightAt(envelope);
+  doubles.set(factor.length === size ? factor : factor.subarray(0, size));
+  doubles.fill(0, at, at + rows * width);
+  if (width === columns) doubles.set(right.subarray(0, numbers), at);
+  else for (let i = 0, k = 0; k < numbers; i++) for (let c = 0; c < columns; c++, k++) doubles[at + i * width + c] = right[k];
+  using.forward(0, size, tileRows, firstRow, at, width);
+  using.backward(0, size, tileRows, firstRow, at, width);
+  if (width === columns) right.set(doubles.subarray(at, at + numbers));
+  else for (let i = 0, k = 0; k < numbers; i++) for (let c = 0; c < columns; c++, k++) right[k] = doubles[at + i * width + c];
 }
 
-function copyBand(band: Float64Array, tiles: Float64Array, n: number, h: number, tilesPerRow: number, intoTiles: boolean): void {
-  for (let i = 0; i < n; i++) {
-    const first = i < h ? 0 : i - h;
-    let t = tileOrigin(i, tilesPerRow) + first * TILE;
-    let b = i * h + h + first;
-    if (intoTiles) for (let k = first; k <= i; k++, t += TILE) tiles[t] = band[b++];
-    else for (let k = first; k <= i; k++, t += TILE) band[b++] = tiles[t];
-  }
+/**
+ * f' K^-1 f of a load f on a matrix K: what the load moves itself. One forward pass gives it, and K is never copied.
+ *
+ * @param envelope  of the matrix
+ * @param add  adds the matrix, by `placeInEnvelope`, to the zeros that it is given; they are lent for as long as it runs
+ * @param load  f, one an unknown
+ * @param using  the kernels
+ * @throws {DomainError} the matrix is not positive definite (the row is named), or the load is too short
+ */
+export function complianceBanded(envelope: BandEnvelope, add: (matrix: Float64Array) => void, load: Float64Array, using: Kernels = kernels()): number {
+  const { unknowns, tileRows, size } = envelope;
+  requireDomain(load.length >= unknowns, "Length of the load", load.length, `at least ${unknowns}`);
+  const rows = tileRows * tileEdge;
+  const room = layOut(envelope, 2 * rows, using);
+  const { doubles } = room;
+  doubles.fill(0, 0, size);
+  add(doubles);
+  factorInRoom(room, envelope, using);
+  const at = rightAt(envelope);
+  doubles.fill(0, at, at + 2 * rows);
+  for (let i = 0; i < unknowns; i++) doubles[at + 2 * i] = load[i];
+  using.forward(0, size, tileRows, 0, at, 2);
+  let compliance = 0;
+  for (let i = 0; i < unknowns; i++) compliance += doubles[at + 2 * i] ** 2;
+  return compliance;
 }
 
-/** Computes one row of tiles of the factor from the rows above it. Inside a tile entries run column by column. */
-function factorTileRow(tiles: Float64Array, inverse: Float64Array, row: number, tilesPerRow: number): void {
-  const first = row < tilesPerRow ? 0 : row - tilesPerRow + 1;
-  const own = (row * tilesPerRow + tilesPerRow - 1 - row) * TILE_SIZE;
-  for (let column = first; column <= row; column++) {
-    const other = (column * tilesPerRow + tilesPerRow - 1 - column) * TILE_SIZE;
-    const t = own + column * TILE_SIZE;
-    let s00 = tiles[t], s10 = tiles[t + 1], s20 = tiles[t + 2];
-    let s01 = tiles[t + 3], s11 = tiles[t + 4], s21 = tiles[t + 5];
-    let s02 = tiles[t + 6], s12 = tiles[t + 7], s22 = tiles[t + 8];
-    for (let p = own + first * TILE_SIZE, q = other + first * TILE_SIZE; p < t; p += TILE, q += TILE) {
-      const b0 = tiles[q], b1 = tiles[q + 1], b2 = tiles[q + 2];
-      const a0 = tiles[p];
-      s00 -= a0 * b0; s01 -= a0 * b1; s02 -= a0 * b2;
-      const a1 = tiles[p + 1];
-      s10 -= a1 * b0; s11 -= a1 * b1; s12 -= a1 * b2;
-      const a2 = tiles[p + 2];
-      s20 -= a2 * b0; s21 -= a2 * b1; s22 -= a2 * b2;
-    }
-    const i0 = column * TILE;
-    if (column === row) {
-      const d0 = pivot(s00, i0);
-      s10 /= d0; s20 /= d0;
-      const d1 = pivot(s11 - s10 * s10, i0 + 1);
-      s21 = (s21 - s20 * s10) / d1;
-      const d2 = pivot(s22 - s20 * s20 - s21 * s21, i0 + 2);
-      inverse[i0] = 1 / d0; inverse[i0 + 1] = 1 / d1; inverse[i0 + 2] = 1 / d2;
-      tiles[t] = d0; tiles[t + 1] = s10; tiles[t + 2] = s20;
-      tiles[t + 4] = d1; tiles[t + 5] = s21; tiles[t + 8] = d2;
-    } else {
-      const d = other + column * TILE_SIZE;
-      const l10 = tiles[d + 1], l20 = tiles[d + 2], l21 = tiles[d + 5];
-      const v0 = inverse[i0], v1 = inverse[i0 + 1], v2 = inverse[i0 + 2];
-      s00 *= v0; s10 *= v0; s20 *= v0;
-      s01 = (s01 - s00 * l10) * v1; s11 = (s11 - s10 * l10) * v1; s21 = (s21 - s20 * l10) * v1;
-      tiles[t] = s00; tiles[t + 1] = s10; tiles[t + 2] = s20;
-      tiles[t + 3] = s01; tiles[t + 4] = s11; tiles[t + 5] = s21;
-      tiles[t + 6] = (s02 - s00 * l20 - s01 * l21) * v2;
-      tiles[t + 7] = (s12 - s10 * l20 - s11 * l21) * v2;
-      tiles[t + 8] = (s22 - s20 * l20 - s21 * l21) * v2;
-    }
-  }
+/** Where right-hand sides stand in the room: behind the tiles and the table of rows. */
+function rightAt({ size, tileRows }: BandEnvelope): number {
+  return size + tileRows + (tileRows % 2);
 }
 
-function pivot(square: number, row: number): number {
-  if (!(square > 0 && square < Infinity)) throw new DomainError(`The band matrix is not positive definite at row ${row + 1}.`);
-  return Math.sqrt(square);
+/** Room for the tiles, the table of rows and right-hand sides, one behind the other, with the table filled in. */
+function layOut(envelope: BandEnvelope, right: number, using: Kernels): Room {
+  const room = using.room(rightAt(envelope) + right);
+  room.ints.set(envelope.rows, 2 * envelope.size);
+  return room;
+}
+
+function factorInRoom({ doubles }: Room, envelope: BandEnvelope, using: Kernels): void {
+  const { unknowns, tileRows, size } = envelope;
+  for (let i = unknowns; i < tileRows * tileEdge; i++) doubles[placeInEnvelope(envelope, i, i)] = 1; // unknowns that fill up the last tile
+  const failed = using.factor(0, size, tileRows);
+  if (failed > 0) throw new DomainError(`The band matrix is not positive definite at row ${failed}.`);
+}
+
+function requireLength(matrix: Float64Array, { size }: BandEnvelope): void {
+  requireDomain(matrix.length >= size, "Length of the band", matrix.length, `at least ${size}`);
 }

@@ -1,3 +1,4 @@
+import { bandEnvelope, placeInEnvelope, type BandEnvelope } from "../numerics/band-envelope.js";
 import { requireDomain } from "../numerics/domain-error.js";
 import { addElementHalf, addGroundBelow, addGroundBeside, ELEMENT_NODES, ELEMENT_UNKNOWNS, PACKED } from "./pile-elements.js";
 
@@ -25,13 +26,14 @@ export interface PileMesh extends MeshLines {
   /** depths that bound the levels of cells, m */
   readonly levelBounds: Float64Array;
   readonly unknowns: number;
-  readonly halfBandwidth: number;
+  /** where the entries of the stiffness stand: nodes between two rows of nodes see fewer others, which saves a quarter of a band's work */
+  readonly envelope: BandEnvelope;
   /** unknown of each local unknown, elements x 16, ascending; -1 where held on the axis. Elements are numbered column by column */
   readonly elementUnknowns: Int32Array;
   /** stiffness of the upper and of the lower half of each element at unit modulus, elements x packed lower triangle, kN/m per kPa */
   readonly upper: Float64Array;
   readonly lower: Float64Array;
-  /** place in the band of each packed entry, -1 where held */
+  /** place in the envelope of each packed entry, -1 where held */
   readonly places: Int32Array;
   /** unit load spread evenly over the pile head, by unknown */
   readonly headLoad: Float64Array;
@@ -59,11 +61,9 @@ export function buildMesh(lines: MeshLines): PileMesh {
   const fullRow = 2 * (2 * nc + 1) - 1;
   const midRow = 2 * (nc + 1) - 1;
   const unknowns = (nr + 1) * fullRow + nr * midRow;
-  const halfBandwidth = fullRow + midRow + 5;
   const elementUnknowns = new Int32Array(elements * ELEMENT_UNKNOWNS);
   const upper = new Float64Array(elements * PACKED);
   const lower = new Float64Array(elements * PACKED);
-  const places = new Int32Array(elements * PACKED);
   for (let c = 0; c < nc; c++) {
     for (let r = 0; r < nr; r++) {
       const e = c * nr + r;
@@ -86,26 +86,47 @@ export function buildMesh(lines: MeshLines): PileMesh {
         addGroundBeside(lower, at, columns[nc], rows[r], rows[r + 1], nu, 1);
       }
       if (r === nr - 1) addGroundBelow(lower, at, columns[c], columns[c + 1], rows[nr], nu);
-      let k = at;
-      for (let i = 0; i < ELEMENT_UNKNOWNS; i++) {
-        const p = elementUnknowns[e * ELEMENT_UNKNOWNS + i];
-        for (let j = 0; j <= i; j++, k++) {
-          const q = elementUnknowns[e * ELEMENT_UNKNOWNS + j];
-          places[k] = p < 0 || q < 0 ? -1 : p * halfBandwidth + halfBandwidth + q;
-        }
-      }
     }
   }
+  const envelope = bandEnvelope(firstUnknowns(elementUnknowns, unknowns));
   // Strain energy about a shaft falls with the square of the radius, so half of a column's energy lies inside its geometric mean radius:
   // a field taken there has the column's variance within 1 %, at the arithmetic mean it is 3 % short.
   const rings = Float64Array.from({ length: nc }, (_, c) => (columns[c] > 0 ? Math.sqrt(columns[c] * columns[c + 1]) : columns[c + 1] / 2));
   const levelBounds = Float64Array.from({ length: 2 * nr + 1 }, (_, l) => (l % 2 === 0 ? rows[l / 2] : (rows[(l - 1) / 2] + rows[(l + 1) / 2]) / 2));
-  return { ...lines, rings, levelBounds, unknowns, halfBandwidth, elementUnknowns, upper, lower, places, headLoad: headLoad(columns, pileColumns, unknowns) };
+  return {
+    ...lines, rings, levelBounds, unknowns, envelope, elementUnknowns, upper, lower,
+    places: placesOf(elementUnknowns, envelope), headLoad: headLoad(columns, pileColumns, unknowns),
+  };
 }
 
 /** Whether an element is pile. */
 export function isPile(lines: MeshLines, column: number, row: number): boolean {
   return column < lines.pileColumns && row < lines.pileRows;
+}
+
+/** The first unknown that each unknown shares an element with. */
+function firstUnknowns(elementUnknowns: Int32Array, unknowns: number): Int32Array {
+  const first = Int32Array.from({ length: unknowns }, (_, p) => p);
+  for (let e = 0; e < elementUnknowns.length; e += ELEMENT_UNKNOWNS) {
+    const own = elementUnknowns.subarray(e, e + ELEMENT_UNKNOWNS);
+    const least = own.reduce((low, p) => (p >= 0 && p < low ? p : low), unknowns);
+    for (const p of own) if (p >= 0 && least < first[p]) first[p] = least;
+  }
+  return first;
+}
+
+function placesOf(elementUnknowns: Int32Array, envelope: BandEnvelope): Int32Array {
+  const places = new Int32Array((elementUnknowns.length / ELEMENT_UNKNOWNS) * PACKED);
+  for (let e = 0, k = 0; e < elementUnknowns.length; e += ELEMENT_UNKNOWNS) {
+    for (let i = 0; i < ELEMENT_UNKNOWNS; i++) {
+      const p = elementUnknowns[e + i];
+      for (let j = 0; j <= i; j++, k++) {
+        const q = elementUnknowns[e + j];
+        places[k] = p < 0 || q < 0 ? -1 : placeInEnvelope(envelope, p, q);
+      }
+    }
+  }
+  return places;
 }
 
 /** Nodal forces of a unit load spread evenly over the pile columns at the surface. */

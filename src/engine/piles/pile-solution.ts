@@ -1,5 +1,5 @@
 import { requireDomain } from "../numerics/domain-error.js";
-import { factorBanded, solveBanded } from "../numerics/banded-cholesky.js";
+import { complianceBanded, factorBanded, solveBanded } from "../numerics/banded-cholesky.js";
 import { ELEMENT_UNKNOWNS, PACKED } from "./pile-elements.js";
 import { isPile, type PileMesh } from "./pile-mesh.js";
 
@@ -9,7 +9,7 @@ export interface PileSolution {
   readonly compliance: number;
   /** displacement under a unit load, by unknown, m/kN */
   readonly displacements: Float64Array;
-  /** Cholesky factor of the stiffness, unknowns x (half bandwidth + 1) */
+  /** Cholesky factor of the stiffness, in the mesh's envelope */
   readonly factor: Float64Array;
 }
 
@@ -19,27 +19,38 @@ export interface PileSolution {
  * @param mesh  the mesh
  * @param moduli  Young's modulus of each cell, kPa, > 0, rings x levels, ring by ring; cells inside the pile are not read
  * @param pileModulus  Young's modulus of the pile, kPa, > 0
- * @param band  room for the factor, at least unknowns x (half bandwidth + 1); a new one if absent. The solution keeps it
  * @returns the solution
  * @throws {DomainError} a modulus is not above zero, or an array is too short
  */
-export function solvePile(mesh: PileMesh, moduli: Float64Array, pileModulus: number, band?: Float64Array): PileSolution {
-  const { unknowns, halfBandwidth, headLoad } = mesh;
-  const size = unknowns * (halfBandwidth + 1);
-  requireDomain(pileModulus > 0 && pileModulus < Infinity, "Pile modulus", pileModulus, "above 0 kPa");
-  requireDomain(moduli.length >= mesh.rings.length * (mesh.levelBounds.length - 1), "Number of cell moduli", moduli.length, "one a cell");
-  const factor = band === undefined ? new Float64Array(size) : band.fill(0, 0, size);
+export function solvePile(mesh: PileMesh, moduli: Float64Array, pileModulus: number): PileSolution {
+  const { unknowns, envelope, headLoad } = mesh;
+  const factor = new Float64Array(envelope.size);
   assemble(mesh, moduli, pileModulus, factor);
-  factorBanded(factor, unknowns, halfBandwidth);
+  factorBanded(factor, envelope);
   const displacements = Float64Array.from(headLoad);
-  solveBanded(factor, unknowns, halfBandwidth, displacements);
+  solveBanded(factor, envelope, displacements);
   let compliance = 0;
   for (let i = 0; i < unknowns; i++) compliance += headLoad[i] * displacements[i];
   return { compliance, displacements, factor };
 }
 
-function assemble(mesh: PileMesh, moduli: Float64Array, pileModulus: number, band: Float64Array): void {
+/**
+ * Settlement of the head under a unit load alone, a quarter faster than `solvePile`.
+ *
+ * @param mesh  the mesh
+ * @param moduli  as for `solvePile`
+ * @param pileModulus  Young's modulus of the pile, kPa, > 0
+ * @returns averaged over the head, m/kN
+ * @throws {DomainError} a modulus is not above zero, or an array is too short
+ */
+export function headCompliance(mesh: PileMesh, moduli: Float64Array, pileModulus: number): number {
+  return complianceBanded(mesh.envelope, (stiffness) => assemble(mesh, moduli, pileModulus, stiffness), mesh.headLoad);
+}
+
+function assemble(mesh: PileMesh, moduli: Float64Array, pileModulus: number, stiffness: Float64Array): void {
   const { columns, rows, upper, lower, places } = mesh;
+  requireDomain(pileModulus > 0 && pileModulus < Infinity, "Pile modulus", pileModulus, "above 0 kPa");
+  requireDomain(moduli.length >= mesh.rings.length * (mesh.levelBounds.length - 1), "Number of cell moduli", moduli.length, "one a cell");
   const nr = rows.length - 1;
   const levels = 2 * nr;
   for (let c = 0; c < columns.length - 1; c++) {
@@ -51,7 +62,7 @@ function assemble(mesh: PileMesh, moduli: Float64Array, pileModulus: number, ban
       const end = (c * nr + r + 1) * PACKED;
       for (let k = end - PACKED; k < end; k++) {
         const place = places[k];
-        if (place >= 0) band[place] += above * upper[k] + below * lower[k];
+        if (place >= 0) stiffness[place] += above * upper[k] + below * lower[k];
       }
     }
   }

@@ -1,4 +1,5 @@
-import { solveBandedMany } from "../numerics/banded-cholesky.js";
+import { tileEdge } from "../numerics/band-envelope.js";
+import { solveBanded } from "../numerics/banded-cholesky.js";
 import type { CellGroups, GroupedForm } from "./grouped-form.js";
 import { ELEMENT_UNKNOWNS } from "./pile-elements.js";
 import { isPile, type PileMesh } from "./pile-mesh.js";
@@ -18,7 +19,7 @@ import { halfForces, type PileSolution } from "./pile-solution.js";
  * @source the derivatives of C = f' u and of u = K^-1 f by the ln modulus of a group, -u' K_e u and -K^-1 K_e u
  */
 export function secondOrderForm(mesh: PileMesh, moduli: Float64Array, solution: PileSolution, groups: CellGroups): GroupedForm {
-  const { unknowns, halfBandwidth } = mesh;
+  const { unknowns, envelope } = mesh;
   const { compliance } = solution;
   const rings = groups.radii.length;
   const bands = groups.levelBounds.length - 1;
@@ -28,13 +29,14 @@ export function secondOrderForm(mesh: PileMesh, moduli: Float64Array, solution: 
   const weights = new Float64Array(count);
   for (let b = 0; b < bands; b++) {
     // Unknowns above the band are eliminated already: below its first one, the factor's tail solves for the same displacements.
-    const first = byBand[b].reduce((least, cell) => cell.unknowns.reduce((low, p) => (p >= 0 && p < low ? p : low), least), unknowns);
+    const least = byBand[b].reduce((so, cell) => cell.unknowns.reduce((low, p) => (p >= 0 && p < low ? p : low), so), unknowns);
+    const first = least - (least % tileEdge);
     const right = new Float64Array((unknowns - first) * rings);
     for (const { ring, unknowns: places, forces, energy } of byBand[b]) {
       weights[ring * bands + b] += energy / compliance;
       for (let i = 0; i < ELEMENT_UNKNOWNS; i++) if (places[i] >= 0) right[(places[i] - first) * rings + ring] += forces[i];
     }
-    solveBandedMany(solution.factor.subarray(first * (halfBandwidth + 1)), unknowns - first, halfBandwidth, right, rings);
+    solveBanded(solution.factor, envelope, right, rings, first);
     for (let below = b; below < bands; below++) {
       for (const { ring, unknowns: places, forces } of byBand[below]) {
         const row = (ring * bands + below) * count + b;

@@ -1,6 +1,6 @@
 import type { Kilopascals, Metres } from "../../units/quantities.js";
 import { requireDomain } from "../numerics/domain-error.js";
-import { solveBandedMany } from "../numerics/banded-cholesky.js";
+import { solveBanded } from "../numerics/banded-cholesky.js";
 import { symmetricEigen } from "../numerics/symmetric-eigen.js";
 import type { CellGroups } from "./grouped-form.js";
 import { ELEMENT_UNKNOWNS, PACKED } from "./pile-elements.js";
@@ -60,7 +60,7 @@ export function regressionSlope(loss: number, variance: number): number {
 }
 
 function lossAlong(mesh: PileMesh, moduli: Float64Array, solution: PileSolution, groups: CellGroups, covariance: Float64Array, fields: Float64Array, kept: number): number {
-  const { unknowns, halfBandwidth, elementUnknowns } = mesh;
+  const { unknowns, envelope, elementUnknowns } = mesh;
   const { compliance, displacements } = solution;
   const count = covariance.length ** 0.5;
   const bands = groups.levelBounds.length - 1;
@@ -91,7 +91,7 @@ function lossAlong(mesh: PileMesh, moduli: Float64Array, solution: PileSolution,
       right[p * columns + kept] += h[group] * force;
     }
   });
-  solveBandedMany(solution.factor, unknowns, halfBandwidth, right, columns);
+  solveBanded(solution.factor, envelope, right, columns);
 
   const variance = new Float64Array(count); // of the kept parts
   const change = new Float64Array(count); // dw/dh = w (h + rate) - 2 u' K_e K^-1 K_h u / C

@@ -1,4 +1,4 @@
-import { solvePile } from "../piles/pile-solution.js";
+import { headCompliance } from "../piles/pile-solution.js";
 import { averageLevels } from "../piles/project-levels.js";
 import type { LengthForm } from "./length-form.js";
 
@@ -9,12 +9,11 @@ import type { LengthForm } from "./length-form.js";
  * @param pileModulus  kPa
  * @param field        log modulus about the median, level and own part together, rings x cells
  * @param bounds       depths that bound the cells, m
- * @param band         room for the factor, or undefined
  * @returns            ln of the stiffness in kN/m
  */
-export function elementLnStiffness(form: LengthForm, pileModulus: number, field: Float64Array, bounds: Float64Array, band: Float64Array | undefined): number {
+export function elementLnStiffness(form: LengthForm, pileModulus: number, field: Float64Array, bounds: Float64Array): number {
   const { mesh } = form;
   const onLevels = averageLevels(field, mesh.rings.length, bounds, mesh.levelBounds);
   for (let c = 0; c < onLevels.length; c++) onLevels[c] = form.moduli[c] * Math.exp(onLevels[c]);
-  return -Math.log(solvePile(mesh, onLevels, pileModulus, band).compliance);
+  return -Math.log(headCompliance(mesh, onLevels, pileModulus));
 }

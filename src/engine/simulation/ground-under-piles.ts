@@ -93,9 +93,8 @@ export function formStiffness(ground: GroundUnderPiles, field: Float64Array, lev
  * the form follows how the tip passes soft and stiff ground, which cubics through solved lengths miss by more than the form errs.
  *
  * @param form  of `formStiffness` in the same ground
- * @param band  room for one mesh's factor
  */
-export function elementStiffness(ground: GroundUnderPiles, field: Float64Array, level: number, form: Float64Array, band: Float64Array, out: Float64Array): void {
+export function elementStiffness(ground: GroundUnderPiles, field: Float64Array, level: number, form: Float64Array, out: Float64Array): void {
   const { logLengths, forms, rings, cellSd, levelBounds, pileModulus } = ground;
   const lengths = logLengths.length;
   const cells = rings.length * cellSd.length;
@@ -104,7 +103,7 @@ export function elementStiffness(ground: GroundUnderPiles, field: Float64Array, 
   for (let i = 0; i < out.length / lengths; i++) {
     const own = field.slice(i * cells, (i + 1) * cells);
     for (let c = 0; c < cells; c++) own[c] += level;
-    solved.forEach((k, s) => (differences[s] = elementLnStiffness(forms[k], pileModulus, own, levelBounds, band) - form[i * lengths + k]));
+    solved.forEach((k, s) => (differences[s] = elementLnStiffness(forms[k], pileModulus, own, levelBounds) - form[i * lengths + k]));
     for (let k = 0; k < lengths; k++) {
       const { start, weights } = between[k];
       let difference = 0;
@@ -121,9 +120,4 @@ function elementLengths(logLengths: Float64Array): { solved: number[]; between: 
   const solved = Array.from(logLengths, (_, k) => k).filter((k) => k % elementStep === 0);
   const grid = solved.map((k) => logLengths[k]);
   return { solved, between: Array.from(logLengths, (ln) => lagrangeWeights(grid, ln)) };
-}
-
-/** Room for the factor of the largest mesh. */
-export function bandOf({ forms }: GroundUnderPiles): Float64Array {
-  return new Float64Array(forms.reduce((most, { mesh }) => Math.max(most, mesh.unknowns * (mesh.halfBandwidth + 1)), 0));
 }

@@ -1,6 +1,6 @@
 import { interactionOf, type Interaction } from "../decision/group-interaction.js";
 import { sortedPlan, type Plan } from "../decision/plan.js";
-import { bandOf, groundUnderPiles, type GroundUnderPiles } from "./ground-under-piles.js";
+import { groundUnderPiles, type GroundUnderPiles } from "./ground-under-piles.js";
 import { holePlaces } from "./hole-places.js";
 import { errorDraws, type ErrorDraws } from "./readings.js";
 import { siteField, type SiteField } from "./site-field.js";
@@ -19,8 +19,6 @@ export interface Simulation {
   /** ln head stiffness of the last realisation by the form and by finite elements, piles x lengths */
   readonly byForm: Float64Array;
   readonly byElements: Float64Array;
-  /** room for the factor of a mesh */
-  readonly band: Float64Array;
 }
 
 /**
@@ -47,6 +45,5 @@ export function prepareSimulation(task: SimulationTask): Simulation {
     interaction: problems[0].piles.groupInteraction ? interactionOf(problems[0], plan, ground.logLengths) : undefined,
     byForm: new Float64Array(stiffnesses),
     byElements: new Float64Array(stiffnesses),
-    band: bandOf(ground),
   };
 }

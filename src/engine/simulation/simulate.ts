@@ -29,8 +29,8 @@ function outcomeSize({ task }: Simulation): number {
  */
 export function simulateElements(simulation: Simulation, index: number): Float64Array {
   const realised = realise(simulation, elementsKind, index);
-  const { ground, field, byForm, byElements, band } = simulation;
-  elementStiffness(ground, field.underPiles, realised.level, byForm, band, byElements);
+  const { ground, field, byForm, byElements } = simulation;
+  elementStiffness(ground, field.underPiles, realised.level, byForm, byElements);
   const size = outcomeSize(simulation);
   const out = new Float64Array(2 * size);
   const built = buildings(simulation, realised.level);

@@ -1,8 +1,10 @@
-import { factorBanded, solveBandedMany } from "../../../src/engine/numerics/banded-cholesky.js";
+import type { BandEnvelope } from "../../../src/engine/numerics/band-envelope.js";
+import { factorBanded, solveBanded } from "../../../src/engine/numerics/banded-cholesky.js";
 import { choleskyInPlace, multiplyLower } from "../../../src/engine/numerics/cholesky.js";
 import { symmetricEigen } from "../../../src/engine/numerics/symmetric-eigen.js";
 import { stream } from "../../../src/engine/random/stream.js";
 import type { BenchCase } from "../bench-case.js";
+import { bandInTiles } from "./band-in-tiles.js";
 
 /** Throws when two answers differ by more than rounding. */
 function same(ours: Float64Array, theirs: Float64Array, tolerance: number): void {
@@ -12,6 +14,8 @@ function same(ours: Float64Array, theirs: Float64Array, tolerance: number): void
 
 interface BandState {
   readonly band: Float64Array;
+  readonly envelope: BandEnvelope;
+  readonly tiles: Float64Array;
   readonly loads: Float64Array;
 }
 
@@ -36,13 +40,13 @@ function bandCase(n: number, half: number, columns: number, ratio: number): Benc
           }
         }
       }
-      return { band, loads };
+      return { band, ...bandInTiles(band, n, half), loads };
     },
-    run: ({ band, loads }) => {
-      const factor = band.slice();
+    run: ({ tiles, envelope, loads }) => {
+      const factor = tiles.slice();
       const x = loads.slice();
-      factorBanded(factor, n, half);
-      solveBandedMany(factor, n, half, x, columns);
+      factorBanded(factor, envelope);
+      solveBanded(factor, envelope, x, columns);
       return x;
     },
     check: (x) => same(x, new Float64Array(x.length).fill(1), 1e-12),

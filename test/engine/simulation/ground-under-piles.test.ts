@@ -5,7 +5,7 @@ import { lagrangeWeights } from "../../../src/engine/numerics/lagrange.js";
 import { pileResponse } from "../../../src/engine/piles/pile-stiffness.js";
 import { stream } from "../../../src/engine/random/stream.js";
 import { elementLnStiffness } from "../../../src/engine/simulation/element-stiffness.js";
-import { bandOf, elementStiffness, formStiffness, groundUnderPiles, scaleField, type GroundUnderPiles } from "../../../src/engine/simulation/ground-under-piles.js";
+import { elementStiffness, formStiffness, groundUnderPiles, scaleField, type GroundUnderPiles } from "../../../src/engine/simulation/ground-under-piles.js";
 import { siteField } from "../../../src/engine/simulation/site-field.js";
 import { kilopascals, metres } from "../../../src/units/quantities.js";
 import { ninePiles } from "../decision/example-problem.js";
@@ -27,7 +27,7 @@ describe("elementLnStiffness", () => {
       (depth) => kilopascals(Math.exp(0.7) * profile.modulus * profile.shape(depth)),
       { withForm: false },
     );
-    const found = elementLnStiffness(ground.forms[k], 30e6, new Float64Array(cells).fill(0.7), ground.levelBounds, undefined);
+    const found = elementLnStiffness(ground.forms[k], 30e6, new Float64Array(cells).fill(0.7), ground.levelBounds);
     expect(found).toBeCloseTo(raised.lnStiffness, 10);
   });
 
@@ -40,7 +40,7 @@ describe("elementLnStiffness", () => {
       (depth) => kilopascals(ground.profile.modulus * ground.profile.shape(depth) * Math.exp(ln(depth))),
       { withForm: false },
     );
-    const found = elementLnStiffness(ground.forms[8], 30e6, Float64Array.from({ length: cells }, (_, c) => ln(middle(c))), ground.levelBounds, undefined);
+    const found = elementLnStiffness(ground.forms[8], 30e6, Float64Array.from({ length: cells }, (_, c) => ln(middle(c))), ground.levelBounds);
     expect(Math.abs(found - other.lnStiffness)).toBeLessThan(1e-3);
     expect(Math.abs(found - ground.forms[8].lnStiffness)).toBeGreaterThan(0.03);
   });
@@ -50,7 +50,6 @@ describe("elementLnStiffness", () => {
 function realised(ground: GroundUnderPiles, grounds: number, level: number): { form: Float64Array[]; elements: Float64Array[]; fields: Float64Array[] } {
   const plan = sortedPlan(ninePiles().building.piles);
   const places = siteField(ground.terms, { plan, rings: ground.rings, levelBounds: ground.levelBounds, holes: [], readingDepths: new Float64Array(0) });
-  const band = bandOf(ground);
   const out = { form: [] as Float64Array[], elements: [] as Float64Array[], fields: [] as Float64Array[] };
   for (let k = 0; k < grounds; k++) {
     places.draw((part) => stream("form against elements", k, part));
@@ -59,7 +58,7 @@ function realised(ground: GroundUnderPiles, grounds: number, level: number): { f
     const form = new Float64Array(9 * ground.logLengths.length);
     formStiffness(ground, field, level, form);
     const elements = new Float64Array(form.length);
-    elementStiffness(ground, field, level, form, band, elements);
+    elementStiffness(ground, field, level, form, elements);
     out.fields.push(field);
     out.form.push(form);
     out.elements.push(elements);
@@ -92,7 +91,7 @@ describe.each([
   it("leaves solved lengths as they are solved", () => {
     const cells = ground.rings.length * ground.cellSd.length;
     for (const [i, k] of [[0, 0], [4, 6], [7, 15]]) {
-      const direct = elementLnStiffness(ground.forms[k], 30e6, fields[2].subarray(i * cells, (i + 1) * cells), ground.levelBounds, undefined);
+      const direct = elementLnStiffness(ground.forms[k], 30e6, fields[2].subarray(i * cells, (i + 1) * cells), ground.levelBounds);
       expect(elements[2][i * ground.logLengths.length + k]).toBeCloseTo(direct, 10);
     }
   });
@@ -106,7 +105,7 @@ describe.each([
     for (const k of [2, 5, 7, 10, 13]) {
       const { start, weights } = lagrangeWeights(solved.map((s) => ground.logLengths[s]), ground.logLengths[k]);
       for (let i = 0; i < 9; i += 2) {
-        const direct = elementLnStiffness(ground.forms[k], 30e6, fields[1].subarray(i * cells, (i + 1) * cells), ground.levelBounds, undefined);
+        const direct = elementLnStiffness(ground.forms[k], 30e6, fields[1].subarray(i * cells, (i + 1) * cells), ground.levelBounds);
         const at = (index: number): number => i * ground.logLengths.length + index;
         guided += (elements[1][at(k)] - direct) ** 2;
         plain += (weights.reduce((sum, w, q) => sum + w * elements[1][at(solved[start + q])], 0) - direct) ** 2;
