@@ -1,8 +1,8 @@
-const BRACKETS = "\\[(?:'.|'(?:[^']|'')*'|${BRACKETS}|[^\\[\\]']|\\[(?:'.|[^\\[\\]'])*\\])*\\]";
+const BRACKETS = "\\[(?:'.|[^\\[\\]']|\\[(?:'.|[^\\[\\]'])*\\])*\\]";
 const BEFORE = `(?:'(?:[^']|'')*'|(?:${BRACKETS})?[\\p{L}\\p{N}_.\\\\]*)!`;
 const NAME = "[\\p{L}_\\\\][\\p{L}\\p{N}_.\\\\?]*";
 /** A text; a function's name with what stands before it; or any other piece, which is passed over whole. */
-const PIECES = new RegExp(`("(?:[^"]|"")*(?:"|$))|(${BEFORE})?(${NAME})(?=\\s*\\()|${BEFORE}|[\\p{L}\\p{N}_.\\\\?]+`, "gu");
+const PIECES = new RegExp(`("(?:[^"]|"")*(?:"|$))|(${BEFORE})?(${NAME})(?=\\s*\\()|${BEFORE}|'(?:[^']|'')*'|${BRACKETS}|[\\p{L}\\p{N}_.\\\\?]+`, "gu");
 
 /**
  * A formula whose calls of our functions have lost their way, put right: Excel writes another workbook, the file of an add-in
