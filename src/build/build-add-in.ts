@@ -50,7 +50,7 @@ export function addInCompiler(mode: "production" | "development", form: Form, ou
     ...settings,
     mode,
     ...(output === undefined ? {} : { output: { ...settings.output, path: output } }),
-    devtool: mode === "development" ? "source-map" : false,
+    ...(mode === "development" ? { devtool: "source-map", stats: "errors-warnings", infrastructureLogging: { level: "warn" } } : { devtool: false }),
     plugins: [...(settings.plugins ?? []), page, new FormPlugin(form)],
   });
 }

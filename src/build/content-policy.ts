@@ -26,5 +26,8 @@ export function panePolicy(form: Form): string {
   ].join("; ");
 }
 
+/** A thread takes its policy from its own script's headers and from nowhere else: the guide has the server send this one with every script. */
+export const THREAD_POLICY = `default-src 'none'; script-src 'self' ${KERNELS}`;
+
 /** What a page of text may load: its own style sheet. */
 export const TEXT_POLICY = "default-src 'none'; style-src 'self'; img-src 'self'; base-uri 'none'; form-action 'none'";
