@@ -22,6 +22,9 @@ interface Call {
   message: Message | undefined;
   result: FunctionResult | undefined;
   isUsed: boolean;
+  /** by a test, which no formula gives up */
+  isAsked?: boolean;
+  answered?: (result: FunctionResult) => void;
 }
 
 /** One call as a test sees it. */
@@ -39,6 +42,7 @@ export class CustomFunctions {
   private readonly calls = new Map<string, Call>();
   private isReady = false;
   private made = 0;
+  private asked = 0;
 
   constructor(
     readonly metadata: FunctionsJson | undefined,
@@ -61,7 +65,7 @@ export class CustomFunctions {
   /** Called after the formulas are calculated: calls what is new and gives up what no formula asks for any more. */
   endPass(): void {
     for (const [key, call] of this.calls) {
-      if (call.isUsed) continue;
+      if (call.isUsed || call.isAsked === true) continue;
       this.calls.delete(key);
       if (call.result === undefined && call.message === undefined && call.isCancelable) this.send([[CATEGORY, CANCEL, "", JSON.stringify({ invocationId: call.id }), call.id]]);
     }
@@ -75,34 +79,34 @@ export class CustomFunctions {
    * @throws {UnsupportedFormula} while the function has not answered
    */
   value(id: string, given: readonly Given[], place: string, address: string): FunctionResult {
-    const entry = this.metadata?.functions.find((each) => each.id === id);
-    if (entry === undefined) throw new UnsupportedFormula(`No function ${id} is registered.`, "#NAME?", false);
+    if (this.metadata?.functions.some((each) => each.id === id) !== true) throw new UnsupportedFormula(`No function ${id} is registered.`, "#NAME?", false);
     if (given.flat(3).some((each) => each instanceof ErrorValue && each.code === BUSY)) throw busy(id);
-    const options = (entry as { options?: { cancelable?: boolean } }).options;
-    const made = prepared(entry.parameters, given, this.blanks, this.metadata?.allowErrorForDataTypeAny === true);
-    if (made instanceof ErrorValue) return { values: [[made]] };
-    if (typeof made === "string") {
-      this.troubles.push(`${id}: ${made}`);
-      return { values: [[new ErrorValue("#VALUE!")]], message: made };
-    }
-    const key = JSON.stringify([place, id, made.values]);
-    let call = this.calls.get(key);
-    if (call === undefined) {
-      const number = ++this.made;
-      const flags = (options?.cancelable === true ? CANCELABLE : 0) | (made.takesErrors ? TAKES_ERRORS : 0);
-      call = { id: number, isCancelable: options?.cancelable === true, message: [CATEGORY, INVOKE, "", JSON.stringify([number, id, made.values, address, flags]), number], result: undefined, isUsed: true };
-      this.calls.set(key, call);
-      this.seen.push({ name: id, values: made.values });
-    }
+    const call = this.callFor(id, given, place, address);
+    if (!("id" in call)) return call;
     call.isUsed = true;
     if (call.result === undefined) throw busy(id);
     return call.result;
   }
 
+  /** Calls a function without a cell, with the arguments that a formula would give. */
+  ask(id: string, given: readonly Given[]): Promise<FunctionResult> {
+    const call = this.callFor(id, given, `asked ${++this.asked}`, "");
+    if (!("id" in call)) return Promise.resolve(call);
+    call.isAsked = true;
+    return new Promise((resolve) => {
+      call.answered = resolve;
+      this.sendWaiting();
+    });
+  }
+
   /** Results of the page; one of a call that is no longer wanted is dropped. */
   receive(results: readonly RawResult[]): void {
     for (const result of results) {
-      for (const call of this.calls.values()) if (call.id === result[0]) call.result = functionResult(result);
+      for (const call of this.calls.values()) {
+        if (call.id !== result[0]) continue;
+        call.result = functionResult(result);
+        call.answered?.(call.result);
+      }
     }
     this.arrived();
   }
@@ -115,6 +119,28 @@ export class CustomFunctions {
   /** How many calls have not been answered. */
   get waiting(): number {
     return [...this.calls.values()].filter(({ result }) => result === undefined).length;
+  }
+
+  /** The call that these arguments make, an old one where it was made before; an answer where Excel does not call at all. */
+  private callFor(id: string, given: readonly Given[], place: string, address: string): Call | FunctionResult {
+    const entry = this.metadata?.functions.find((each) => each.id === id);
+    if (entry === undefined) throw new Error(`No function ${id} is registered.`);
+    const made = prepared(entry.parameters, given, this.blanks, this.metadata?.allowErrorForDataTypeAny === true);
+    if (made instanceof ErrorValue) return { values: [[made]] };
+    if (typeof made === "string") {
+      this.troubles.push(`${id}: ${made}`);
+      return { values: [[new ErrorValue("#VALUE!")]], message: made };
+    }
+    const key = JSON.stringify([place, id, made.values]);
+    const before = this.calls.get(key);
+    if (before !== undefined) return before;
+    const isCancelable = (entry as { options?: { cancelable?: boolean } }).options?.cancelable === true;
+    const number = ++this.made;
+    const flags = (isCancelable ? CANCELABLE : 0) | (made.takesErrors ? TAKES_ERRORS : 0);
+    const call: Call = { id: number, isCancelable, message: [CATEGORY, INVOKE, "", JSON.stringify([number, id, made.values, address, flags]), number], result: undefined, isUsed: false };
+    this.calls.set(key, call);
+    this.seen.push({ name: id, values: made.values });
+    return call;
   }
 
   private sendWaiting(): void {

@@ -3,7 +3,8 @@ import { Calculator } from "./calculator.js";
 import { CustomFunctions } from "./custom-functions.js";
 import { Events, type Message } from "./events.js";
 import { Faults } from "./faults.js";
-import type { Blanks } from "./function-arguments.js";
+import type { Blanks, Given } from "./function-arguments.js";
+import type { FunctionResult } from "./function-results.js";
 import { notModelled } from "./host-error.js";
 import { opened, type Opened } from "./kind.js";
 import { WorkbookModel } from "./model/workbook-model.js";
@@ -59,6 +60,17 @@ export class ExcelHost {
   /** @param isOfFunctions  the request comes from the runtime of custom functions, whose root is another */
   perform(request: WireRequest, isOfFunctions: boolean): WireReply {
     return new Request(this, request, isOfFunctions ? opened("CustomFunctionsContainer", undefined) : this.root).perform();
+  }
+
+  /**
+   * Calls a cell function as Excel would, without a cell.
+   *
+   * @param given  a range as rows of cells with null for a blank one, one cell as its value, undefined for an omitted argument
+   */
+  async ask(id: string, given: readonly Given[]): Promise<FunctionResult> {
+    const answer = this.functions.ask(id, given);
+    this.settle();
+    return answer;
   }
 
   /** Calculates what has changed and tells the page; called after a request was answered or a person did something. */

@@ -4,8 +4,14 @@ import type { SheetModel } from "./model/sheet-model.js";
 import type { TableModel } from "./model/table-model.js";
 import type { WorkbookModel } from "./model/workbook-model.js";
 
+/** The classes of titles, axes, legends and what belongs to them. */
+export type ChartPartName =
+  | "ChartAreaFormat" | "ChartAxes" | "ChartAxis" | "ChartAxisFormat" | "ChartAxisTitle" | "ChartAxisTitleFormat" | "ChartBorder" | "ChartFill" | "ChartFont"
+  | "ChartGridlines" | "ChartGridlinesFormat" | "ChartLegend" | "ChartLegendEntry" | "ChartLegendEntryCollection" | "ChartLegendFormat" | "ChartLineFormat"
+  | "ChartPlotArea" | "ChartPlotAreaFormat" | "ChartSeriesFormat" | "ChartTitle" | "ChartTitleFormat";
+
 /** What an object of each class stands for. */
-export interface Targets {
+export interface Targets extends Record<ChartPartName, ChartPart> {
   AddinInternalService: undefined;
   CustomFunctions: undefined;
   CustomFunctionsContainer: undefined;
@@ -34,8 +40,7 @@ export interface Targets {
   ChartCollection: SheetModel;
   Chart: ChartModel;
   ChartSeriesCollection: ChartModel;
-  ChartSeries: SeriesModel & { readonly chart: ChartModel };
-  ChartPart: ChartPart;
+  ChartSeries: { readonly chart: ChartModel; readonly series: SeriesModel };
 }
 
 export type KindName = keyof Targets;

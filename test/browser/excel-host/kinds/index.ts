@@ -1,7 +1,8 @@
 import type { Kind, Opened } from "../kind.js";
 import type { KindName, Targets } from "../targets.js";
 import { addInServiceKind } from "./add-in-service-kind.js";
-import { chartKinds } from "./chart-kinds.js";
+import { chartKind, chartsKind, seriesCollectionKind, seriesKind } from "./chart-kinds.js";
+import { chartPartKinds } from "./chart-part-kinds.js";
 import { customFunctionsKinds } from "./custom-functions-kinds.js";
 import { dataValidationKind } from "./data-validation-kind.js";
 import { nameKind, namesKind } from "./name-kinds.js";
@@ -13,10 +14,14 @@ import { applicationKind, rangeAreasKind, rangeCollectionKind, workbookKind, wor
 import { worksheetKind, worksheetsKind } from "./worksheet-kinds.js";
 
 const KINDS: { readonly [K in KindName]: Kind<Targets[K]> } = {
-  ...chartKinds,
+  ...chartPartKinds,
   ...customFunctionsKinds,
   AddinInternalService: addInServiceKind,
   Application: applicationKind,
+  Chart: chartKind,
+  ChartCollection: chartsKind,
+  ChartSeries: seriesKind,
+  ChartSeriesCollection: seriesCollectionKind,
   DataValidation: dataValidationKind,
   FormatProtection: formatProtectionKind,
   NamedItem: nameKind,
