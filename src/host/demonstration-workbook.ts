@@ -1,6 +1,6 @@
 import { CATALOGUE } from "../inputs/index.js";
 import { siteSheet } from "./site-sheet.js";
-import type { NumberLook, PlannedCell, SheetPlan } from "./workbook.js";
+import type { NumberLook, PlannedCell, PlannedChart, SheetPlan } from "./workbook.js";
 
 /** Largest number of holes that the demonstration prices. */
 export const LARGEST_COUNT = 12;
@@ -81,7 +81,21 @@ function counts(): SheetPlan {
     ...line(last + 2, [text("The same in one formula, with standard error and the chance of being the cheapest", "section"), ...Array.from({ length: 8 }, () => text("", "section"))]),
     ...line(last + 3, [formula(`=PROBE.COSTTABLE(Site,${LARGEST_COUNT})`, "numberhead")]),
   );
-  return { name: "Counts", cells, names: [{ name: "CostByCount", range: `A${first}:F${last + 1}` }, { name: "Cheapest", range: "C2" }], columnWidths: [130, 150, 140, 120, 120, 120, 170, 190, 120] };
+  const column = (letter: string): string => `${letter}${first + 1}:${letter}${last + 1}`;
+  const chart: PlannedChart = {
+    title: "Expected cost by number of holes",
+    words: "Expected cost against the number of holes: foundation, failure, delay and investigation stacked, the total as a line.",
+    place: "H1:N18",
+    categories: column("A"),
+    categoryTitle: "Number of holes",
+    valueTitle: "Expected cost",
+    valueLook: "money",
+    series: [
+      ...([["Foundation", "C"], ["Failure", "D"], ["Delay", "E"], ["Investigation", "B"]] as const).map(([name, letter]) => ({ kind: "part" as const, name, values: column(letter) })),
+      { kind: "line", name: "Total", values: column("F") },
+    ],
+  };
+  return { name: "Counts", frozenRows: first, charts: [chart], cells, names: [{ name: "CostByCount", range: `A${first}:F${last + 1}` }, { name: "Cheapest", range: "C2" }], columnWidths: [130, 150, 140, 120, 120, 120, 170, 190, 120] };
 }
 
 function sensitivity(): SheetPlan {
@@ -99,7 +113,7 @@ function sensitivity(): SheetPlan {
   }
   const row = first + LARGEST_COUNT + 2;
   cells.push(...line(row, [text("Cheapest"), ...covs.map((_, k) => formula(`=PROBE.OPTIMALCOUNT(Site,${LARGEST_COUNT},"Stiffness COV",${letters[k]}$${first})`, "result"))]));
-  return { name: "Sensitivity", cells, columnWidths: [120, 110, 110, 110, 110, 110, 110] };
+  return { name: "Sensitivity", frozenRows: first, cells, columnWidths: [120, 110, 110, 110, 110, 110, 110] };
 }
 
 function check(): SheetPlan {
@@ -109,6 +123,7 @@ function check(): SheetPlan {
   ).flat();
   return {
     name: "Check",
+    frozenRows: 3,
     cells: [...line(0, [text("Every input as it is read", "title")]), ...line(2, [formula("=PROBE.CHECK(Site)", "head")]), ...looks.slice(1)],
     columnWidths: [190, 160, 90, 620],
   };

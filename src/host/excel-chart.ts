@@ -4,9 +4,9 @@ import type { PlannedChart, PlannedSeries } from "./workbook.js";
 
 const INK = "#1F2A30";
 const GRID = "#E3E6E8";
-/** Shades of the parts from below; dark against light beside each other, so that a printer without colours keeps them apart. */
-const PARTS = ["#0B4A53", "#8CC5BF", "#C7631F", "#F2C879", "#5C6670", "#B9C2C9"];
-const LINES = ["#0B4A53", "#C7631F", "#5C6670", "#8CC5BF", "#7A3E9D", "#B08A00", "#2F7D32", "#A6324A"];
+/** Shades of the parts from below, those of the pane; they differ in lightness, so that a printer without colours keeps them apart. */
+const PARTS = ["#C9C0AC", "#B5472F", "#E2A33B", "#0B6F7C", "#7D7767", "#79C7CF"];
+const LINES = ["#0B6F7C", "#B5472F", "#7D7767", "#E2A33B"];
 
 /** Draws a plan's chart as Excel's own chart, whose cells may be changed by hand afterwards. */
 export function addChart(sheet: Excel.Worksheet, plan: PlannedChart, number: number): void {

@@ -43,7 +43,7 @@ async function writeBlocks(context: Excel.RequestContext, sheet: Excel.Worksheet
 
 function layPage(sheet: Excel.Worksheet, plan: SheetPlan): void {
   const { pageLayout } = sheet;
-  pageLayout.orientation = "Landscape";
+  pageLayout.orientation = plan.standing === true ? "Portrait" : "Landscape";
   pageLayout.zoom = { horizontalFitToPages: 1, verticalFitToPages: 1 };
   pageLayout.centerHorizontally = true;
   pageLayout.setPrintArea(plan.printed ?? areaAddress(everything(plan)));

@@ -1,7 +1,9 @@
 import type { SimulationTable } from "../engine/index.js";
+import { areaAddress, columnLetters } from "./addresses.js";
+import { costPicture, lengthPicture } from "./simulation-pictures.js";
 import { simulationLengthTable, simulationTable, stampTable, type SimulationStamp } from "../results/index.js";
 import type { ResultColumn, ResultTable } from "../results/result-table.js";
-import type { UnitSystem } from "../units/result-units.js";
+import { resultUnit, type UnitSystem } from "../units/result-units.js";
 import type { NumberLook, PlannedCell, SheetPlan } from "./workbook.js";
 
 /** A simulation as it is written into a sheet. */
@@ -16,7 +18,7 @@ export interface SimulationContent {
 }
 
 /**
- * All figures of a simulation on one new sheet: stamp, costs and lengths, with what belongs under each.
+ * All figures of a simulation on one new sheet: stamp, costs and lengths, with what belongs under each, and their pictures.
  *
  * @param content  the simulation
  */
@@ -32,13 +34,34 @@ export function simulationSheet({ table, stamp, units, money, warnings }: Simula
   row++;
   const first = row;
   row = addTable(cells, costs, row);
-  const names = [{ name: "SimulatedCosts", range: `A${first + 1}:${letters(costs.columns.length - 1)}${row}` }];
+  const names = [{ name: "SimulatedCosts", range: `A${first + 1}:${columnLetters(costs.columns.length - 1)}${row}` }];
   row = addNotes(cells, [...costs.notes, ...stampTable(stamp).notes], row);
+  const columnWidths = costs.columns.map((column) => Math.max(90, Math.round(LETTER * headOf(column).length) + 14));
+  const pictures = row;
+  row += PICTURE_ROWS + 3;
   const lengths = simulationLengthTable(table, units);
   cells.push({ row: row++, column: 0, value: lengths.title, style: "section" });
-  row = addTable(cells, lengths, row);
-  addNotes(cells, lengths.notes, row);
-  return { name: "Simulation", cells, names, columnWidths: costs.columns.map((column) => Math.max(90, Math.round(LETTER * headOf(column).length) + 14)) };
+  const percentiles = row + 1;
+  row = addNotes(cells, lengths.notes, addTable(cells, lengths, row));
+  const own = table.rows.filter(({ variant }) => variant === table.rows[table.cheapest]!.variant);
+  const middle = columnsOver(columnWidths, 0, PICTURE_WIDTH);
+  const picture = costPicture(own, { row, column: 0 }, areaAddress({ top: pictures, bottom: pictures + PICTURE_ROWS - 1, left: 0, right: middle - 1 }), money);
+  const column = (k: number): string => areaAddress({ top: percentiles, bottom: percentiles + lengths.rows.length - 1, left: k, right: k });
+  const right = columnsOver(columnWidths, middle + 1, PICTURE_WIDTH);
+  const lengthChart = lengthPicture(own, (each) => column(1 + table.rows.indexOf(each)), column(0), areaAddress({ top: pictures, bottom: pictures + PICTURE_ROWS - 1, left: middle + 1, right: right - 1 }), resultUnit("length", units));
+  cells.push(...picture.cells, ...[picture.chart, lengthChart].map(({ words }, k): PlannedCell => ({ row: pictures + PICTURE_ROWS + k, column: 0, value: words, style: "note" })));
+  return { name: "Simulation", cells, names, columnWidths, charts: [picture.chart, lengthChart] };
+}
+
+/** Rows of a picture, and the pixels that its columns make up at least. */
+const PICTURE_ROWS = 19;
+const PICTURE_WIDTH = 600;
+
+/** The column after those that make up a width. */
+function columnsOver(widths: readonly number[], from: number, pixels: number): number {
+  let [column, sum] = [from, 0];
+  while (sum < pixels) sum += widths[column++] ?? 64; // the usual width of a column
+  return column;
 }
 
 /** Pixels of a bold letter of a head. */
@@ -75,8 +98,4 @@ function lookOf({ unit }: ResultColumn): NumberLook | undefined {
   if (unit === "m" || unit === "ft") return "metres";
   if (unit === "piles" || unit === "times") return "ratio";
   return unit === "holes" || unit === "%" ? undefined : "money";
-}
-
-function letters(column: number): string {
-  return column < 26 ? String.fromCharCode(65 + column) : `${letters(Math.floor(column / 26) - 1)}${letters(column % 26)}`;
 }

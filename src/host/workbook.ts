@@ -129,8 +129,9 @@ export interface SheetPlan {
   /** rows at the top that stay in view */
   readonly frozenRows?: number;
   readonly charts?: readonly PlannedChart[];
-  /** the sheet is made to be printed on one page, lying */
+  /** the sheet is made to be printed on one page: lying, or standing where it is high rather than wide */
   readonly onePage?: boolean;
+  readonly standing?: boolean;
   /** the cells that are printed; absent: all that the plan fills and draws */
   readonly printed?: string;
 }

@@ -1,4 +1,6 @@
 import { lengthPercentiles, type SimulationRow } from "../../engine/index.js";
+import { areaAddress } from "../../host/addresses.js";
+import { costPicture } from "../../host/simulation-pictures.js";
 import type { PlannedCell, SheetPlan } from "../../host/workbook.js";
 import { IS, IS_NOT, SMALL_SUMS } from "../../results/cautions.js";
 import { resultIn, resultUnit } from "../../units/result-units.js";
@@ -10,13 +12,15 @@ import { stampTable } from "../../results/index.js";
 import type { SimulationReport } from "./simulation-report.js";
 
 const COLUMNS = 9;
+/** Rows that the picture covers. */
+const PICTURE_ROWS = 17;
 /** Characters that fit across the printed page. */
 const LINE = 116;
 const MIDDLE = lengthPercentiles.indexOf(50);
 
 /**
- * One printable page for the client: the answer in a paragraph, the table, what the figures are not, and the stamp. The name
- * CostByCount stands over the cells that the picture draws.
+ * One printable page for the client: the answer in a paragraph, the picture, the table, what the figures are not, and the stamp. The name
+ * CostByCount stands over the table's costs; the numbers of the picture stand right of the page.
  *
  * @param report   the run
  * @param variant  index of the way that is recommended
@@ -36,6 +40,10 @@ export function briefSheet(report: SimulationReport, variant: number, client: nu
   }
   paragraph(briefInWords(report, variant, client, writer), "label");
   row++;
+  const picture = costPicture(rows, { row: 0, column: COLUMNS + 1 }, areaAddress({ top: row, left: 0, bottom: row + PICTURE_ROWS - 1, right: COLUMNS - 1 }), shorten(run.money, 12));
+  row += PICTURE_ROWS;
+  paragraph(picture.chart.words, "note");
+  row++;
   const head = row++;
   const length = resultUnit("length", run.units);
   const inMoney = run.money === "" ? "" : ` (${shorten(run.money, 12)})`;
@@ -52,10 +60,13 @@ export function briefSheet(report: SimulationReport, variant: number, client: nu
   paragraph(`${[...stampTable(report.stamp).rows, ["Inputs read from", run.place]].map(([label, value]) => `${String(label)}: ${String(value)}`).join("; ")}.`, "note");
   return {
     name: "Client brief",
-    cells,
+    cells: [...cells, ...picture.cells],
     names: [{ name: "CostByCount", range: data }],
     columnWidths: [60, 112, 98, 84, 76, 112, 104, 136, 118],
+    charts: [picture.chart],
     onePage: true,
+    standing: true,
+    printed: areaAddress({ top: 0, left: 0, bottom: row - 1, right: COLUMNS - 1 }),
   };
 }
 
