@@ -4,7 +4,8 @@ import { lnDesignValues, outerNodes, type DesignLaw } from "./design-law.js";
 import { interactionOf, type Interaction } from "./group-interaction.js";
 import type { HoleCovariance } from "./hole-covariance.js";
 import { nodeMoments } from "./node-moments.js";
-import { chanceTooSoft, expectedLnStiffness, lengthLaws, placeOfGain, placeOfLength, trialLength, type LengthLaws, type TrialLength } from "./needed-length.js";
+import { lengthenedPlaces, type LengthenedPlace } from "./lengthened-place.js";
+import { chanceTooSoft, expectedLnStiffness, lengthLaws, placeOfLength, trialLength, type LengthLaws, type TrialLength } from "./needed-length.js";
 import { distortionDraws, type FoundSurprises } from "./node-draws.js";
 import { designLengths, softestAllowable } from "./design-lengths.js";
 import type { Plan } from "./plan.js";
@@ -50,6 +51,7 @@ export function drawnOutcome(problem: Problem, model: SiteModel, holes: HoleCova
   const needed = Float64Array.from(plan.piles, (p) => Math.log(p.load / problem.building.allowableSettlement));
   const laws = lengthLaws(model);
   const interaction = rememberedInteraction(problem, model, laws);
+  const lengthened = finds && interaction !== undefined ? lengthenedPlaces(model, holes, laws, problem.piles.longest, needed) : undefined;
   const out = {
     metres: new Float64Array(count), surprises: new Float64Array(count), extensions: new Float64Array(count),
     distortion: new Float64Array(count * drawsPerNode),
@@ -66,7 +68,7 @@ export function drawnOutcome(problem: Problem, model: SiteModel, holes: HoleCova
     out.metres[node] = metres;
     out.surprises[node] = surprises;
     out.extensions[node] = extension;
-    draw(moments, draws.subarray(node * width, (node + 1) * width), finds ? foundSurprises(problem, moments.lengths, laws, needed) : undefined, interaction);
+    draw(moments, draws.subarray(node * width, (node + 1) * width), finds ? foundSurprises(problem, lengths, laws, needed, lengthened?.(normals, lengths)) : undefined, interaction);
     out.distortion.set(distortion, node * drawsPerNode);
     if (!finds) continue;
     out.foundDistortion.set(foundDistortion, node * drawsPerNode);
@@ -120,7 +122,7 @@ function surprisesAt(
   return { surprises, extension };
 }
 
-function foundSurprises(problem: Problem, lengths: Float64Array, laws: LengthLaws, needed: Float64Array): FoundSurprises {
+function foundSurprises(problem: Problem, lengths: Float64Array, laws: LengthLaws, needed: Float64Array, builtPlace: LengthenedPlace | undefined): FoundSurprises {
   const n = lengths.length;
   const { longest } = problem.piles;
   const gain = (i: number, length: number): number => expectedLnStiffness(laws, length) - expectedLnStiffness(laws, lengths[i]);
@@ -132,6 +134,6 @@ function foundSurprises(problem: Problem, lengths: Float64Array, laws: LengthLaw
     }),
     toLongest: Float64Array.from({ length: n }, (_, i) => gain(i, longest)),
     designPlace: (i) => placeOfLength(laws, lengths[i]),
-    builtPlace: (i, lnStiffness) => placeOfGain(laws, lengths[i], Math.min(needed[i] - lnStiffness, gain(i, longest))),
+    builtPlace: builtPlace ?? ((i) => placeOfLength(laws, lengths[i])),
   };
 }

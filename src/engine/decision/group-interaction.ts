@@ -54,7 +54,7 @@ export function interactionOf({ ground, piles }: Problem, plan: Plan, logLengths
   const average = (length: number): number => nodes.reduce((sum, node, q) => sum + weights[q] * shear(length * node), 0);
   const pileOf = (length: number): InteractingPile => {
     const tipShearModulus = shear(length * aboveTip);
-    // A tip held by a thin stiff layer would put the reach of the shaft inside the pile; then it reaches no neighbour.
+    // A tip held by a thin stiff layer would put the reach of the shaft inside the pile.
     const least = (2 * radius) / (2.5 * (1 - poisson) * length);
     return { length, radius, tipShearModulus, averageRatio: Math.max(average(length) / tipShearModulus, least), poisson, pileModulus: piles.modulus };
   };

@@ -72,22 +72,6 @@ export function expectedLnStiffness(laws: LengthLaws, length: number): number {
   return (1 - t) * laws.base[at] + t * laws.base[at + 1];
 }
 
-/**
- * Length at which a pile is stiffer than at a given one by a wanted amount, by expectation.
- *
- * @param length  m
- * @param gain    of ln stiffness, above 0
- * @returns       place among the laws' lengths, 0 for the first; that of the last where none is stiff enough
- */
-export function placeOfGain(laws: LengthLaws, length: number, gain: number): number {
-  const wanted = expectedLnStiffness(laws, length) + gain;
-  const from = place(laws, length);
-  let k = from.at;
-  while (k < steps - 2 && laws.base[k + 1] < wanted) k++;
-  const rise = laws.base[k + 1] - laws.base[k];
-  return Math.max(from.at + from.t, rise > 0 ? k + clamp((wanted - laws.base[k]) / rise, 0, 1) : k + 1);
-}
-
 /** Place of a length among the laws' lengths, 0 for the first. */
 export function placeOfLength(laws: LengthLaws, length: number): number {
   const { at, t } = place(laws, length);
