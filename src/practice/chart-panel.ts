@@ -1,41 +1,48 @@
 import type { FUniver } from "@univerjs/core/facade";
-import type { RangeText, Workbook } from "../host/workbook.js";
-import { drawCostChart } from "./cost-chart.js";
-
-/** The names of cells that the chart draws: the demonstration workbook defines the first, each client brief one more. */
-const CELLS = /^CostByCount\d*$/i;
+import { button, chartValues, drawChart } from "./drawn-chart.js";
+import type { PracticeWorkbook, SheetChart } from "./practice-workbook.js";
 
 /**
- * Shows the chart while the sheet of its cells is in front, or always or never once the person has used the button.
+ * Shows the pictures of the sheet in front below the grid, one at a time; or always or never once the person has used the button.
  *
  * @returns  reads the cells again and redraws
  */
-export function chartPanel(grid: FUniver, workbook: Workbook, figure: HTMLElement, button: HTMLButtonElement): () => Promise<void> {
+export function chartPanel(grid: FUniver, workbook: PracticeWorkbook, figure: HTMLElement, toggle: HTMLButtonElement): () => void {
   let chosen: boolean | undefined;
-  let drawing = 0;
-  const refresh = async () => {
-    const turn = ++drawing;
-    const all = await cellsToDraw(workbook);
-    if (turn !== drawing) return;
-    const front = grid.getActiveWorkbook()?.getActiveSheet().getSheetName();
-    const here = all.find(({ sheet }) => sheet === front);
-    const cells = here ?? all[0];
-    const shown = chosen ?? here !== undefined;
-    button.setAttribute("aria-pressed", String(shown));
+  let turned = 0;
+  const refresh = (): void => {
+    const here = workbook.chartsInFront();
+    const charts = here.length > 0 ? here : workbook.charts();
+    const shown = chosen ?? here.length > 0;
+    toggle.setAttribute("aria-pressed", String(shown));
     figure.hidden = !shown;
-    if (shown) drawCostChart(figure, cells);
+    if (shown) draw(charts);
   };
-  button.addEventListener("click", () => {
+  const draw = (charts: readonly SheetChart[]): void => {
+    const number = turned % Math.max(1, charts.length);
+    const one = charts[number];
+    if (one === undefined) {
+      const words = document.createElement("figcaption");
+      words.textContent = "No sheet of this workbook has a picture. The cost tables and the client brief bring theirs.";
+      figure.replaceChildren(words);
+      return;
+    }
+    const next = (): void => {
+      turned = number + 1;
+      refresh();
+      figure.querySelector("button")?.focus();
+    };
+    const other = charts.length > 1 ? button(`Next picture (${number + 1} of ${charts.length} shown)`, next) : undefined;
+    drawChart(figure, one.chart, chartValues(one.chart, one.column), one.sheet, other);
+  };
+  toggle.addEventListener("click", () => {
     chosen = figure.hidden !== false;
-    void refresh();
+    refresh();
   });
-  grid.addEvent(grid.Event.ActiveSheetChanged, () => void refresh());
-  addEventListener("resize", () => void refresh());
+  grid.addEvent(grid.Event.ActiveSheetChanged, () => {
+    turned = 0;
+    refresh();
+  });
+  addEventListener("resize", refresh);
   return refresh;
-}
-
-async function cellsToDraw(workbook: Workbook): Promise<RangeText[]> {
-  const names = (await workbook.names()).filter((name) => CELLS.test(name));
-  const ranges = await Promise.all(names.map((name) => workbook.readName(name)));
-  return ranges.filter((range) => range !== undefined);
 }

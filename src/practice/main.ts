@@ -26,19 +26,20 @@ async function start(): Promise<void> {
   closeStaleSuggestions();
   const reasons = new CellReasons();
   const theme = themeSwitch(element("theme-toggle"), (chosen) => grid.toggleDarkMode(chosen === "dark"));
+  const plans = demonstrationWorkbook();
   const grid = startGrid({
     container: element("grid"),
-    workbook: workbookData("demonstration", demonstrationWorkbook()),
+    workbook: workbookData("demonstration", plans),
     descriptions: functionDescriptions(metadata.functions),
     reasons,
     dark: theme === "dark",
   });
-  const workbook = new PracticeWorkbook(grid);
+  const workbook = new PracticeWorkbook(grid, plans);
   const refreshCell = cellLine(grid, reasons, element("cell"));
   const refreshChart = chartPanel(grid, workbook, element("chart"), element("chart-toggle"));
   workbook.onChanged(() => {
     refreshCell();
-    void refreshChart();
+    refreshChart();
     document.body.dataset["state"] = "ready";
   });
   paneDock(element("pane"), element("pane-edge"), element("pane-toggle"));

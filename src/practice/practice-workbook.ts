@@ -2,16 +2,55 @@ import { CellValueType, type ICellData, type IRange } from "@univerjs/core";
 import type { FUniver } from "@univerjs/core/facade";
 import { deserializeRangeWithSheet, serializeRange } from "@univerjs/engine-formula";
 import type { FWorkbook, FWorksheet } from "@univerjs/sheets/facade";
-import type { CellValue, InsertedSheet, RangeText, SheetPlan, Workbook } from "../host/workbook.js";
+import { areaOf } from "../host/addresses.js";
+import { freeDefinedName, freeSheetName } from "../host/free-name.js";
+import type { CellValue, InsertedSheet, PlannedChart, RangeText, SheetPlan, Workbook } from "../host/workbook.js";
+import { WorkbookRefusal } from "../host/workbook-refusal.js";
 import { Calculation } from "./calculation.js";
 import { reference, sheetData } from "./grid-data.js";
+
+/** A chart of a sheet with its cells within reach. */
+export interface SheetChart {
+  readonly chart: PlannedChart;
+  readonly sheet: string;
+  /** the values of a column of its cells as they are now */
+  readonly column: (range: string) => CellValue[];
+}
 
 /** The practice page's grid as the workbook that the pane knows. */
 export class PracticeWorkbook implements Workbook {
   private readonly calculation: Calculation;
+  /** by the grid's own key of the sheet, which a new name does not change */
+  private readonly planned: Map<string, readonly PlannedChart[]>;
 
-  constructor(private readonly grid: FUniver) {
+  /**
+   * @param grid   with its workbook open
+   * @param plans  of the sheets that stand in it, in order
+   */
+  constructor(
+    private readonly grid: FUniver,
+    plans: readonly SheetPlan[],
+  ) {
     this.calculation = new Calculation(grid);
+    const sheets = this.book.getSheets();
+    this.planned = new Map(plans.map(({ charts }, k) => [sheets[k]!.getSheetId(), charts ?? []]));
+  }
+
+  /** The grid has no charts of its own: whoever shows the sheets asks for those of the plans. */
+  charts(): SheetChart[] {
+    return this.book.getSheets().flatMap((sheet) => this.chartsOf(sheet));
+  }
+
+  chartsInFront(): SheetChart[] {
+    return this.chartsOf(this.book.getActiveSheet());
+  }
+
+  private chartsOf(sheet: FWorksheet): SheetChart[] {
+    const column = (range: string): CellValue[] => {
+      const { top, left, bottom } = areaOf(range);
+      return sheet.getRange(top, left, bottom - top + 1, 1).getCellDatas().map(([cell]) => valueOf(cell ?? undefined));
+    };
+    return (this.planned.get(sheet.getSheetId()) ?? []).map((chart) => ({ chart, sheet: sheet.getSheetName(), column }));
   }
 
   async readName(name: string): Promise<RangeText | undefined> {
@@ -33,14 +72,14 @@ export class PracticeWorkbook implements Workbook {
   }
 
   async insertSheet(plan: SheetPlan): Promise<InsertedSheet> {
-    const sheets = new Set(this.book.getSheets().map((sheet) => sheet.getSheetName().toLowerCase()));
-    const taken = new Set(this.book.getDefinedNames().map((name) => name.getName().toLowerCase()));
-    const sheet = free(plan.name, sheets, (n) => `${plan.name} (${n})`);
+    const taken = this.book.getDefinedNames().map((name) => name.getName());
+    const sheet = freeSheetName(plan.name, this.book.getSheets().map((each) => each.getSheetName()));
     const { id: _fresh, ...data } = sheetData("", { ...plan, name: sheet });
-    this.book.insertSheet(sheet, { index: this.book.getNumSheets(), sheet: data });
+    const made = this.book.insertSheet(sheet, { index: this.book.getNumSheets(), sheet: data });
+    this.planned.set(made.getSheetId(), plan.charts ?? []);
     const names = (plan.names ?? []).map(({ name, range }) => {
-      const given = free(name, taken, (n) => `${name}${n}`);
-      taken.add(given.toLowerCase());
+      const given = freeDefinedName(name, taken);
+      taken.push(given);
       this.book.insertDefinedName(given, reference(sheet, range));
       return given;
     });
@@ -53,7 +92,7 @@ export class PracticeWorkbook implements Workbook {
 
   private get book(): FWorkbook {
     const book = this.grid.getActiveWorkbook();
-    if (book === null) throw new Error("The practice page has no workbook open.");
+    if (book === null) throw new WorkbookRefusal("closed", "The practice page has no workbook open. Load the page again.");
     return book;
   }
 
@@ -85,10 +124,4 @@ function valueOf(cell: ICellData | undefined): CellValue {
   const value = cell?.v;
   if (value === null || value === undefined) return "";
   return cell?.t === CellValueType.BOOLEAN ? Boolean(Number(value)) : value;
-}
-
-function free(name: string, taken: ReadonlySet<string>, next: (n: number) => string): string {
-  let candidate = name;
-  for (let n = 2; taken.has(candidate.toLowerCase()); n++) candidate = next(n);
-  return candidate;
 }

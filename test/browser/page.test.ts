@@ -101,7 +101,7 @@ describe("the page", () => {
     await picture.waitFor();
     expect(await picture.getAttribute("aria-label")).toContain((await page.read("C2")).value);
     const total = (await page.read("F6")).value;
-    const drawn = () => page.page.evaluate((words) => document.querySelector("#chart svg[role=img]")?.textContent?.includes(words), `1 holes: ${total}`);
+    const drawn = () => page.page.evaluate((words) => document.querySelector("#chart svg[role=img]")?.textContent?.includes(words), `Total, 1: ${total}`);
     expect(await drawn()).toBe(true);
     await page.type("A6", "13");
     expect((await page.read("F6")).value).not.toBe(total);
