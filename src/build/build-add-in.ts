@@ -6,9 +6,8 @@ import configuration from "../../webpack.config.js";
 import { PRODUCT_VERSION } from "../results/version.js";
 import { panePolicy } from "./content-policy.js";
 import type { Form } from "./form.js";
-import { helpPage } from "./help-page.js";
 import { manifestFor } from "./manifest.js";
-import { functionsMetadata } from "./metadata.js";
+import { textFiles } from "./text-files.js";
 
 const at = (path: string): string => fileURLToPath(new URL(`../../${path}`, import.meta.url));
 
@@ -20,9 +19,7 @@ class FormPlugin {
     compiler.hooks.thisCompilation.tap("form", (compilation) => {
       compilation.hooks.processAssets.tapPromise({ name: "form", stage: webpack.Compilation.PROCESS_ASSETS_STAGE_ADDITIONAL }, async () => {
         const emit = (name: string, text: string): void => compilation.emitAsset(name, new webpack.sources.RawSource(text));
-        const json = await functionsMetadata(`${this.form.base}help.html`);
-        emit("functions.json", `${JSON.stringify(json, null, 2)}\n`);
-        emit("help.html", helpPage(json));
+        for (const [name, text] of await textFiles(this.form)) emit(name, text);
         emit("manifest.xml", manifestFor(await readFile(at("manifest.xml"), "utf8"), this.form));
       });
     });

@@ -30,4 +30,4 @@ export function panePolicy(form: Form): string {
 export const THREAD_POLICY = `default-src 'none'; script-src 'self' ${KERNELS}`;
 
 /** What a page of text may load: its own style sheet. */
-export const TEXT_POLICY = "default-src 'none'; style-src 'self'; img-src 'self'; base-uri 'none'; form-action 'none'";
+export const TEXT_POLICY = "default-src 'none'; style-src 'self'; img-src data:; base-uri 'none'; form-action 'none'";

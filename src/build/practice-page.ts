@@ -3,13 +3,13 @@ import { copyFile, mkdir, readdir, writeFile } from "node:fs/promises";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { DEVELOPMENT, type Form } from "./form.js";
-import { functionsMetadata } from "./metadata.js";
+import { textFiles } from "./text-files.js";
 
 const source = fileURLToPath(new URL("../", import.meta.url));
 
 /**
- * Bundles the practice page with its grid: one module, its rarely needed parts as files of their own, the worker, styles
- * and the functions' metadata.
+ * Bundles the practice page with its grid: one module, its rarely needed parts as files of their own, the worker, styles,
+ * the functions' metadata and the help.
  *
  * @param output  folder to write into; made if absent
  * @param form    whose help the functions' descriptions name
@@ -32,7 +32,7 @@ export async function buildPractice(output: string, form: Form = DEVELOPMENT): P
     build({ ...settings, splitting: true, entryPoints: { main: join(source, "practice/main.ts") } }),
     build({ ...settings, entryPoints: await workers() }),
     copyFile(join(source, "practice/index.html"), join(output, "index.html")),
-    writeFile(join(output, "functions.json"), JSON.stringify(await functionsMetadata(`${form.base}help.html`))),
+    ...[...(await textFiles(form, "PROBE"))].map(([name, text]) => writeFile(join(output, name), text)),
   ]);
 }
 

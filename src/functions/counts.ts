@@ -10,6 +10,7 @@ import { siteFrom } from "./site-argument.js";
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param largest_count Largest number of holes to consider.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Least expected cost among the choices: Raiffa & Schlaifer (1961), Applied Statistical Decision Theory; costs as TOTALCOST.
  */
 export function optimalCount(site: any[][], largest_count: any, pairs?: any[]): number {
   return answer(() => {
@@ -25,6 +26,7 @@ export function optimalCount(site: any[][], largest_count: any, pairs?: any[]): 
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param [counts_or_largest] One number N for 0 to N holes, or a range of counts; left out: the counts of the site block.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Costs as TOTALCOST; their standard error and the chance to be cheapest from scrambled Sobol draws, Joe & Kuo (2008), SIAM J. Sci. Comput. 30(5), and Owen (1995).
  */
 export function costsByCount(site: any[][], counts_or_largest?: any[][], pairs?: any[]): any[][] {
   return answer(() => {

@@ -14,6 +14,7 @@ import { siteFrom } from "./site-argument.js";
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param count Number of holes, 0 or more.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Sum of the four parts, each with its own source on this page; the ground is a lognormal random field, Vanmarcke (1983), Random Fields: Analysis and Synthesis.
  */
 export function totalCost(site: any[][], count: any, pairs?: any[]): number {
   return answer(() => assessed(site, count, pairs).total);
@@ -25,6 +26,7 @@ export function totalCost(site: any[][], count: any, pairs?: any[]): number {
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param count Number of holes, 0 or more.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Your own prices times numbers of holes, metres, readings and days; no published method.
  */
 export function investigationCost(site: any[][], count: any, pairs?: any[]): number {
   return answer(() => {
@@ -39,6 +41,7 @@ export function investigationCost(site: any[][], count: any, pairs?: any[]): num
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param count Number of holes, 0 or more.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Design length by Randolph & Wroth (1978), Analysis of deformation of vertically loaded piles, ASCE J. Geotech. Engng Div. 104 (GT12); design value by averages of a lognormal field, Vanmarcke (1983), Random Fields: Analysis and Synthesis, and Fenton (1960), IRE Trans. CS-8.
  */
 export function foundationCost(site: any[][], count: any, pairs?: any[]): number {
   return answer(() => assessed(site, count, pairs).foundation);
@@ -50,6 +53,7 @@ export function foundationCost(site: any[][], count: any, pairs?: any[]): number
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param count Number of holes, 0 or more.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Settlements by axisymmetric finite elements, Zienkiewicz & Taylor, The Finite Element Method, carried to second order in the log stiffness (the expansion is our own; lemma of Stein 1981, Ann. Statist. 9); neighbouring piles by Gabriel & Sokal (1969); damage by Skempton & MacDonald (1956), The allowable settlements of buildings, Proc. ICE (limits from memory), unless the site block has its own damage list.
  */
 export function failureCost(site: any[][], count: any, pairs?: any[]): number {
   return answer(() => assessed(site, count, pairs).failure);
@@ -61,6 +65,7 @@ export function failureCost(site: any[][], count: any, pairs?: any[]): number {
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param count Number of holes, 0 or more.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Length that each pile would have needed by axisymmetric finite elements, Zienkiewicz & Taylor, The Finite Element Method, carried to second order in the log stiffness (the expansion is our own; lemma of Stein 1981, Ann. Statist. 9), against the design length by Randolph & Wroth (1978); days and prices are yours.
  */
 export function delayCost(site: any[][], count: any, pairs?: any[]): number {
   return answer(() => assessed(site, count, pairs).delay);
@@ -72,6 +77,7 @@ export function delayCost(site: any[][], count: any, pairs?: any[]): number {
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param count Number of holes, 0 or more.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source As FAILURECOST: settlements by axisymmetric finite elements, Zienkiewicz & Taylor, The Finite Element Method, carried to second order in the log stiffness (the expansion is our own; lemma of Stein 1981, Ann. Statist. 9); damage by Skempton & MacDonald (1956), The allowable settlements of buildings, Proc. ICE (limits from memory), unless the site block has its own damage list.
  */
 export function failureChance(site: any[][], count: any, pairs?: any[]): number {
   return answer(() => assessed(site, count, pairs).failureChance);
@@ -83,6 +89,7 @@ export function failureChance(site: any[][], count: any, pairs?: any[]): number 
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param count Number of holes, 0 or more.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Volume of the piles times the carbon of a cubic metre in your site block; lengths by Randolph & Wroth (1978), Analysis of deformation of vertically loaded piles, ASCE J. Geotech. Engng Div. 104 (GT12).
  */
 export function carbon(site: any[][], count: any, pairs?: any[]): number {
   return answer(() => {
@@ -98,6 +105,7 @@ export function carbon(site: any[][], count: any, pairs?: any[]): number {
  * @param from Number of holes now intended.
  * @param to Number of holes instead.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Difference of two total costs: see TOTALCOST.
  */
 export function saving(site: any[][], from: any, to: any, pairs?: any[]): number {
   return answer(() => {
@@ -115,6 +123,7 @@ export function saving(site: any[][], from: any, to: any, pairs?: any[]): number
  * @param count Number of holes, 0 or more.
  * @param percentile Percentile of the cost, above 0 and below 100; 80 is common for a bid.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Percentiles of the costs behind FOUNDATIONCOST, FAILURECOST and DELAYCOST, drawn by Joe & Kuo (2008), SIAM J. Sci. Comput. 30(5), scrambled after Owen (1995).
  */
 export function contingencySum(site: any[][], count: any, percentile: any, pairs?: any[]): number {
   return answer(() => {

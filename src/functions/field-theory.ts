@@ -10,6 +10,7 @@ import { modelFrom } from "./model-argument.js";
  * @param lag_m Distance between the two points, m.
  * @param scale_m Scale of fluctuation in that direction, m.
  * @param [model] Correlation: markov (default), ellipsoidal, gaussian, spherical, markov2, triangular.
+ * @source Vanmarcke (1983), Random Fields: Analysis and Synthesis; spherical: Fenton & Griffiths (2008), Risk Assessment in Geotechnical Engineering.
  */
 export function correlationAt(lag_m: any, scale_m: any, model?: any): number {
   return answer(() => correlation(modelFrom(model), Math.abs(numberFrom(lag_m, "Lag", ANY_LENGTH)), numberFrom(scale_m, "Scale", above0("scale of fluctuation", "m"))));
@@ -21,6 +22,7 @@ export function correlationAt(lag_m: any, scale_m: any, model?: any): number {
  * @param length_m Averaging length, m.
  * @param scale_m Scale of fluctuation in that direction, m.
  * @param [model] Correlation: markov (default), ellipsoidal, gaussian, spherical, markov2, triangular.
+ * @source Vanmarcke (1983), Random Fields: Analysis and Synthesis.
  */
 export function varianceFactor(length_m: any, scale_m: any, model?: any): number {
   return answer(() => varianceReduction(modelFrom(model), metres(numberFrom(length_m, "Length", LENGTH)), metres(numberFrom(scale_m, "Scale", above0("scale of fluctuation", "m")))));

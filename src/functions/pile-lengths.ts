@@ -13,6 +13,7 @@ import { pairsFrom, siteFrom, takePair } from "./site-argument.js";
  * @param count Number of holes, 0 or more.
  * @param percentile Percentile of the length, above 0 and below 100; 50 is the median.
  * @param [pairs] Label, value ... that replace inputs for this cell; "Pile", 3 gives the length of the third pile alone.
+ * @source Design length by Randolph & Wroth (1978), Analysis of deformation of vertically loaded piles, ASCE J. Geotech. Engng Div. 104 (GT12); design value by averages of a lognormal field, Vanmarcke (1983), Random Fields: Analysis and Synthesis.
  */
 export function pileLength(site: any[][], count: any, percentile: any, pairs?: any[]): number {
   return answer(() => {
@@ -31,6 +32,7 @@ export function pileLength(site: any[][], count: any, percentile: any, pairs?: a
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param count Number of holes, 0 or more.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Design length by Randolph & Wroth (1978), Analysis of deformation of vertically loaded piles, ASCE J. Geotech. Engng Div. 104 (GT12); design value by averages of a lognormal field, Vanmarcke (1983), Random Fields: Analysis and Synthesis.
  */
 export function lengthsByPercentile(site: any[][], count: any, pairs?: any[]): any[][] {
   return answer(() => {
@@ -45,6 +47,7 @@ export function lengthsByPercentile(site: any[][], count: any, pairs?: any[]): a
  * @customfunction LAYOUT
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param count Number of holes, 1 or more.
+ * @source Our own rule: rows of equal cells, that arrangement whose farthest point of the footprint lies nearest to a hole; codes give spacings, not positions.
  */
 export function layout(site: any[][], count: any): any[][] {
   return answer(() => {

@@ -6,6 +6,7 @@ import { cellsFrom, pairsFrom } from "./site-argument.js";
 /**
  * Table of the kinds of investigation with the published errors of each and where they come from.
  * @customfunction METHODS
+ * @source Each row names its own; mostly Kulhawy & Trautmann (1996), Estimation of in-situ test uncertainty, ASCE GSP 58, and Phoon & Kulhawy (1999), from memory.
  */
 export function methods(): any[][] {
   return answer(() => tableCells(methodTable()));
@@ -14,6 +15,7 @@ export function methods(): any[][] {
 /**
  * Table of typical published means, variations and scales by kind of ground with their sources, to start from without data.
  * @customfunction GROUNDKINDS
+ * @source Each row names its own; mostly Phoon & Kulhawy (1999), from memory.
  */
 export function groundKinds(): any[][] {
   return answer(() => tableCells(groundKindTable()));
@@ -24,6 +26,7 @@ export function groundKinds(): any[][] {
  * @customfunction CHECK
  * @param site Site block: label, value and unit columns; the range named Site.
  * @param [pairs] Label, value, label, value ... that replace inputs of the site block for this cell.
+ * @source Reads the site block; no published method.
  */
 export function check(site: any[][], pairs?: any[]): any[][] {
   return answer(() => tableCells(checkTable(checkSite(cellsFrom(site), pairsFrom(pairs)))));
@@ -32,6 +35,7 @@ export function check(site: any[][], pairs?: any[]): any[][] {
 /**
  * Name and release of the add-in.
  * @customfunction VERSION
+ * @source No published method.
  */
 export function version(): string {
   return answer(() => `Probeworth ${PRODUCT_VERSION}`);

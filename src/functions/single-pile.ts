@@ -15,6 +15,7 @@ import { above0, numberFrom, optionalNumberFrom } from "./arguments.js";
  * @param soil_MPa Young's modulus of the ground, MPa.
  * @param pile_GPa Young's modulus of the pile, GPa.
  * @param [poisson] Poisson's ratio of the ground, 0 to below 0.5; 0.3 if left out.
+ * @source Randolph & Wroth (1978), Analysis of deformation of vertically loaded piles, ASCE J. Geotech. Engng Div. 104 (GT12).
  */
 export function pileSettlement(load_kN: any, length_m: any, diameter_m: any, soil_MPa: any, pile_GPa: any, poisson?: any): number {
   return answer(() => {
@@ -41,6 +42,7 @@ export function pileSettlement(load_kN: any, length_m: any, diameter_m: any, soi
  * @param [poisson] Poisson's ratio of the ground, 0 to below 0.5; 0.3 if left out.
  * @param [shortest_m] Shortest pile considered, m; 3 if left out.
  * @param [longest_m] Longest pile considered, m; 60 if left out.
+ * @source Randolph & Wroth (1978), Analysis of deformation of vertically loaded piles, ASCE J. Geotech. Engng Div. 104 (GT12), solved for the length.
  */
 export function settlementLength(load_kN: any, diameter_m: any, soil_MPa: any, pile_GPa: any, allowable_mm: any, poisson?: any, shortest_m?: any, longest_m?: any): number {
   return answer(() => {
