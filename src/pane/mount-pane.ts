@@ -139,10 +139,15 @@ function simulationOf(workbook: Workbook, options: PaneOptions, startCounts: () 
   const start = options.startSimulationWorker ?? startSimulationWorker;
   const store = new RunStore(() => webThreads(start, navigator.hardwareConcurrency), browserShelf(), tell);
   const quick = new QuickFigures(new Pricing(startCounts));
-  const write = async (sheet: (report: SimulationReport) => SheetPlan): Promise<void> => {
+  const write = async (sheet: (report: SimulationReport) => SheetPlan, say: (sentence: string) => void): Promise<boolean> => {
+    const both = (sentence: string): void => {
+      tell(sentence);
+      say(sentence);
+    };
     const report = reportOf(store.state, new Date());
-    const inserted = report === undefined ? undefined : await addSheet(workbook, sheet(report), tell);
-    if (inserted !== undefined) tell(`Written on the new sheet ${inserted.sheet}.`);
+    const inserted = report === undefined ? undefined : await addSheet(workbook, sheet(report), both);
+    if (inserted !== undefined) both(`Written on the new sheet ${inserted.sheet}.`);
+    return inserted !== undefined;
   };
   store.subscribe(({ phase }) => quick.allow(phase === "ended"));
   void store.open();
@@ -154,8 +159,8 @@ function simulationOf(workbook: Workbook, options: PaneOptions, startCounts: () 
     store,
     quick,
     actions: {
-      writeTables: () => void write((report) => simulationSheet(contentOf(report))),
-      writeBrief: (client, variant) => void write((report) => briefSheet(report, variant, client, numberWriter(options.locale))),
+      writeTables: (say) => write((report) => simulationSheet(contentOf(report)), say),
+      writeBrief: (client, variant, say) => write((report) => briefSheet(report, variant, client, numberWriter(options.locale)), say),
     },
     close: () => {
       window.removeEventListener("pagehide", save);
@@ -197,7 +202,7 @@ async function addSheet(workbook: Workbook, plan: SheetPlan, tell: (sentence: st
   try {
     return await workbook.insertSheet(plan);
   } catch (reason) {
-    tell(`No sheet could be added: ${inWords(reason)}.`);
+    tell(reason instanceof WorkbookRefusal ? reason.message : `No sheet could be added: ${inWords(reason)}.`);
     return undefined;
   }
 }

@@ -4,26 +4,30 @@ import type { RowKind, RowRun } from "../jobs/realisations.js";
 import type { RunShelf } from "./run-shelf.js";
 
 const KINDS = ["elements", "form"] as const;
+/** A storage that was closed or busy for a moment is tried again with the next saving. */
+const MOST_TRIES = 3;
 
 /** Keeps the realisations of one run as they come, each once. */
 export class RunKeeping {
   private readonly saved: Readonly<Record<RowKind, Set<number>>>;
   private working: Promise<void> = Promise.resolve();
-  private hasFailed = false;
+  private failures = 0;
+  private hasKept: boolean;
 
   /**
    * @param shelf   where they are kept
    * @param inputs  hash of the run's inputs
    * @param kept    what is there already
-   * @param failed  hears once why nothing more can be kept
+   * @param failed  hears once why nothing more can be kept, and whether something is kept already
    */
   constructor(
     private readonly shelf: RunShelf,
     private readonly inputs: string,
     kept: KeptRows,
-    private readonly failed: (reason: unknown) => void,
+    private readonly failed: (reason: unknown, hasKept: boolean) => void,
   ) {
     this.saved = { elements: indexes(kept.elements), form: indexes(kept.form) };
+    this.hasKept = this.saved.elements.size + this.saved.form.size > 0;
   }
 
   /**
@@ -35,16 +39,22 @@ export class RunKeeping {
   save(rows: KeptRows): Promise<void> {
     for (const kind of KINDS) {
       const fresh = rows[kind].flatMap((run) => unsaved(run, this.saved[kind]));
-      if (fresh.length === 0 || this.hasFailed) continue;
+      if (fresh.length === 0 || this.failures >= MOST_TRIES) continue;
       for (const { from, count } of fresh) for (let k = from; k < from + count; k++) this.saved[kind].add(k);
-      this.working = this.working
-        .then(() => this.shelf.add(this.inputs, kind, fresh))
-        .catch((reason: unknown) => {
-          if (!this.hasFailed) this.failed(reason);
-          this.hasFailed = true;
-        });
+      this.working = this.working.then(() => this.write(kind, fresh));
     }
     return this.working;
+  }
+
+  private async write(kind: RowKind, runs: readonly RowRun[]): Promise<void> {
+    try {
+      await this.shelf.add(this.inputs, kind, runs);
+      this.failures = 0;
+      this.hasKept = true;
+    } catch (reason) {
+      for (const { from, count } of runs) for (let k = from; k < from + count; k++) this.saved[kind].delete(k);
+      if (++this.failures === MOST_TRIES) this.failed(reason, this.hasKept);
+    }
   }
 }
 

@@ -34,10 +34,18 @@ const ROWS = "rows";
 /** Enough for a second thought and another workbook; a run takes some megabytes. */
 const MOST_RUNS = 4;
 
+/** A storage that has not opened by then is taken for none, milliseconds. */
+const LONGEST_OPENING = 5_000;
+
 /** The shelf in the browser's own storage, which belongs to this page's origin and never leaves the machine. */
 export function browserShelf(): RunShelf {
   let opened: Promise<IDBDatabase> | undefined;
-  const base = (): Promise<IDBDatabase> => (opened ??= open());
+  // A browser may close a storage under the page, or refuse it once: the next call opens it anew.
+  const forget = (): void => void (opened = undefined);
+  const base = (): Promise<IDBDatabase> => {
+    if (opened === undefined) (opened = inTime(open(forget))).catch(forget);
+    return opened;
+  };
   return {
     async put(inputs, order) {
       const work = (await base()).transaction([ORDERS, ROWS], "readwrite");
@@ -55,6 +63,8 @@ export function browserShelf(): RunShelf {
     async add(inputs, kind, runs) {
       const work = (await base()).transaction(ROWS, "readwrite");
       for (const run of runs) work.objectStore(ROWS).add({ inputs, kind, from: run.from, count: run.count, values: run.values } satisfies KeptRun);
+      // a page that is going has no further turn in which the transaction would end by itself
+      work.commit();
       await finished(work);
     },
     async rows(inputs) {
@@ -79,25 +89,41 @@ export function browserShelf(): RunShelf {
   };
 }
 
-function open(): Promise<IDBDatabase> {
+async function open(closed: () => void): Promise<IDBDatabase> {
+  if (typeof indexedDB === "undefined") throw new Error("this browser gives the page none");
   const request = indexedDB.open(NAME, 1);
   request.onupgradeneeded = () => {
     request.result.createObjectStore(ORDERS, { keyPath: "inputs" });
     request.result.createObjectStore(ROWS, { autoIncrement: true }).createIndex("inputs", "inputs");
   };
-  return answer(request);
+  const base = await answer(request);
+  base.onclose = closed;
+  return base;
+}
+
+function inTime<T>(work: Promise<T>): Promise<T> {
+  return new Promise((resolve, reject) => {
+    const timer = setTimeout(() => reject(new Error("it does not answer")), LONGEST_OPENING);
+    void work.then(resolve, reject).finally(() => clearTimeout(timer));
+  });
 }
 
 function answer<T>(request: IDBRequest<T>): Promise<T> {
   return new Promise((resolve, reject) => {
     request.onsuccess = () => resolve(request.result);
-    request.onerror = () => reject(request.error ?? new Error("the storage gave no reason"));
+    request.onerror = () => reject(reasonOf(request.error));
   });
 }
 
 function finished(work: IDBTransaction): Promise<void> {
   return new Promise((resolve, reject) => {
     work.oncomplete = () => resolve();
-    work.onabort = work.onerror = () => reject(work.error ?? new Error("the storage gave no reason"));
+    work.onabort = work.onerror = () => reject(reasonOf(work.error));
   });
+}
+
+/** What the browser says, in words: its message may be empty, and the commonest reason is worth plain ones. */
+function reasonOf(error: DOMException | null): Error {
+  if (error?.name === "QuotaExceededError") return new Error("its room is used up");
+  return new Error(error === null ? "it gave no reason" : error.message || error.name);
 }

@@ -31,6 +31,8 @@ export interface RunState {
   readonly before: Totals;
   /** what else the person must know; "" for nothing */
   readonly note: string;
+  /** whether what is finished stays on this machine */
+  readonly isKept: boolean;
   /** the site block has changed since the run was ordered */
   readonly changed: boolean;
 }
@@ -41,7 +43,7 @@ const SAVE_EVERY = 2_000;
 
 /** Leads one run at a time and keeps what it finishes. */
 export class RunStore {
-  private held: RunState = { phase: "none", order: undefined, inputs: "", progress: undefined, end: undefined, message: "", table: undefined, used: NOTHING, before: NOTHING, note: "", changed: false };
+  private held: RunState = { phase: "none", order: undefined, inputs: "", progress: undefined, end: undefined, message: "", table: undefined, used: NOTHING, before: NOTHING, note: "", isKept: true, changed: false };
   private readonly listeners = new Set<(state: RunState) => void>();
   private run: BatchRun<SimulationTable> | undefined;
   private keep: (() => void) | undefined;
@@ -100,7 +102,7 @@ export class RunStore {
     const turn = ++this.turn;
     const inputs = inputsHash(order.task);
     const same = inputs === this.held.inputs;
-    this.publish({ phase: "starting", order, inputs, progress: undefined, end: undefined, message: "", note: "", before: NOTHING, ...(same ? {} : { table: undefined, used: NOTHING }) });
+    this.publish({ phase: "starting", order, inputs, progress: undefined, end: undefined, message: "", note: "", isKept: true, before: NOTHING, ...(same ? {} : { table: undefined, used: NOTHING }) });
     const kept = await this.keptRows(inputs, order);
     if (turn !== this.turn) return;
     this.publish({ phase: "running", before: { elements: unbroken(kept.elements), form: unbroken(kept.form) } });
@@ -150,7 +152,7 @@ export class RunStore {
   }
 
   private async lead(order: RunOrder, inputs: string, kept: KeptRows): Promise<void> {
-    const keeping = new RunKeeping(this.shelf, inputs, kept, (reason) => this.sayUnkept(reason));
+    const keeping = new RunKeeping(this.shelf, inputs, kept, (reason, hasKept) => this.sayUnkept(reason, hasKept));
     const run = this.runner(order.task, order.target, { kept }, this.threads(), (progress) => {
       if (this.run === run) this.publish({ progress, ...(progress.table === undefined ? {} : { table: progress.table, used: { elements: progress.table.elements, form: progress.table.form } }) });
     });
@@ -170,14 +172,14 @@ export class RunStore {
   }
 
   private async keptRows(inputs: string, order: RunOrder): Promise<KeptRows> {
+    let kept: KeptRows = { elements: [], form: [] };
     try {
-      const kept = await this.shelf.rows(inputs);
+      kept = soundRows(await this.shelf.rows(inputs));
       await this.shelf.put(inputs, order);
-      return soundRows(kept);
     } catch (reason) {
-      this.sayUnkept(reason);
-      return { elements: [], form: [] };
+      this.sayUnkept(reason, kept.elements.length + kept.form.length > 0);
     }
+    return kept;
   }
 
   /** One look at kept realisations, in a thread: it takes longer than a page may be held up. */
@@ -197,8 +199,9 @@ export class RunStore {
     });
   }
 
-  private sayUnkept(reason: unknown): void {
-    this.publish({ note: `This run cannot be kept for later, because the storage of this machine refused it (${wordsOf(reason)}). It ends with the pane.` });
+  private sayUnkept(reason: unknown, hasKept = false): void {
+    const what = hasKept ? "The rest of this run" : "This run";
+    this.publish({ isKept: false, note: `${what} cannot be kept for later, because the storage of this machine refused it (${wordsOf(reason)}). It goes on, and is lost when the pane closes; write the tables before.` });
   }
 
   private publish(change: Partial<RunState>): void {

@@ -125,7 +125,7 @@ describe("web workers", () => {
     worker.onmessageerror!(new MessageEvent("messageerror"));
     expect(heard).toEqual([
       "ready",
-      "lost: its memory ran out (Uncaught RangeError: Array buffer allocation failed); fewer threads, or a smaller foundation, need less",
+      "lost: its memory ran out (Array buffer allocation failed); fewer threads, or a smaller foundation, need less",
       "lost: its thread could not be started",
       "lost: its answer could not be read",
     ]);

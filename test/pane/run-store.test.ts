@@ -132,8 +132,55 @@ describe("a run in the pane", () => {
     void store.start(order);
     await settled();
     expect(started.length).toBe(1);
-    expect(store.state.note).toBe("This run cannot be kept for later, because the storage of this machine refused it (quota exceeded). It ends with the pane.");
+    expect(store.state).toMatchObject({ isKept: false, note: "This run cannot be kept for later, because the storage of this machine refused it (quota exceeded). It goes on, and is lost when the pane closes; write the tables before." });
     await bench(shelf).store.open();
+    started[0]!.end({});
+    // the next one is tried anew
+    shelf.broken = undefined;
+    await settled();
+    void store.start(order);
+    await settled();
+    expect(store.state).toMatchObject({ isKept: true, note: "" });
+    started[1]!.end({});
+  });
+
+  it("tries a storage again that failed for a moment, and says so once where it stays full", async () => {
+    vi.useFakeTimers({ toFake: ["setInterval", "clearInterval"] });
+    const { store, started, shelf, finish } = bench();
+    const whole = store.start(order);
+    await settled();
+    const saving = async (broken: string | undefined, elements: number): Promise<void> => {
+      shelf.broken = broken;
+      finish({ elements: [run(0, elements)], form: [] });
+      vi.advanceTimersByTime(2000);
+      await settled();
+    };
+    const indexes = (): number[] => shelf.kept.flatMap(({ run: { from, count } }) => Array.from({ length: count }, (_, k) => from + k));
+    await saving(undefined, 1);
+    await saving("it is closing", 2);
+    await saving("it is closing", 3);
+    expect(indexes()).toEqual([0]);
+    await saving(undefined, 4);
+    expect(indexes()).toEqual([0, 1, 2, 3]);
+    expect(store.state).toMatchObject({ isKept: true, note: "" });
+    for (const elements of [5, 6]) await saving("its room is used up", elements);
+    expect(store.state.isKept).toBe(true);
+    await saving("its room is used up", 7);
+    expect(store.state).toMatchObject({ isKept: false, note: expect.stringMatching(/^The rest of this run cannot be kept for later, .* \(its room is used up\)\./) });
+    started[0]!.end({});
+    await whole;
+    vi.useRealTimers();
+  });
+
+  it("goes on from what is kept though nothing more can be kept", async () => {
+    const shelf = new MemoryShelf();
+    await shelf.add(inputs, "elements", [run(0, 2)]);
+    shelf.put = () => Promise.reject(new Error("read only"));
+    const { store, started } = bench(shelf);
+    void store.start(order);
+    await settled();
+    expect(started[0]!.settings.kept).toEqual({ elements: [run(0, 2)], form: [] });
+    expect(store.state.note).toMatch(/^The rest of this run cannot be kept .* \(read only\)/);
     started[0]!.end({});
   });
 

@@ -15,7 +15,7 @@ const progress = (change: Partial<BatchProgress<SimulationTable>>): BatchProgres
 });
 const state = (change: Partial<RunState>): RunState => ({
   phase: "ended", order: undefined, inputs: "", progress: undefined, end: "cancelled", message: "", table: undefined,
-  used: { elements: 1, form: 400 }, before: { elements: 0, form: 0 }, note: "", changed: false, ...change,
+  used: { elements: 1, form: 400 }, before: { elements: 0, form: 0 }, note: "", isKept: true, changed: false, ...change,
 });
 
 describe("a run in words", () => {
@@ -39,6 +39,7 @@ describe("a run in words", () => {
 
   it("says how it stands after its end", () => {
     expect(standingInWords(state({}), writer)).toBe("Cancelled. 1 ground by finite elements and 400 by the short form are there and kept on this machine.");
+    expect(standingInWords(state({ isKept: false }), writer)).toBe("Cancelled. 1 ground by finite elements and 400 by the short form are there and stay until the pane closes.");
     expect(standingInWords(state({ end: "kept" }), writer)).toMatch(/^A run was left on this machine: 1 ground/);
     expect(standingInWords(state({ end: "done" }), writer)).toBe("Finished: 1 ground by finite elements and 400 by the short form.");
     expect(standingInWords(state({ end: "failed", message: "No thread can be kept at work: gone." }), writer)).toMatch(/^No thread can be kept at work: gone\. 1 ground .* kept on this machine\.$/);

@@ -20,7 +20,7 @@ const rows = [
 const order = orderOfDemonstration();
 const state = (change: Partial<RunState> = {}): RunState => ({
   phase: "ended", order, inputs: inputsHash(order.task), progress: undefined, end: "done", message: "", table: simulatedTable(rows),
-  used: { elements: 24, form: 600 }, before: { elements: 0, form: 0 }, note: "", changed: false, ...change,
+  used: { elements: 24, form: 600 }, before: { elements: 0, form: 0 }, note: "", isKept: true, changed: false, ...change,
 });
 const report = (change: Partial<RunState> = {}): SimulationReport => reportOf(state(change), new Date(Date.UTC(2026, 2, 14, 9, 20)))!;
 

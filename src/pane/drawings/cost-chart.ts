@@ -1,13 +1,10 @@
-import { axisX, axisY, barY, dot, gridY, lineY, plot, ruleX, ruleY, text, areaY } from "@observablehq/plot";
+import { axisY, barY, dot, gridY, lineY, plot, ruleX, ruleY, text, areaY } from "@observablehq/plot";
 import type { CostDrawing, PartBlock, TotalPoint } from "../model/cost-drawing.js";
-import { countTicks, niceTicks } from "../model/ticks.js";
+import { niceTicks } from "../model/ticks.js";
+import { axisOfCounts, hidden, PADDING, SIDES } from "./count-axis.js";
 
 /** Writes an amount of money for an axis, in the unit that the axis states. */
 export type AxisWriter = (value: number) => string;
-
-const SIDES = { marginLeft: 46, marginRight: 10, className: "pane-plot" } as const;
-/** gap between two counts as a share of their distance */
-const PADDING = 0.24;
 
 /**
  * Draws the total with its band against the count, on an axis that shows differences rather than zero.
@@ -93,13 +90,4 @@ export function drawParts(drawing: CostDrawing, width: number, write: AxisWriter
       ],
     }),
   );
-}
-
-function axisOfCounts(counts: readonly number[], width: number): ReturnType<typeof axisX> {
-  return axisX(countTicks(counts, Math.floor((width - SIDES.marginLeft - SIDES.marginRight) / 20)), { tickSize: 0, color: "var(--pane-soft)", label: "number of holes", labelAnchor: "center", labelArrow: "none" });
-}
-
-function hidden(picture: Element): Element {
-  picture.setAttribute("aria-hidden", "true");
-  return picture;
 }

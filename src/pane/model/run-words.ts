@@ -63,16 +63,17 @@ function regretStep(regret: number): number {
  */
 export function standingInWords(state: RunState, writer: NumberWriter): string {
   const there = `${groundsInWords(state.used, writer)} ${state.used.elements + state.used.form === 1 ? "is" : "are"} there`;
+  const where = state.isKept ? "kept on this machine" : "stay until the pane closes";
   switch (state.end) {
     case "kept":
       return `A run was left on this machine: ${there}. It can go on from here.`;
     case "cancelled":
-      return `Cancelled. ${sentenceCase(there)} and kept on this machine.`;
+      return `Cancelled. ${sentenceCase(there)} and ${where}.`;
     case "done":
       return `Finished: ${groundsInWords(state.used, writer)}.`;
     case undefined:
       return "";
     default:
-      return `${state.message} ${state.used.elements + state.used.form > 0 ? `${sentenceCase(there)} and kept on this machine.` : ""}`.trim();
+      return `${state.message} ${state.used.elements + state.used.form > 0 ? `${sentenceCase(there)} and ${where}.` : ""}`.trim();
   }
 }

@@ -1,7 +1,7 @@
 import { drawn } from "./element.js";
 
 /** What a key can show. */
-export type KeySymbol = "pile" | "hole" | "footprint" | "total" | "cheapest" | "set" | "above" | "shaft" | "hole-line";
+export type KeySymbol = "pile" | "hole" | "footprint" | "total" | "cheapest" | "set" | "above" | "shaft" | "hole-line" | "box" | "range";
 
 /**
  * A small picture of a sign used in a drawing.
@@ -32,5 +32,7 @@ const SHAPES: Record<KeySymbol, () => SVGElement[]> = {
   set: () => [drawn("rect", { x: 2, y: 0, width: 14, height: 14, class: "sign-set" }), drawn("path", { d: "M9 2.5 13 7 9 11.5 5 7Z", class: "sign-diamond" })],
   shaft: () => [drawn("rect", { x: 6, y: 1, width: 6, height: 12, class: "sign-shaft" })],
   "hole-line": () => [drawn("path", { d: "M6 0v14", class: "sign-hole-line" }), drawn("path", { d: "M12 0v14", class: "sign-hole-line sign-hole-beside" })],
+  box: () => [drawn("rect", { x: 4, y: 1, width: 10, height: 12, class: "sign-box" }), drawn("path", { d: "M4 8h10", class: "sign-middle" })],
+  range: () => [drawn("path", { d: "M9 0v14", class: "sign-line" })],
   above: () => [drawn("path", { d: "M9 3 14 11H4Z", class: "sign-diamond" })],
 };

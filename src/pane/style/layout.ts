@@ -119,6 +119,7 @@ export const LAYOUT = `
 .probeworth .hint + .row { margin-top: 8px; }
 .probeworth .writes { margin-top: 10px; }
 .probeworth .agreement { margin-block: 8px; }
+.probeworth .lengths-figure { margin-bottom: 10px; }
 .probeworth .simulated .row + .answer-head, .probeworth .simulated .hint + .answer-head { margin-top: 8px; }
 .probeworth .slice .row { margin-top: 6px; }
 .probeworth .slice .field-count { width: 52px; }

@@ -17,6 +17,8 @@ export const PICTURES = `
 .probeworth .sign-point { fill: var(--pane-surface); stroke: var(--pane-ink); stroke-width: 1.4; }
 .probeworth .sign-cheapest { fill: var(--pane-accent); }
 .probeworth .sign-set { fill: var(--pane-set); stroke: var(--pane-edge); stroke-width: .5; }
+.probeworth .sign-box { fill: var(--pane-set); stroke: var(--pane-ink); stroke-width: 1; }
+.probeworth .sign-middle { fill: none; stroke: var(--pane-ink); stroke-width: 2.5; }
 .probeworth .sign-diamond { fill: var(--pane-ink); }
 .probeworth .sign-shaft { fill: #ffffff; stroke: #101314; stroke-width: 1.25; }
 .probeworth .sign-hole-line { fill: none; stroke: var(--pane-hole); stroke-width: 1.75; }

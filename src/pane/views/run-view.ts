@@ -44,7 +44,7 @@ function controlPanel(store: RunStore, read: () => ReturnType<ReturnType<typeof 
   });
   const words = element("p", { class: "run-words" });
   const which = element("p", { class: "hint" });
-  const changed = element("p", { class: "hint run-changed" }, "The site block has changed since this run was ordered. The run keeps its inputs, and its tables say so.");
+  const changed = element("p", { class: "hint run-changed" });
   const note = element("p", { class: "hint", "aria-live": "polite" });
   const bar = element("fluent-progress-bar", { "aria-label": "Work done", min: 0, max: 1, value: 0 });
   store.subscribe((state) => {
@@ -61,6 +61,10 @@ function controlPanel(store: RunStore, read: () => ReturnType<ReturnType<typeof 
     which.textContent = state.order === undefined ? "" : `This run: ${orderInWords(state.order)}.`;
     which.hidden = state.order === undefined;
     changed.hidden = !state.changed;
+    changed.textContent =
+      state.end === "kept"
+        ? "It was ordered for other inputs than the site block has now, perhaps in another workbook. It keeps its own, and its tables say so."
+        : "The site block has changed since this run was ordered. The run keeps its inputs, and its tables say so.";
     note.textContent = [state.note, goes ? (state.progress?.notice ?? "") : ""].filter((sentence) => sentence !== "").join(" ");
     note.hidden = note.textContent === "";
   });

@@ -13,12 +13,14 @@ import type { QuickFigures } from "../quick-figures.js";
 import type { RunOrder } from "../run-order.js";
 import type { RunState, RunStore } from "../run-store.js";
 import { costFigure } from "./cost-figure.js";
+import { lengthFigure } from "./length-figure.js";
 import { wayChoice } from "./way-choice.js";
 
-/** What the buttons of the panel do; undefined counts: the client has none in mind. */
+/** What the buttons of the panel do. What is to be said about it is said while it goes on; true: it is written. */
 export interface SimulatedActions {
-  readonly writeTables: () => void;
-  readonly writeBrief: (client: number | undefined, variant: number) => void;
+  readonly writeTables: (say: (sentence: string) => void) => Promise<boolean>;
+  /** client: undefined where the client has no count in mind */
+  readonly writeBrief: (client: number | undefined, variant: number, say: (sentence: string) => void) => Promise<boolean>;
 }
 
 /**
@@ -41,8 +43,11 @@ export function simulatedPanel(store: RunStore, quick: QuickFigures, actions: Si
   const agreement = element("p", { class: "hint agreement" });
   const client = element("input", { id, class: "field field-count", type: "number", min: 0, step: 1, inputmode: "numeric" });
   const picture = costFigure(writer, true);
+  const lengths = lengthFigure(writer);
   const table = element("div");
   const choice = wayChoice("Way shown", () => show(true));
+  const written = element("p", { class: "hint written", hidden: true });
+  let isWriting = false;
   const proposed = (): number | undefined => (client.value !== "" && Number.isInteger(Number(client.value)) && Number(client.value) >= 0 ? Number(client.value) : undefined);
   const panel = element(
     "section",
@@ -57,10 +62,26 @@ export function simulatedPanel(store: RunStore, quick: QuickFigures, actions: Si
     remarks,
     picture.figure,
     agreement,
+    lengths.figure,
     element("details", { class: "group" }, element("summary", {}, element("span", { class: "group-name" }, "All simulated figures as a table")), table),
-    element("div", { class: "row writes" }, button("Write the tables", actions.writeTables, { appearance: "primary" }), button("Write the client brief", () => actions.writeBrief(proposed(), choice.chosen()))),
+    element("div", { class: "row writes" }, button("Write the tables", () => write(actions.writeTables), { appearance: "primary" }), button("Write the client brief", () => write((say) => actions.writeBrief(proposed(), choice.chosen(), say)))),
+    written,
     element("p", { class: "hint" }, "Each goes on a new sheet, with version, seed, numbers of grounds and a hash of the inputs; nothing in your workbook is changed."),
   );
+  const write = (work: (say: (sentence: string) => void) => Promise<boolean>): void => {
+    if (isWriting) return;
+    isWriting = true;
+    // The line at the foot of the pane says it aloud; here it stays in sight beside the button that is pressed again.
+    const say = (sentence: string): void => {
+      written.textContent = sentence;
+      written.hidden = sentence === "";
+    };
+    say("");
+    written.classList.remove("refusal");
+    void work(say)
+      .then((isWritten) => written.classList.toggle("refusal", !isWritten))
+      .finally(() => (isWriting = false));
+  };
   let shown = "";
   const show = (always = false): void => {
     const state = store.state;
@@ -81,6 +102,7 @@ export function simulatedPanel(store: RunStore, quick: QuickFigures, actions: Si
     remarks.replaceChildren(...words.remarks.map((remark) => element("li", {}, remark)));
     remarks.hidden = words.remarks.length === 0;
     picture.show(rows, cheapest, money);
+    lengths.show(rows, cheapest, state.order.task.variants[0]!.problem.building.piles.length, state.order.units);
     compare(state.order, state.table);
   };
   const compare = (order: RunOrder, simulated: SimulationTable): void => {

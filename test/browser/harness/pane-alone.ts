@@ -1,5 +1,6 @@
 import "../../../src/pane/page.css";
 import type { CellValue, RangeText, SheetPlan, Workbook } from "../../../src/host/workbook.js";
+import { WorkbookRefusal } from "../../../src/host/workbook-refusal.js";
 import { templateRows } from "../../../src/inputs/index.js";
 import { mountPane } from "../../../src/pane/mount-pane.js";
 
@@ -8,6 +9,8 @@ class MemoryWorkbook implements Workbook {
   rows: CellValue[][] = templateRows().map((row) => [...row]);
   readonly blocks = new Map<string, () => RangeText>([["Site", () => this.range()]]);
   readonly inserted: SheetPlan[] = [];
+  /** why no sheet may be added, as Excel's form of the workbook would say it; "": one may */
+  refusal = "";
   private readonly handlers = new Set<() => void>();
 
   range(): RangeText {
@@ -30,6 +33,7 @@ class MemoryWorkbook implements Workbook {
     return undefined;
   }
   async insertSheet(plan: SheetPlan): Promise<{ sheet: string; names: string[] }> {
+    if (this.refusal !== "") throw new WorkbookRefusal("structure", this.refusal);
     this.inserted.push(plan);
     const names = (plan.names ?? []).map(({ name }) => (this.blocks.has(name) ? `${name}2` : name));
     for (const name of names) this.blocks.set(name, () => this.range());

@@ -49,9 +49,14 @@ export interface PanePage {
   readonly requests: string[];
 }
 
-/** Opens the pane 320 px wide unless told otherwise, and waits until the site block is read. */
-export async function openPane(site: PaneSite, options: BrowserContextOptions = {}, query = ""): Promise<PanePage> {
+/**
+ * Opens the pane 320 px wide unless told otherwise, and waits until the site block is read.
+ *
+ * @param before  what happens to the page before its first line
+ */
+export async function openPane(site: PaneSite, options: BrowserContextOptions = {}, query = "", before?: () => void): Promise<PanePage> {
   const context = await site.browser.newContext({ viewport: { width: 320, height: 900 }, colorScheme: "light", ...options });
+  if (before !== undefined) await context.addInitScript(before);
   const page = await context.newPage();
   const complaints: string[] = [];
   const requests: string[] = [];

@@ -1,0 +1,200 @@
+import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import type { Locator, Page, Worker } from "playwright-core";
+import { openPane, picture, startPane, type PaneSite } from "./harness/pane-page.js";
+
+// a run on a machine that is busy with other tests takes minutes
+const WAIT = 240_000;
+
+let site: PaneSite;
+beforeAll(async () => {
+  site = await startPane();
+}, 120_000);
+afterAll(() => site?.close());
+
+/** The pane with the Run view open; before: what the browser does to the page before its first line. */
+async function opened(before?: () => void): Promise<Page> {
+  const { page } = await openPane(site, {}, "", before);
+  await page.getByRole("tab", { name: "Run", exact: true }).click();
+  return page;
+}
+const words = (page: Page): Locator => page.locator(".control .run-words");
+const notes = async (page: Page): Promise<string> => (await page.locator(".control .hint").allTextContents()).join(" ");
+async function start(page: Page, counts: string, grounds: number): Promise<void> {
+  await page.getByLabel("Numbers of holes").fill(counts);
+  await page.getByLabel("Number of grounds analysed by finite elements").fill(String(grounds));
+  await page.getByRole("button", { name: "Start the run" }).click();
+}
+const grounds = async (page: Page): Promise<number> => Number(/([\d,]+)(?: of about [\d,]+)? grounds? by finite/.exec((await words(page).textContent()) ?? "")?.[1]?.replace(",", "") ?? 0);
+const reach = (page: Page, count: number): Promise<void> => expect.poll(() => grounds(page), { timeout: WAIT, interval: 50 }).toBeGreaterThanOrEqual(count);
+const finish = (page: Page): Promise<void> => expect.poll(() => words(page).textContent(), { timeout: WAIT }).toMatch(/^Finished: /);
+/** The total of each count, as the table of the Results view shows it. */
+async function totals(page: Page): Promise<string[]> {
+  await page.getByRole("tab", { name: "Results", exact: true }).click();
+  await page.getByText("All simulated figures as a table").click();
+  const rows = page.locator(".simulated details table tbody tr");
+  await rows.first().waitFor();
+  return rows.evaluateAll((all) => all.map((row) => [...row.children].slice(0, 3).map((cell) => cell.textContent).join(" ")));
+}
+/** The threads that compute or make tables, without those of the quick figures. */
+const threads = (page: Page): Worker[] => page.workers().filter((worker) => worker.url().includes("simulation-worker"));
+
+let undisturbed: string[];
+
+describe("a run that nobody disturbs", () => {
+  it("is what the disturbed ones are held against", { timeout: WAIT }, async () => {
+    const page = await opened();
+    await start(page, "0, 2", 8);
+    await finish(page);
+    undisturbed = await totals(page);
+    expect(undisturbed.length).toBe(2);
+    await page.context().close();
+  });
+});
+
+describe("a thread of the browser", () => {
+  it("that fails is replaced and its work done again, with the same table", { timeout: WAIT }, async () => {
+    const page = await opened();
+    await start(page, "0, 2", 8);
+    await reach(page, 2);
+    // both kinds: the one that computes and the one that makes the tables
+    for (const thread of threads(page)) await thread.evaluate(() => void setTimeout(() => { throw new Error("pulled from under the run"); }));
+    await expect.poll(() => notes(page), { timeout: WAIT, interval: 50 }).toMatch(/A thread was replaced and its work is done again: .*pulled from under the run\./);
+    await finish(page);
+    expect(await totals(page)).toEqual(undisturbed);
+    await page.context().close();
+  });
+
+  it("that fails again and again ends the run in a sentence with the reason, and what is done is kept", { timeout: WAIT }, async () => {
+    const page = await opened();
+    await start(page, "0, 2", 400);
+    await reach(page, 2);
+    const ending = expect.poll(() => words(page).textContent(), { timeout: WAIT, interval: 50 }).toMatch(/^(No thread can be kept at work|The thread that makes the tables cannot be kept at work): .*no room for another array.*\. \d+ grounds? by finite elements and [\d,]+ by the short form are there and kept on this machine\.$/);
+    const ended = page.getByRole("button", { name: "Go on" }).waitFor({ timeout: WAIT });
+    let hasEnded = false;
+    void ended.then(() => (hasEnded = true));
+    while (!hasEnded) {
+      // a thread that is just being ended cannot be asked
+      for (const thread of threads(page)) await thread.evaluate(() => void setTimeout(() => { throw new Error("no room for another array"); })).catch(() => undefined);
+      await page.waitForTimeout(100);
+    }
+    await ending;
+    await picture(page, "run-failed-320-light");
+    await page.context().close();
+  });
+});
+
+describe("a pane that closes in the middle of a run", () => {
+  it("loses at most the last seconds, offers to go on, and comes to the same table", { timeout: WAIT }, async () => {
+    const page = await opened();
+    await start(page, "0, 2", 8);
+    await reach(page, 3);
+    const before = await grounds(page);
+    await page.reload();
+    await page.getByRole("tab", { name: "Run", exact: true }).click();
+    await expect.poll(() => words(page).textContent(), { timeout: WAIT }).toMatch(/^A run was left on this machine: /);
+    expect(await grounds(page)).toBeGreaterThanOrEqual(before - 1);
+    await page.getByRole("button", { name: "Go on" }).click();
+    await finish(page);
+    expect(await totals(page)).toEqual(undisturbed);
+    await page.context().close();
+  });
+});
+
+describe("a site block that changes during a run", () => {
+  it("is said, in the view and in what is written, and the run keeps its inputs", { timeout: WAIT }, async () => {
+    const page = await opened();
+    await start(page, "0, 2", 8);
+    await reach(page, 1);
+    await page.evaluate(() => window.book.set("Price per hole", 99_000));
+    await page.getByText("The site block has changed since this run was ordered. The run keeps its inputs, and its tables say so.").waitFor();
+    await finish(page);
+    expect(await totals(page)).toEqual(undisturbed);
+    await page.getByRole("button", { name: "Write the tables" }).click();
+    await page.getByRole("button", { name: "Write the client brief" }).click();
+    await expect.poll(() => page.evaluate(() => window.book.inserted.length)).toBe(2);
+    const warned = await page.evaluate(() => window.book.inserted.map(({ cells }) => cells.filter(({ value }) => /^The site block has changed since this run was ordered/.test(String(value))).length));
+    expect(warned).toEqual([1, 1]);
+    await page.context().close();
+  });
+});
+
+describe("a workbook that refuses a sheet", () => {
+  it("is heard beside the button in its own words, the figures stay, and the button works again", { timeout: WAIT }, async () => {
+    const page = await opened();
+    await start(page, "0, 2", 2);
+    await finish(page);
+    const before = await totals(page);
+    const sentence = "The structure of this workbook is protected, so no sheet can be added. Take the protection away (Review, Protect Workbook), then press again.";
+    await page.evaluate((words) => (window.book.refusal = words), sentence);
+    await page.getByRole("button", { name: "Write the tables" }).click();
+    const said = page.locator(".simulated .written");
+    await expect.poll(() => said.textContent()).toBe(sentence);
+    expect(await said.getAttribute("class")).toContain("refusal");
+    expect(await page.locator(".status").textContent()).toBe(sentence);
+    await said.scrollIntoViewIfNeeded();
+    await picture(page, "run-refused-320-light");
+    await page.evaluate(() => (window.book.refusal = ""));
+    await page.getByRole("button", { name: "Write the tables" }).click();
+    await expect.poll(() => said.textContent()).toBe("Written on the new sheet Simulation.");
+    expect(await said.getAttribute("class")).not.toContain("refusal");
+    expect(await page.locator(".simulated details table tbody tr").count()).toBe(before.length);
+    await page.context().close();
+  });
+});
+
+describe("a storage that refuses", () => {
+  it("lets the run go on and says that it cannot be kept: none at all", { timeout: WAIT }, async () => {
+    const page = await opened(() => Object.defineProperty(globalThis, "indexedDB", { value: undefined }));
+    await start(page, "0, 2", 3);
+    await finish(page);
+    expect(await notes(page)).toContain("This run cannot be kept for later, because the storage of this machine refused it (this browser gives the page none). It goes on, and is lost when the pane closes; write the tables before.");
+    await picture(page, "run-unkept-320-light");
+    await page.context().close();
+  });
+
+  it("lets the run go on and says that it cannot be kept: one that fills up", { timeout: WAIT }, async () => {
+    const page = await opened(() => {
+      const add = IDBObjectStore.prototype.add;
+      IDBObjectStore.prototype.add = function (...values: Parameters<typeof add>) {
+        const request = add.apply(this, values);
+        // as a browser does that finds the disk full: the whole transaction is taken back
+        request.addEventListener("success", () => this.transaction.abort());
+        return request;
+      };
+      Object.defineProperty(IDBTransaction.prototype, "error", { get: () => new DOMException("", "QuotaExceededError") });
+    });
+    await start(page, "0, 2", 40);
+    await expect.poll(() => notes(page), { timeout: WAIT }).toContain("This run cannot be kept for later, because the storage of this machine refused it (its room is used up).");
+    await page.getByRole("button", { name: "Cancel" }).click();
+    await expect.poll(() => words(page).textContent()).toMatch(/^Cancelled\. .* are there and stay until the pane closes\.$/);
+    await page.context().close();
+  });
+
+  it("does not keep the run waiting: one that never answers", { timeout: WAIT }, async () => {
+    const page = await opened(() => {
+      IDBFactory.prototype.open = () => ({}) as IDBOpenDBRequest;
+    });
+    await start(page, "0, 2", 2);
+    await finish(page);
+    expect(await notes(page)).toContain("the storage of this machine refused it (it does not answer)");
+    await page.context().close();
+  });
+});
+
+describe("an absurd order", () => {
+  it("is refused beside the field, or ends with the time that it would take and keeps what is there", { timeout: WAIT }, async () => {
+    const page = await opened();
+    const regret = page.getByLabel(/^Sum that a wrong choice may cost/);
+    for (const sum of ["0", "-1", ""]) {
+      await regret.fill(sum);
+      await page.getByRole("button", { name: "Start the run" }).click();
+      expect(await page.getByRole("alert").textContent()).toMatch(/^State the sum that a wrong choice may cost, above 0/);
+    }
+    await page.getByLabel("Numbers of holes").fill("0, 2");
+    await regret.fill("0.000001");
+    await page.getByRole("button", { name: "Start the run" }).click();
+    await expect.poll(() => words(page).textContent(), { timeout: WAIT }).toMatch(/^To the wanted precision this run would take about [\d,]+ (days|years) on this machine; accept a larger sum, or stop after a number of grounds\. \d+ grounds by finite elements .* kept on this machine\.$/);
+    await picture(page, "run-absurd-320-light");
+    await page.context().close();
+  });
+});
