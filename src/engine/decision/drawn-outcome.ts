@@ -18,6 +18,8 @@ export interface DrawnOutcome {
   /** one a node, summing to 1 */
   readonly weights: Float64Array;
   readonly drawsPerNode: number;
+  /** the nodes are a sample of the design values themselves, whose scatter is an error too */
+  readonly isSampled: boolean;
   /** one a node: metres of all piles, expected surprises, metres by which they would be lengthened */
   readonly metres: Float64Array;
   readonly surprises: Float64Array;
@@ -74,7 +76,7 @@ export function drawnOutcome(problem: Problem, model: SiteModel, holes: HoleCova
     out.foundDistortion.set(foundDistortion, node * drawsPerNode);
     out.drawnSurprises.set(drawnSurprises, node * drawsPerNode);
   }
-  return { ...out, weights: nodes.weights, drawsPerNode, tooShortChance: tooShort(problem, plan, law, Math.min(tooShortSampled, 1)) };
+  return { ...out, weights: nodes.weights, drawsPerNode, isSampled: law.size > 1, tooShortChance: tooShort(problem, plan, law, Math.min(tooShortSampled, 1)) };
 }
 
 const interactions = new WeakMap<SiteModel, Interaction>();

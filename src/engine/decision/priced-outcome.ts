@@ -4,7 +4,7 @@ import type { DrawnOutcome } from "./drawn-outcome.js";
 import { damageThreshold } from "./node-draws.js";
 import type { Problem } from "./problem.js";
 
-/** Blocks of draws whose scatter gives the standard error. */
+/** Blocks of draws, and of nodes where these are sampled too, whose scatter gives the standard error. */
 const replicates = 4;
 
 /** Expected outcome of one count in money, apart from the investigation itself. */
@@ -15,7 +15,7 @@ export interface PricedOutcome {
   readonly failureChance: number;
   readonly surprises: number;
   readonly totalMetres: number;
-  /** standard error of the failure cost from the scatter of the draws, money */
+  /** standard error from the scatter of the draws: of the failure cost, and where design values are sampled of all costs; money */
   readonly samplingError: number;
 }
 
@@ -26,13 +26,18 @@ export function pricedOutcome(problem: Problem, drawn: DrawnOutcome): PricedOutc
   const threshold = damageThreshold(building.damage);
   const found = problem.delay.foundShare;
   const sum = { foundation: 0, failure: 0, delay: 0, failureChance: 0, surprises: 0, metres: 0 };
-  const replicate = new Float64Array(replicates);
+  const byDraws = new Float64Array(replicates);
+  const byNodes = new Float64Array(replicates);
   for (let node = 0; node < weights.length; node++) {
     const weight = weights[node];
-    sum.foundation += weight * foundationCost(problem.prices, building.piles.length, drawn.metres[node]);
+    const foundation = foundationCost(problem.prices, building.piles.length, drawn.metres[node]);
+    const delay = delayAt(problem, drawn, node);
+    sum.foundation += weight * foundation;
     sum.metres += weight * drawn.metres[node];
     sum.surprises += weight * drawn.surprises[node];
-    sum.delay += weight * delayAt(problem, drawn, node);
+    sum.delay += weight * delay;
+    const nodeBlock = Math.floor((node * replicates) / weights.length);
+    byNodes[nodeBlock] += replicates * weight * (foundation + delay);
     for (let m = 0, at = node * drawsPerNode; m < drawsPerNode; m++, at++) {
       const share = weight / drawsPerNode;
       for (const [part, distortion] of [[1 - found, drawn.distortion[at]], [found, drawn.foundDistortion[at]]]) {
@@ -40,16 +45,20 @@ export function pricedOutcome(problem: Problem, drawn: DrawnOutcome): PricedOutc
         const loss = building.value * damageShare(building.damage, distortion) * part * share;
         sum.failure += loss;
         sum.failureChance += part * share;
-        replicate[Math.floor((m * replicates) / drawsPerNode)] += replicates * loss;
+        byDraws[Math.floor((m * replicates) / drawsPerNode)] += replicates * loss;
+        byNodes[nodeBlock] += replicates * loss;
       }
     }
   }
-  const mean = replicate.reduce((total, value) => total + value, 0) / replicates;
-  const scatter = replicate.reduce((total, value) => total + (value - mean) ** 2, 0) / (replicates * (replicates - 1));
   return {
     foundation: sum.foundation, failure: sum.failure, delay: sum.delay, failureChance: Math.min(sum.failureChance, 1),
-    surprises: sum.surprises, totalMetres: sum.metres, samplingError: Math.sqrt(scatter),
+    surprises: sum.surprises, totalMetres: sum.metres, samplingError: Math.hypot(errorOfMean(byDraws), drawn.isSampled ? errorOfMean(byNodes) : 0),
   };
+}
+
+function errorOfMean(values: Float64Array): number {
+  const mean = values.reduce((total, value) => total + value, 0) / values.length;
+  return Math.sqrt(values.reduce((total, value) => total + (value - mean) ** 2, 0) / (values.length * (values.length - 1)));
 }
 
 /** Foundation, failure and delay cost of each draw and its weight: each draw once with its surprises found, once without. */
