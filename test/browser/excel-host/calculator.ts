@@ -8,30 +8,25 @@ import { BUSY, type CustomFunctions } from "./custom-functions.js";
 import { fromEngine, toEngine } from "./engine-values.js";
 import { fixedFormula, isInside, quotedSheet } from "./kinds/places.js";
 import type { Place } from "./model/chart-model.js";
-import { cellKey, type SheetModel } from "./model/sheet-model.js";
+import { cellKey, placeKey, type SheetModel } from "./model/sheet-model.js";
 import type { WorkbookModel } from "./model/workbook-model.js";
+import { StuckFormulas, type Stuck } from "./stuck-formulas.js";
 
 type FunctionClass = new (name: string) => BaseFunction;
-
-/** A formula that does not calculate until it is put right, as Excel leaves some. */
-export interface Stuck {
-  readonly shown: "#BUSY!" | "#NAME?";
-  /** what puts it right: calculating everything anew, or entering the formula anew */
-  readonly cure: "calculate" | "enter";
-}
 
 /** Calculates the formulas with the project's own engine; its cell functions are those of the page. */
 export class Calculator {
   private isDirty = false;
   private reasons = new Map<string, string>();
   private spills: { readonly sheet: SheetModel; readonly area: Area }[] = [];
-  private readonly stuck = new Map<string, Stuck & { readonly formula: string }>();
+  private readonly stuck: StuckFormulas;
 
   constructor(
     private readonly book: WorkbookModel,
     private readonly functions: CustomFunctions,
     private readonly namespace: string,
   ) {
+    this.stuck = new StuckFormulas(namespace);
     book.listeners.add(({ what }) => {
       if (what === "changed" || what === "added" || what === "deleted" || what === "renamed") this.isDirty = true;
     });
@@ -72,16 +67,14 @@ export class Calculator {
 
   everythingAgain(): void {
     this.functions.forget(() => true);
-    for (const [key, { cure }] of this.stuck) if (cure === "calculate") this.stuck.delete(key);
+    this.stuck.calculatedAnew();
     this.isDirty = true;
     this.bringUpToDate(true);
   }
 
   /** Leaves a formula in the state that Excel sometimes leaves one in. */
   stick(sheet: SheetModel, row: number, column: number, stuck: Stuck): void {
-    const formula = sheet.entries.get(cellKey(row, column))?.formula;
-    if (formula === undefined) throw new Error("No formula stands there.");
-    this.stuck.set(placeKey(sheet, row, column), { ...stuck, formula });
+    this.stuck.add(sheet, row, column, stuck);
     this.isDirty = true;
   }
 
@@ -126,20 +119,10 @@ export class Calculator {
     return [...sheet.entries].map(([key, { value, formula }]) => {
       const [row, column] = [Math.floor(key / 16_384), key % 16_384];
       if (formula === undefined) return { row, column, value };
-      const error = this.errorInstead(sheet, row, column, formula);
+      const error = this.stuck.errorOf(sheet, row, column, formula);
       if (error !== undefined) return { row, column, value: error };
       return { row, column, value: null, formula: formula.slice(1), placement: { kind: "spilling", area: { top: row, left: column, bottom: row, right: column } } };
     });
-  }
-
-  /** The error value of a formula that Excel does not calculate at all. */
-  private errorInstead(sheet: SheetModel, row: number, column: number, formula: string): ErrorValue | undefined {
-    const stuck = this.stuck.get(placeKey(sheet, row, column));
-    if (stuck !== undefined && stuck.formula === formula && sheet.entries.get(cellKey(row, column))?.formula === stuck.formula) return new ErrorValue(stuck.shown === "#BUSY!" ? BUSY : stuck.shown);
-    const words = formula.replace(/"(?:[^"]|"")*"/g, '""');
-    // the stored form of a name means nothing to Excel once it stands in a cell, nor does the other build's namespace
-    const foreign = this.namespace === "PROBE" ? "PROBEDEV" : "PROBE";
-    return /_xldudf_/i.test(words) || new RegExp(`(?<![\\w.])${foreign}\\.[A-Z]`, "i").test(words) ? new ErrorValue("#NAME?") : undefined;
   }
 
   private asBook(cells: readonly BookCell[][]): Book {
@@ -192,10 +175,6 @@ export class Calculator {
       }
     };
   }
-}
-
-function placeKey(sheet: SheetModel, row: number, column: number): string {
-  return `${sheet.id} ${row} ${column}`;
 }
 
 function published(value: CellValue): CellValue {

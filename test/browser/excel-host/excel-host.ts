@@ -32,6 +32,8 @@ export class ExcelHost {
   readonly sets: SupportedSets;
   /** every refusal that the page was given, in order */
   readonly refused: { readonly code: string; readonly message: string }[] = [];
+  /** whether the pane is shown, in the platform's word */
+  paneState = "Visible";
   /** what the page still has to be told */
   private readonly outbox: Message[] = [];
 
@@ -53,6 +55,7 @@ export class ExcelHost {
   /** Objects that the page makes by the name of a service. */
   service(name: string): Opened {
     if (name === "Microsoft.InternalService.AddinInternalService") return opened("AddinInternalService", undefined);
+    if (name === "Microsoft.AppRuntime.AppRuntimeService") return opened("AppRuntimeService", undefined);
     if (name === "Microsoft.ExcelServices.CustomFunctions") return opened("CustomFunctions", undefined);
     throw notModelled(`the service ${name}`);
   }

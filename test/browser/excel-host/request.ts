@@ -10,6 +10,8 @@ import { ACTION, PATH, type WireAction, type WireArguments, type WirePath, type 
 /** One synchronisation: opens the objects that it names and carries out its actions one by one, up to the first that fails. */
 export class Request {
   private readonly objects = new Map<number, Opened | null>();
+  /** the member at work, by which an error says where it happened */
+  private location = "";
 
   constructor(
     private readonly host: ExcelHost,
@@ -26,7 +28,7 @@ export class Request {
         reply.Results.push({ ActionId: action.Id, Value: action.ActionType === ACTION.trace ? null : this.act(action) });
       } catch (reason) {
         if (!(reason instanceof HostError)) throw reason;
-        const error = { Code: reason.code, Message: reason.message, ActionIndex: index, Location: action.Name, HttpStatusCode: 400 };
+        const error = { Code: reason.code, Message: reason.message, ActionIndex: index, Location: this.location, HttpStatusCode: 400 };
         this.host.refused.push({ code: reason.code, message: reason.message });
         return { ...reply, Error: error };
       }
@@ -42,7 +44,7 @@ export class Request {
       throw itemNotFound(`${action.Name} of a null object`);
     }
     const member = lowerFirst(action.Name);
-    this.host.faults.beforeAction(`${object.kind}.${member}`);
+    this.begin(object, member);
     switch (action.ActionType) {
       case ACTION.query:
         return query(object, action.QueryInfo ?? {}, this.host);
@@ -90,10 +92,10 @@ export class Request {
     const given = this.values(path.ArgumentInfo);
     if (path.ObjectPathType === PATH.indexer) return this.item(parent, given);
     const member = lowerFirst(path.Name);
+    this.begin(parent, member);
     const opens = kindOf(parent).open?.[member];
     if (opens === undefined) throw unknown(parent, member);
     this.requireSet(parent, member);
-    this.host.faults.beforeAction(`${parent.kind}.${member}`);
     const args = new Arguments(`${parent.kind}.${member}`, given);
     const object = opens(parent.target, args, this.host);
     args.refuseRest();
@@ -101,6 +103,7 @@ export class Request {
   }
 
   private item(parent: Opened, given: readonly unknown[]): Opened {
+    this.begin(parent, "getItem");
     const { item } = kindOf(parent);
     if (item === undefined || given.length !== 1) throw unknown(parent, "getItem");
     return item(parent.target, given[0], this.host);
@@ -128,6 +131,11 @@ export class Request {
     // an object that was asked for before may be another one now
     if (member === "delete") this.objects.delete(pathId);
     return value;
+  }
+
+  private begin({ kind }: Opened, member: string): void {
+    this.location = `${kind}.${member}`;
+    this.host.faults.beforeAction(this.location);
   }
 
   private requireSet({ kind }: Opened, member: string): void {

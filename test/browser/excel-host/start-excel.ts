@@ -33,6 +33,8 @@ export interface Excel {
   readonly complaints: string[];
   /** Does something to the workbook as a person would, and lets Excel calculate and tell the page. */
   person(act: (host: ExcelHost) => void): Promise<void>;
+  /** Presses a button of the ribbon, and waits until the page says that it is done. @param action  as the manifest names it */
+  command(action: string): Promise<void>;
   /** Waits until no cell function is on its way and nothing waits to be calculated. */
   calculated(): Promise<void>;
   close(): Promise<void>;
@@ -52,7 +54,13 @@ export async function startExcel(browser: Browser, options: ExcelOptions): Promi
     void page.evaluate((each) => (window as unknown as { excelDeliver(all: unknown): void }).excelDeliver(each), messages).catch(() => undefined);
   });
   await route(context, new URL(options.address).origin, complaints);
-  await context.exposeBinding("excelExecute", async (_source, method: number, text: string) => execute(host, method, text));
+  const commands = new Map<string, (status: number) => void>();
+  await context.exposeBinding("excelExecute", async (_source, method: number, text: string) => {
+    if (method !== COMMAND_COMPLETED) return execute(host, method, text);
+    const [id, status] = JSON.parse(text) as [string, number];
+    commands.get(id)?.(status);
+    return { status: 0, body: "" };
+  });
   await context.addInitScript({ content: `window.excelSettings = ${JSON.stringify({ matrix: JSON.stringify(sets), flags: SHARED_RUNTIME | CUSTOM_FUNCTIONS })};\n${await standIn()}` });
   await page.goto(options.address);
   return {
@@ -62,6 +70,14 @@ export async function startExcel(browser: Browser, options: ExcelOptions): Promi
     person: async (act) => {
       act(host);
       host.settle();
+    },
+    command: async (action) => {
+      const id = `command-${commands.size + 1}`;
+      const done = new Promise<number>((resolve) => commands.set(id, resolve));
+      const isHeard = await page.evaluate((payload) => (window as unknown as { excelFire(event: number, payload: unknown): boolean }).excelFire(39, payload), [id, action, JSON.stringify({ source: { id: action } })]);
+      if (!isHeard) throw new Error("The page does not listen to the ribbon yet.");
+      const status = await done;
+      if (status !== 0) throw new Error(`The page has no action ${action} (${status}).`);
     },
     calculated: async () => {
       const end = Date.now() + 20_000;
@@ -77,6 +93,7 @@ export async function startExcel(browser: Browser, options: ExcelOptions): Promi
 }
 
 const EXECUTE_RICH_API = 93;
+const COMMAND_COMPLETED = 94;
 const SHARED_RUNTIME = 1;
 const CUSTOM_FUNCTIONS = 2;
 /** a request of the runtime of custom functions carries this among its flags */

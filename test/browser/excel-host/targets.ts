@@ -13,6 +13,7 @@ export type ChartPartName =
 /** What an object of each class stands for. */
 export interface Targets extends Record<ChartPartName, ChartPart> {
   AddinInternalService: undefined;
+  AppRuntimeService: undefined;
   CustomFunctions: undefined;
   CustomFunctionsContainer: undefined;
   Workbook: WorkbookModel;

@@ -4,3 +4,15 @@ import type { Kind } from "../kind.js";
 export const addInServiceKind: Kind<undefined> = {
   call: { notifyActionHandlerReady: () => null },
 };
+
+const STATES = ["Inactive", "Background", "Visible"];
+
+/** The service that shows and hides the pane of a shared runtime. */
+export const appRuntimeKind: Kind<undefined> = {
+  call: {
+    getAppRuntimeState: (_target, _given, host) => host.paneState,
+    setAppRuntimeState: (_target, given, host) => {
+      host.paneState = given.choice(0, STATES, "");
+    },
+  },
+};

@@ -1,6 +1,6 @@
 import type { Kind, Opened } from "../kind.js";
 import type { KindName, Targets } from "../targets.js";
-import { addInServiceKind } from "./add-in-service-kind.js";
+import { addInServiceKind, appRuntimeKind } from "./add-in-service-kind.js";
 import { chartKind, chartsKind, seriesCollectionKind, seriesKind } from "./chart-kinds.js";
 import { chartPartKinds } from "./chart-part-kinds.js";
 import { customFunctionsKinds } from "./custom-functions-kinds.js";
@@ -17,6 +17,7 @@ const KINDS: { readonly [K in KindName]: Kind<Targets[K]> } = {
   ...chartPartKinds,
   ...customFunctionsKinds,
   AddinInternalService: addInServiceKind,
+  AppRuntimeService: appRuntimeKind,
   Application: applicationKind,
   Chart: chartKind,
   ChartCollection: chartsKind,

@@ -12,8 +12,8 @@ export function placeOn(book: WorkbookModel, sheet: SheetModel, address: string 
   const bang = address.lastIndexOf("!");
   const before = bang < 0 ? undefined : address.slice(0, bang).replace(/^=?'?|'$/g, "").replaceAll("''", "'");
   if (before !== undefined && book.findSheet(before) !== sheet) throw invalidArgument(`${address} is not on ${sheet.name}`);
-  const area = readReference(address.slice(bang + 1));
-  if (area !== undefined) return { sheet, area };
+  const reference = readReference(address.slice(bang + 1));
+  if (reference !== undefined) return { sheet, area: { top: reference.top, left: reference.left, bottom: reference.bottom, right: reference.right } };
   const named = [...sheet.names, ...book.names].find(({ name, range }) => name.toLowerCase() === address.toLowerCase() && range?.sheet === sheet);
   if (named?.range === undefined) throw invalidArgument(`${address} is no range`);
   return { sheet, area: named.range.area };

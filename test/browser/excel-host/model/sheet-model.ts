@@ -101,3 +101,8 @@ export class SheetModel {
 export function cellKey(row: number, column: number): number {
   return row * COLUMNS + column;
 }
+
+/** One cell of the workbook, whatever its sheet is called. */
+export function placeKey(sheet: SheetModel, row: number, column: number): string {
+  return `${sheet.id} ${row} ${column}`;
+}
