@@ -103,11 +103,10 @@ export class Calculator {
     this.reasons = new Map();
     this.spills = [];
     const cells = this.book.sheets.map((sheet) => this.cellsOf(sheet));
-    if (cells.flat().some(({ formula }) => formula !== undefined)) {
-      const calculation = new Calculation(this.asBook(cells), (reasons) => this.pageFunctions(reasons));
-      this.book.sheets.forEach((sheet, index) => this.fill(sheet, index, cells[index] ?? [], calculation, calculated.get(sheet)!));
-      calculation.dispose();
-    }
+    // to start the engine for a workbook without formulas would cost every write its time
+    const calculation = cells.flat().some(({ formula }) => formula !== undefined) ? new Calculation(this.asBook(cells), (reasons) => this.pageFunctions(reasons)) : undefined;
+    this.book.sheets.forEach((sheet, index) => this.fill(sheet, index, cells[index] ?? [], calculation, calculated.get(sheet)!));
+    calculation?.dispose();
     for (const [sheet, values] of calculated) {
       const isChanged = !isSame(values, sheet.calculated);
       sheet.calculated = values;
@@ -142,13 +141,13 @@ export class Calculator {
     };
   }
 
-  private fill(sheet: SheetModel, index: number, cells: readonly BookCell[], calculation: Calculation, into: Map<number, CellValue>): void {
+  private fill(sheet: SheetModel, index: number, cells: readonly BookCell[], calculation: Calculation | undefined, into: Map<number, CellValue>): void {
     for (const { row, column, value, formula } of cells) {
       if (formula === undefined) {
         if (sheet.entries.get(cellKey(row, column))?.formula !== undefined) into.set(cellKey(row, column), published(value));
         continue;
       }
-      const outcome = calculation.cell({ sheet: index, row, column });
+      const outcome = calculation?.cell({ sheet: index, row, column });
       if (outcome?.reason !== undefined) this.reasons.set(placeKey(sheet, row, column), outcome.reason);
       const values = outcome?.values ?? [[null]];
       const area = { top: row, left: column, bottom: row + values.length - 1, right: column + (values[0]?.length ?? 1) - 1 };

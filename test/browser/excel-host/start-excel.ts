@@ -50,7 +50,7 @@ export async function startExcel(browser: Browser, options: ExcelOptions): Promi
   const context = await browser.newContext({ viewport: options.viewport ?? { width: 320, height: 900 }, colorScheme: options.colorScheme ?? "light" });
   const page = await context.newPage();
   const complaints = listen(page);
-  const host = new ExcelHost({ sets, namespace: options.namespace ?? "PROBEDEV", metadata: options.metadata, blanks: options.blanks ?? 0 }, (messages) => {
+  const host = new ExcelHost({ sets, namespace: options.namespace ?? "PROBEDEV", metadata: options.metadata, blanks: options.blanks === undefined ? 0 : options.blanks }, (messages) => {
     void page.evaluate((each) => (window as unknown as { excelDeliver(all: unknown): void }).excelDeliver(each), messages).catch(() => undefined);
   });
   await route(context, new URL(options.address).origin, complaints);
