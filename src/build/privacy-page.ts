@@ -32,7 +32,7 @@ export function privacyPage(): string {
 ${paragraphs(PRIVACY)}</section>
 <section><h2>What is kept, and how to delete it</h2>
 <dl>${KEPT.map(([what, words]) => `<dt>${escaped(what)}</dt><dd>${escaped(words.slice(0, 1).toUpperCase() + words.slice(1))}</dd>`).join("")}</dl>
-${paragraphs(["Excel for the desktop keeps these in the storage of the browser inside it; removing the add-in does not empty that storage, the Run view does."])}</section>
+${paragraphs(["Excel for the desktop keeps these in the storage of the browser inside it; removing the add-in does not empty that storage; delete the runs in the Run view first."])}</section>
 <section><h2>Inside Excel</h2>
 ${paragraphs(INSIDE_EXCEL)}</section>
 <section><h2>The server</h2>

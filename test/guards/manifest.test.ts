@@ -1,10 +1,12 @@
-// @vitest-environment jsdom
-import { existsSync, readdirSync, readFileSync } from "node:fs";
+import { existsSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { OfficeAddinManifest } from "office-addin-manifest";
 import { beforeAll, describe, expect, it } from "vitest";
 import { formFrom } from "../../src/build/form.js";
 import { manifestFor } from "../../src/build/manifest.js";
 import { ROOT } from "./files.js";
-import { manifestFaults, type Build } from "./manifest.js";
+import { buildIn, manifestFaults, type Build } from "./manifest.js";
 
 const xml = readFileSync(`${ROOT}/manifest.xml`, "utf8");
 const { version } = JSON.parse(readFileSync(`${ROOT}/package.json`, "utf8")) as { version: string };
@@ -14,11 +16,7 @@ let build: Build;
 
 beforeAll(() => {
   if (!existsSync(`${ROOT}/dist/functions.js`)) throw new Error("There is no build to compare the manifest with; run: npm run build");
-  build = {
-    version,
-    read: (path) => (existsSync(`${ROOT}/dist/${path}`) ? readFileSync(`${ROOT}/dist/${path}`) : undefined),
-    scripts: readdirSync(`${ROOT}/dist`).filter((name) => name.endsWith(".js")).map((name) => readFileSync(`${ROOT}/dist/${name}`, "utf8")).join("\n"),
-  };
+  build = buildIn(`${ROOT}/dist`, version);
 });
 
 describe("the manifest", () => {
@@ -104,6 +102,18 @@ describe("the manifest", () => {
   it("refuses an address above 2,048 characters", () => {
     const long = `https://localhost:3000/${"x".repeat(2048)}`;
     expect(manifestFaults(xml.replaceAll("https://localhost:3000/help.html", long), build).join(" ")).toContain("longer than 2048");
+  });
+});
+
+describe("the platform's own reader, which works without a network,", () => {
+  it("reads in both forms what the add-in is", async () => {
+    const folder = mkdtempSync(join(tmpdir(), "manifest-"));
+    writeFileSync(join(folder, "manifest.xml"), released);
+    const [mine, theirs] = await Promise.all([`${ROOT}/manifest.xml`, join(folder, "manifest.xml")].map((path) => OfficeAddinManifest.readManifestFile(path)));
+    rmSync(folder, { recursive: true });
+    const common = { version: `${version}.0`, hosts: ["Workbook"], officeAppType: "TaskPaneApp", permissions: "ReadWriteDocument", defaultLocale: "en-US", providerName: "Probeworth founders" };
+    expect(mine).toMatchObject({ ...common, id: "adcf2c65-7c41-47eb-8c06-697bf6195e7f", displayName: "Probeworth (development)", defaultSettings: { sourceLocation: "https://localhost:3000/pane.html" } });
+    expect(theirs).toMatchObject({ ...common, id: "9d01fd15-6c5f-498c-a780-d730b1d90afc", displayName: "Probeworth", defaultSettings: { sourceLocation: `${form.base}pane.html` }, supportUrl: `${form.base}help.html` });
   });
 });
 

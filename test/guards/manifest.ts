@@ -1,4 +1,6 @@
+import { existsSync, readdirSync, readFileSync } from "node:fs";
 import { orderFaults, typeOf } from "./manifest-order.js";
+import { parsedXml } from "./parsed-page.js";
 
 /** What the add-in may ask of Excel at most: a higher floor shuts out perpetual Excel 2021. */
 const FLOOR: Readonly<Record<string, string>> = { SharedRuntime: "1.1", CustomFunctionsRuntime: "1.3", ExcelApi: "1.9" };
@@ -11,6 +13,23 @@ export interface Build {
   read(path: string): Uint8Array | undefined;
   /** every script of the add-in's page in one text */
   readonly scripts: string;
+}
+
+/**
+ * A build that lies in a folder.
+ *
+ * @param folder   that holds pane.html
+ * @param version  release in package.json
+ */
+export function buildIn(folder: string, version: string): Build {
+  return {
+    version,
+    read: (path) => (existsSync(`${folder}/${path}`) ? readFileSync(`${folder}/${path}`) : undefined),
+    scripts: readdirSync(folder)
+      .filter((name) => name.endsWith(".js"))
+      .map((name) => readFileSync(`${folder}/${name}`, "utf8"))
+      .join("\n"),
+  };
 }
 
 interface Page {
@@ -28,7 +47,7 @@ interface Page {
  * @returns      one sentence a fault
  */
 export function manifestFaults(xml: string, build: Build): string[] {
-  const document = new DOMParser().parseFromString(xml, "application/xml");
+  const document = parsedXml(xml);
   if (document.getElementsByTagName("parsererror").length > 0) return ["The manifest is not well-formed XML."];
   const all = [...document.getElementsByTagName("*")];
   const named = (name: string): Element[] => all.filter(({ localName }) => localName === name);
