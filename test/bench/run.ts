@@ -13,7 +13,7 @@ import { PeerProcess, peersAvailable } from "./peer-process.js";
 
 /** A list of cases cannot name the state of each; each is handed its own and no other's. */
 type AnyCase = BenchCase<never, never>;
-const CASES = [oneCount, costTable, firstCall, newPiles, sensitivity, draws, ...bandSolves, pileSolve, pileForm, pileFamilyCase, ...matrices, quasiRandom, ringMeans, prepare, oneElements, oneForm, savedAtModerate, savedAtHigh] as unknown as readonly AnyCase[];
+const CASES = [oneCount, costTable, firstCall, newPiles, sensitivity, ...draws, ...bandSolves, pileSolve, pileForm, pileFamilyCase, ...matrices, quasiRandom, ringMeans, prepare, oneElements, oneForm, savedAtModerate, savedAtHigh] as unknown as readonly AnyCase[];
 
 interface Spread {
   readonly low: number;

@@ -1,4 +1,7 @@
 import type { DamagePoint } from "../costs/damage.js";
+import { kernels } from "../numerics/chosen-kernels.js";
+import { exponential } from "../numerics/exponential.js";
+import type { Kernels, Room } from "../numerics/kernels.js";
 import type { Interaction } from "./group-interaction.js";
 import type { Plan } from "./plan.js";
 import { quadraticWidth } from "./second-order-terms.js";
@@ -37,112 +40,139 @@ export interface DistortionDraws {
   draw(moments: NodeMoments, values: Float64Array, found: FoundSurprises | undefined, interaction?: Interaction): void;
 }
 
-/** Loops run along the draws of a block, because there the numbers lie next to each other. */
-export function distortionDraws(plan: Plan, block: number): DistortionDraws {
+/** Draws that are looked at together: their rows stay in the nearest memory. */
+const together = 128;
+/** Places of the rows that the kernel `settle` reads: the rest's, a pile's and four neighbours'. */
+const placesWidth = 6;
+/** Its numbers: load, residual, and the quadratic, whose constant is with the mean. */
+const numbersWidth = 2 + quadraticWidth;
+
+/**
+ * Loops run along the draws, because there the numbers lie next to each other.
+ *
+ * @param block  draws a block, even
+ * @param using  the kernels
+ */
+export function distortionDraws(plan: Plan, block: number, using: Kernels = kernels()): DistortionDraws {
   const n = plan.piles.length;
-  const xi = new Float64Array(n * block);
-  const lnStiffness = new Float64Array(block);
-  const row = new Float64Array(block);
-  const settlement = new Float64Array(n * block);
-  const lengthened = new Float64Array(n * block);
-  const together = new Float64Array(n * block);
-  const places = new Float64Array(n * block);
   const distortion = new Float64Array(block);
   const foundDistortion = new Float64Array(block);
   const surprises = new Float64Array(block);
+  const places = new Float64Array(n * Math.min(block, together));
   return {
     distortion,
     foundDistortion,
     surprises,
     draw(moments, values, found, interaction) {
-      const { means, factor, residual } = moments;
+      const factors = interaction?.factors(moments.lengths);
       surprises.fill(0);
-      xi.fill(0);
-      for (let i = 0; i < n; i++) addRows(xi, i * block, factor, i * n, i + 1, values, block);
-      for (let i = 0; i < n; i++) {
-        const constant = means[i] + moments.quadratic[i * quadraticWidth];
-        for (let m = 0, a = i * block, z = (n + i) * block; m < block; m++, a++, z++) lnStiffness[m] = constant + xi[a] + residual[i] * values[z];
-        addQuadratic(lnStiffness, row, moments, i, plan.nearby[i], xi);
-        const { load } = plan.piles[i];
-        const at = i * block;
-        for (let m = 0; m < block; m++) settlement[at + m] = load * Math.exp(-lnStiffness[m]);
-        if (found === undefined) continue;
-        if (interaction !== undefined) places.fill(found.designPlace(i), at, at + block);
-        for (let m = 0; m < block; m++) {
-          lengthened[at + m] = settlement[at + m];
-          if (lnStiffness[m] + found.toTolerance[i] >= found.needed[i]) continue;
-          // Lengthened until the settlement is allowable, or to the longest length where that is not enough.
-          lengthened[at + m] = load * Math.exp(-Math.min(found.needed[i], lnStiffness[m] + found.toLongest[i]));
-          if (interaction !== undefined) places[at + m] = found.builtPlace(i, lnStiffness[m]);
-          surprises[m]++;
+      for (let from = 0; from < block; from += together) {
+        const draws = Math.min(block - from, together);
+        const at = layOut(n, plan.pairs.length, draws);
+        const room = using.room(at.end);
+        const { doubles } = room;
+        for (let d = 0; d < 2 * n; d++) doubles.set(values.subarray(d * block + from, d * block + from + draws), at.values + d * draws);
+        doubles.set(moments.factor, at.factors);
+        doubles.fill(0, at.ground, at.ground + n * draws);
+        for (let i = 0; i < n; i++) using.addRows(at.ground + i * draws, at.factors + i * n, i + 1, at.values, draws);
+        writeTables(room, at, plan, moments, draws);
+        for (let i = 0; i < n; i++) {
+          using.settle(at.ln, at.settlement + i * draws, at.numbers + i * numbersWidth, at.places + (i * placesWidth) / 2, draws);
+          if (found === undefined) continue;
+          if (interaction !== undefined) places.fill(found.designPlace(i), i * draws, (i + 1) * draws);
+          lengthen(doubles, at, i, draws, plan.piles[i].load, found, surprises.subarray(from), interaction === undefined ? undefined : places);
         }
+        let settled = at.settlement;
+        if (factors !== undefined) {
+          doubles.set(factors, at.factors);
+          doubles.fill(0, at.grouped, at.grouped + n * draws);
+          for (let i = 0; i < n; i++) using.addRows(at.grouped + i * draws, at.factors + i * n, n, at.settlement, draws);
+          settled = at.grouped;
+        }
+        using.largestDistortion(at.largest, settled, at.pairs, plan.pairs.length, draws);
+        distortion.set(doubles.subarray(at.largest, at.largest + draws), from);
+        if (found === undefined) continue;
+        settled = at.lengthened;
+        if (interaction !== undefined) {
+          const rows = n * draws;
+          interaction.settleDraws(doubles.subarray(settled, settled + rows), places, draws, doubles.subarray(at.grouped, at.grouped + rows));
+          settled = at.grouped;
+        }
+        using.largestDistortion(at.largest, settled, at.pairs, plan.pairs.length, draws);
+        foundDistortion.set(doubles.subarray(at.largest, at.largest + draws), from);
       }
-      if (interaction === undefined) {
-        largestDistortion(plan, settlement, block, distortion);
-        if (found !== undefined) largestDistortion(plan, lengthened, block, foundDistortion);
-        return;
-      }
-      const factors = interaction.factors(moments.lengths);
-      together.fill(0);
-      for (let i = 0; i < n; i++) addRows(together, i * block, factors, i * n, n, settlement, block);
-      largestDistortion(plan, together, block, distortion);
-      if (found === undefined) return;
-      interaction.settleDraws(lengthened, places, block, together);
-      largestDistortion(plan, together, block, foundDistortion);
     },
   };
 }
 
-function largestDistortion(plan: Plan, settlement: Float64Array, block: number, out: Float64Array): void {
-  out.fill(0);
-  for (const pair of plan.pairs) {
-    const a = pair.first * block;
-    const b = pair.second * block;
-    const inverse = 1 / pair.distance;
-    for (let m = 0; m < block; m++) {
-      const d = Math.abs(settlement[a + m] - settlement[b + m]) * inverse;
-      if (d > out[m]) out[m] = d;
-    }
-  }
+/** Where everything stands in the kernels' memory, behind one another. */
+interface Places {
+  readonly values: number;
+  readonly factors: number;
+  readonly ground: number;
+  readonly numbers: number;
+  readonly places: number;
+  readonly pairs: number;
+  readonly ln: number;
+  readonly settlement: number;
+  readonly lengthened: number;
+  readonly grouped: number;
+  readonly largest: number;
+  readonly end: number;
 }
 
-/** Adds to a row of draws the rows of a table times as many factors, four at a time: each pass over the draws costs more than its sums. */
-function addRows(out: Float64Array, to: number, factors: Float64Array, first: number, count: number, table: Float64Array, block: number): void {
-  let k = 0;
-  for (; k + 3 < count; k += 4) {
-    const f0 = factors[first + k], f1 = factors[first + k + 1], f2 = factors[first + k + 2], f3 = factors[first + k + 3];
-    const z0 = k * block, z1 = z0 + block, z2 = z1 + block, z3 = z2 + block;
-    for (let m = 0; m < block; m++) out[to + m] += f0 * table[z0 + m] + f1 * table[z1 + m] + f2 * table[z2 + m] + f3 * table[z3 + m];
-  }
-  for (; k < count; k++) {
-    const f = factors[first + k];
-    for (let m = 0, z = k * block; m < block; m++) out[to + m] += f * table[z + m];
-  }
+function layOut(n: number, pairs: number, draws: number): Places {
+  const rows = n * draws;
+  const factors = 2 * rows;
+  const ground = factors + n * n;
+  const numbers = ground + rows;
+  const places = numbers + n * numbersWidth;
+  const ofPairs = places + (n * placesWidth) / 2;
+  const ln = ofPairs + 2 * pairs;
+  const settlement = ln + draws;
+  const lengthened = settlement + rows;
+  const grouped = lengthened + rows;
+  const largest = grouped + rows;
+  return { values: 0, factors, ground, numbers, places, pairs: ofPairs, ln, settlement, lengthened, grouped, largest, end: largest + draws };
 }
 
-/** A term of the quadratic whose typical size is below this changes a settlement by less than 0.01 %. */
-const negligible = 1e-4;
-
-/** Adds the linear and quadratic terms of a pile's and its neighbours' deviations. */
-function addQuadratic(out: Float64Array, row: Float64Array, moments: NodeMoments, pile: number, near: readonly number[], xi: Float64Array): void {
-  const { quadratic, covariance, means } = moments;
+/** What the kernels are told of each pile and each pair. */
+function writeTables({ doubles, ints }: Room, at: Places, plan: Plan, { means, quadratic, residual }: NodeMoments, draws: number): void {
   const n = means.length;
-  const block = out.length;
-  const at = pile * quadraticWidth;
-  let next = at + 6;
-  for (let a = 0; a < near.length; a++) {
-    const variance = covariance[near[a] * n + near[a]];
-    const linear = quadratic[at + 1 + a];
-    let used = Math.abs(linear) * Math.sqrt(variance) > negligible;
-    row.fill(linear);
-    for (let e = 0; e <= a; e++) {
-      const factor = quadratic[next++];
-      if (Math.abs(factor) * Math.sqrt(variance * covariance[near[e] * n + near[e]]) <= negligible) continue;
-      used = true;
-      for (let m = 0, x = near[e] * block; m < block; m++, x++) row[m] += factor * xi[x];
-    }
-    if (!used) continue;
-    for (let m = 0, x = near[a] * block; m < block; m++, x++) out[m] += row[m] * xi[x];
+  for (let i = 0; i < n; i++) {
+    const number = at.numbers + i * numbersWidth;
+    doubles[number] = plan.piles[i].load;
+    doubles[number + 1] = residual[i];
+    for (let k = 0; k < quadraticWidth; k++) doubles[number + 2 + k] = quadratic[i * quadraticWidth + k];
+    doubles[number + 2] += means[i];
+    doubles[number + 3] += 1; // the pile is the first of its neighbours: its own deviation itself
+    const place = 2 * at.places + i * placesWidth;
+    ints[place] = at.values + (n + i) * draws;
+    // Where a neighbour is missing the pile stands in for it, times zero.
+    for (let a = 0; a < placesWidth - 1; a++) ints[place + 1 + a] = at.ground + (plan.nearby[i][a] ?? i) * draws;
+  }
+  plan.pairs.forEach(({ first, second, distance }, k) => {
+    ints[2 * (at.pairs + 2 * k)] = first;
+    ints[2 * (at.pairs + 2 * k) + 1] = second;
+    doubles[at.pairs + 2 * k + 1] = 1 / distance;
+  });
+}
+
+/** Settlements of a pile with its surprises lengthened until the settlement is allowable, or to the longest length where that is not enough. */
+function lengthen(
+  doubles: Float64Array, at: Places, pile: number, draws: number, load: number, found: FoundSurprises, surprises: Float64Array, places: Float64Array | undefined,
+): void {
+  const row = pile * draws;
+  const needed = found.needed[pile];
+  const toTolerance = found.toTolerance[pile];
+  const toLongest = found.toLongest[pile];
+  doubles.copyWithin(at.lengthened + row, at.settlement + row, at.settlement + row + draws);
+  for (let m = 0; m < draws; m++) {
+    const ln = doubles[at.ln + m];
+    if (ln + toTolerance >= needed) continue;
+    doubles[at.lengthened + row + m] = load * exponential(-Math.min(needed, ln + toLongest));
+    if (places !== undefined) places[row + m] = found.builtPlace(pile, ln);
+    surprises[m]++;
   }
 }
 

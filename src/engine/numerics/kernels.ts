@@ -29,4 +29,34 @@ export interface Kernels {
   forward(tiles: number, rows: number, tileRows: number, firstRow: number, right: number, columns: number): void;
   /** The second half: times the inverse of the factor's transpose. */
   backward(tiles: number, rows: number, tileRows: number, firstRow: number, right: number, columns: number): void;
+  /**
+   * Adds to a row of draws the rows of a table times as many factors, four at a time.
+   *
+   * @param out      place of the row
+   * @param factors  place of the factors
+   * @param count    number of factors
+   * @param table    place of the table, count x draws
+   * @param draws    even
+   */
+  addRows(out: number, factors: number, count: number, table: number, draws: number): void;
+  /**
+   * ln stiffness and settlement of a pile in each draw: constant + residual z + linear' x + x' quadratic x, and load times e to its negative.
+   *
+   * @param ln          place of a row for ln stiffness
+   * @param settlement  place of a row for settlement
+   * @param numbers     place of load, residual, constant, 5 linear and 15 quadratic coefficients (row by row of the lower triangle)
+   * @param places      place of the table of 6 ints: the places of the rows z and x of the pile and its neighbours
+   * @param draws       even
+   */
+  settle(ln: number, settlement: number, numbers: number, places: number, draws: number): void;
+  /**
+   * Largest angular distortion in each draw.
+   *
+   * @param out         place of a row
+   * @param settlement  place of the settlements, piles x draws
+   * @param pairs       place of the table of pairs: two ints, the numbers of the piles, and a double, one over their distance
+   * @param count       number of pairs
+   * @param draws       even
+   */
+  largestDistortion(out: number, settlement: number, pairs: number, count: number, draws: number): void;
 }

@@ -24,7 +24,7 @@ export function vectorKernels(): Kernels | undefined {
   } catch {
     return undefined; // refused or not understood: JavaScript gives the same answers
   }
-  const { memory, factor, forward, backward } = exports;
+  const { memory, ...loops } = exports;
   let room: Room = viewsOf(memory.buffer);
   return {
     room(doubles) {
@@ -32,7 +32,7 @@ export function vectorKernels(): Kernels | undefined {
       memory.grow(Math.ceil((8 * (doubles - room.doubles.length)) / PAGE)); // takes the bytes from all earlier views
       return (room = viewsOf(memory.buffer));
     },
-    factor, forward, backward,
+    ...loops,
   };
 }
 

@@ -8,6 +8,9 @@ import type { Plan } from "../../../src/engine/decision/plan.js";
 import { preparedSite } from "../../../src/engine/decision/prepared-site.js";
 import { quadraticWidth } from "../../../src/engine/decision/second-order-terms.js";
 import { standardDraws } from "../../../src/engine/decision/standard-draws.js";
+import type { Kernels } from "../../../src/engine/numerics/kernels.js";
+import { scalarKernels } from "../../../src/engine/numerics/scalar-kernels.js";
+import { vectorKernels } from "../../../src/engine/numerics/vector-kernels.js";
 import type { Problem } from "../../../src/engine/index.js";
 import type { BenchCase } from "../bench-case.js";
 import { demonstrationProblem } from "./demonstration.js";
@@ -62,15 +65,15 @@ function spreadOut({ plan, moments }: State): { linear: Float64Array; triangle: 
 }
 
 /** What most of a count's time goes into: the piles' joint ground drawn, settled, and priced. */
-export const draws: BenchCase<State, number> = {
-  name: "draws of one count",
+const drawn = (name: string, using: Kernels): BenchCase<State, number> => ({
+  name: `draws of one count, ${name}`,
   size: "12 piles, 32 nodes of 128 draws: factor, second-order term, settlement, distortion, damage",
   rounds: 41,
   target: { ratio: 1.5 },
   setup,
   run: ({ problem, plan, moments, weights, draws: values, block }) => {
     const { damage, value } = problem.building;
-    const { distortion, draw } = distortionDraws(plan, block);
+    const { distortion, draw } = distortionDraws(plan, block, using);
     const width = 2 * plan.piles.length * block;
     let failure = 0;
     for (let node = 0; node < moments.length; node++) {
@@ -104,8 +107,10 @@ export const draws: BenchCase<State, number> = {
       };
     },
     agree: (ours, [theirs]) => {
-      // numpy keeps the terms that ours leaves out, each below 0.01 % of a settlement
-      if (!(Math.abs(ours / theirs - 1) < 1e-3)) throw new Error(`numpy prices failure at ${theirs}, we at ${ours}.`);
+      if (!(Math.abs(ours / theirs - 1) < 1e-12)) throw new Error(`numpy prices failure at ${theirs}, we at ${ours}.`);
     },
   },
-};
+});
+
+/** In both kinds of kernels; Node has both. */
+export const draws = [drawn("WebAssembly", vectorKernels()!), drawn("JavaScript", scalarKernels())] as const;
