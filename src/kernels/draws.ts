@@ -30,7 +30,8 @@ function exponential(value: v128): v128 {
   p = f64x2.add(f64x2.mul(p, r), f64x2.splat(1.6666666666666666e-1));
   p = f64x2.add(f64x2.mul(p, r), f64x2.splat(0.5));
   const near = f64x2.add(f64x2.splat(1), f64x2.add(r, f64x2.mul(f64x2.mul(r, r), p)));
-  return f64x2.mul(near, i64x2.add(i64x2.shl(shifted, 52), i64x2.splat(0x3ff0000000000000)));
+  const power = f64x2.mul(near, i64x2.add(i64x2.shl(shifted, 52), i64x2.splat(0x3ff0000000000000)));
+  return v128.andnot(power, f64x2.lt(value, f64x2.splat(LEAST)));
 }
 
 /** See `Kernels.addRows`. */

@@ -19,13 +19,13 @@ for (let k = MIDDLE + 1; k < POWERS.length; k++) POWERS[k] = 2 * POWERS[k - 1];
  *
  * e^x = 2^k e^r, with k the whole number nearest to x / ln 2 and e^r by its series to the 13th power, whose rest is below 2^-57.
  *
- * @param value  x; beyond -708 and 708 it is taken as these, so that neither 0 nor Infinity comes out
- * @returns e^x, within one unit in the last place
+ * @param value  x; above 708 it is taken as that, so that Infinity never comes out
+ * @returns e^x, within one unit in the last place; 0 below -708, where numbers lose their digits and processors their speed
  * @source reduction of the argument in two parts: Cody & Waite (1980), Software Manual for the Elementary Functions (method only)
  */
 export function exponential(value: number): number {
-  const low = value < LEAST ? LEAST : value;
-  const x = MOST < low ? MOST : low;
+  if (value < LEAST) return 0;
+  const x = MOST < value ? MOST : value;
   const k = x * 1.4426950408889634 + ROUNDER - ROUNDER;
   const r = x - k * LN2_HIGH - k * LN2_LOW;
   let p = 1.6059043836821613e-10;

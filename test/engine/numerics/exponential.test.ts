@@ -19,11 +19,12 @@ describe("exponential", () => {
     expect(errors.filter((error) => error <= 0.5).length / errors.length).toBeGreaterThan(0.85);
   });
 
-  it("takes what lies beyond the range as its ends, and knows 0", () => {
+  it("stays finite above the range, is 0 below it, and knows 0", () => {
     expect(exponential(0)).toBe(1);
     expect(exponential(-0)).toBe(1);
     for (const far of [709, 1e300, Infinity]) expect(exponential(far)).toBe(exponential(708));
-    for (const far of [-709, -1e300, -Infinity]) expect(exponential(far)).toBe(exponential(-708));
+    for (const far of [-708.0001, -1e300, -Infinity]) expect(exponential(far)).toBe(0);
+    expect(exponential(Number.NaN)).toBeNaN();
     expect(exponential(708)).toBeLessThan(Infinity);
     expect(exponential(-708)).toBeGreaterThan(0);
   });
