@@ -7,12 +7,13 @@ import { fileURLToPath } from "node:url";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { merge } from "../../src/formula/simulation/merge.js";
 import { progressText } from "../../src/formula/simulation/progress-line.js";
-import { simulate } from "../../src/formula/simulation/simulate.js";
+import { simulate, simulationThreads } from "../../src/formula/simulation/simulate.js";
 import { readSimulateCall } from "../../src/formula/simulation/simulate-call.js";
 import type { Terminal } from "../../src/formula/simulation/terminal.js";
 import { saveState } from "../../src/jobs/simulation-state.js";
 import { stateOfText, stateText } from "../../src/jobs/state-text.js";
 import { newWorkbook } from "../../src/formula/xlsx/new-workbook.js";
+import { quickThreads } from "./quick-threads.js";
 import { smallSiteCsv, smallSiteRows, smallTask } from "./small-site.js";
 
 const ROOT = fileURLToPath(new URL("../..", import.meta.url));
@@ -27,7 +28,7 @@ interface Said {
 }
 
 /** Carries out a command in this process; Ctrl-C is pressed once the words are heard on standard error. */
-async function said(command: typeof simulate, words: readonly string[], stopAt?: RegExp): Promise<Said> {
+async function said(command: typeof simulate, words: readonly string[], stopAt?: RegExp, threads = quickThreads): Promise<Said> {
   let [out, err] = ["", ""];
   const pressed: (() => void)[] = [];
   const terminal: Terminal = {
@@ -42,7 +43,7 @@ async function said(command: typeof simulate, words: readonly string[], stopAt?:
       return () => void pressed.splice(0);
     },
   };
-  const code = await command(words, terminal);
+  const code = await command(words, terminal, threads);
   return { code, out, err };
 }
 
@@ -58,7 +59,7 @@ describe("a run in the terminal", () => {
   let whole: Said;
   beforeAll(async () => {
     writeFileSync(SITE, smallSiteCsv());
-    whole = await simulated(...SOON, "--out", at("new.xlsx"), "--state", at("whole.state"));
+    whole = await said(simulate, [...SOON, "--out", at("new.xlsx"), "--state", at("whole.state")], undefined, simulationThreads);
   }, 120_000);
 
   it("prints the table with its stamp and writes it beside the site block in a new workbook", async () => {
@@ -233,14 +234,21 @@ describe("the words after the command", () => {
   });
 });
 
-// The whole way through the shell's door: the script, both streams, the signal and the exit code.
+// The whole way through the shell's door: the script as npm runs it, both streams, the signal and the exit code. A launcher that ends a
+// busy process by force after Ctrl-C would lose what is done.
 it("hears Ctrl-C as a process of its own", async () => {
   writeFileSync(SITE, smallSiteCsv());
-  const child = spawn(process.execPath, ["node_modules/tsx/dist/cli.mjs", "src/formula/simulation/simulate-main.ts", "--book", SITE, "--realisations", "1000", "--state", at("signal.state")], { cwd: ROOT });
+  const { scripts } = JSON.parse(readFileSync(join(ROOT, "package.json"), "utf8")) as { scripts: { simulate: string } };
+  const [program, ...script] = scripts.simulate.split(" ");
+  expect(program).toBe("node");
+  const child = spawn(process.execPath, [...script, "--book", SITE, "--realisations", "1000", "--state", at("signal.state")], { cwd: ROOT });
   let err = "";
+  let isPressed = false;
   child.stderr.on("data", (piece: Buffer) => {
     err += piece.toString();
-    if (/ %: /.test(err)) child.kill("SIGINT");
+    if (isPressed || !/ %: /.test(err)) return;
+    isPressed = true;
+    child.kill("SIGINT");
   });
   const code = await new Promise((resolve) => child.on("close", resolve));
   expect(code).toBe(130);

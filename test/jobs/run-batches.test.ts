@@ -117,9 +117,9 @@ describe("faults", () => {
 
   it("replaces a thread that no longer answers", async () => {
     const set = trap("elements", 3, "hang");
-    const { end, progress } = await redone({ seed: SEED, busy: { elements: 60 }, trap: set }, nodeThreads(ENTRY, 1), { longestWait: 6_000 });
+    const { end, progress } = await redone({ seed: SEED, busy: { elements: 60 }, trap: set }, nodeThreads(ENTRY, 1), { longestWait: 4_000 });
     expect(end).toMatchObject({ kind: "done", table: straight(32) });
-    expect(progress.map(({ notice }) => notice).join(" ")).toContain("it has not answered for 6 seconds.");
+    expect(progress.map(({ notice }) => notice).join(" ")).toContain("it has not answered for 4 seconds.");
   }, 60_000);
 
   it("tries a realisation again that failed once, and gives up with the reason where it always fails, keeping the others", async () => {
