@@ -18,6 +18,7 @@ export { prepareSimulation, type Simulation } from "./simulation/prepare.js";
 export { simulateElements, simulateForm } from "./simulation/simulate.js";
 export { outcomeColumns } from "./simulation/outcome.js";
 export { estimate, lengthPercentiles } from "./simulation/estimate.js";
-export { growthWanted, nextBatch, usualRegret, type SimulationTarget, type Totals } from "./simulation/next-batch.js";
+export { growthWanted, nextBatch, usualRegret, type SimulationTarget } from "./simulation/next-batch.js";
+export { mostRealisations, type Totals } from "./simulation/kept-rows.js";
 export type { SimulationRow, SimulationTable } from "./simulation/simulation-table.js";
 export type { SimulationTask } from "./simulation/task.js";

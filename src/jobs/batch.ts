@@ -4,8 +4,8 @@ import type { RowRun, Totals } from "./realisations.js";
 export interface Look<Table> {
   /** undefined while there are too few for one */
   readonly table: Table | undefined;
-  /** at a checkpoint, where the next one is, counted from index 0: nothing smaller and something larger; or "enough" */
-  readonly next: Totals | "enough" | undefined;
+  /** at a checkpoint, where the next one is, counted from index 0: nothing smaller and something larger; "enough"; or "full" where no more may be kept */
+  readonly next: Totals | "enough" | "full" | undefined;
   /** where the run is likely to end, counted from index 0; undefined while nobody can tell */
   readonly projected: Totals | undefined;
 }

@@ -13,6 +13,7 @@ const LOOK_EVERY = 500;
 /** Share of the time that looks may take beside the computing; a checkpoint is looked at whatever it costs. */
 const LOOK_SHARE = 0.1;
 const LONGEST_HOURS = 24;
+const FULL = "This run has as many grounds as fit into its memory, and a wrong choice may still cost more than the sum that was asked for. Accept a larger sum, or name fewer counts or ways: each takes its share of the memory.";
 const OTHER_ARITHMETIC = "The realisations that were kept come out otherwise here: they were made by another version of the program, or on a machine whose arithmetic differs in the last digit. Go on where they were made, or start anew.";
 
 /**
@@ -116,9 +117,10 @@ class Run<Table> implements BatchRun<Table>, Office, Desk<Table> {
     if (!this.hasEnded && !this.clerk.isBusy && elements >= this.checkpoint.elements && form >= this.checkpoint.form) this.clerk.ask({ totals: this.checkpoint, isCheckpoint: true });
   }
 
-  private goOn(next: Totals | "enough" | undefined): void {
+  private goOn(next: Look<Table>["next"]): void {
     if (next === undefined) throw new Error("nothing was decided at a checkpoint");
     if (next === "enough") return this.finish("done", "");
+    if (next === "full") return this.finish("too long", FULL);
     const { elements, form } = this.checkpoint;
     if (next.elements < elements || next.form < form || same(next, this.checkpoint)) {
       throw new Error(`after ${elements} and ${form} realisations ${next.elements} and ${next.form} were asked for`);

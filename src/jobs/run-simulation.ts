@@ -1,4 +1,4 @@
-import type { SimulationTable, SimulationTarget, SimulationTask } from "../engine/index.js";
+import { mostRealisations, type SimulationTable, type SimulationTarget, type SimulationTask } from "../engine/index.js";
 import type { BatchProgress, BatchRun, BatchSettings } from "./batch.js";
 import { runBatches } from "./run-batches.js";
 import type { PartTarget } from "./simulation-trade.js";
@@ -24,6 +24,7 @@ const MOST = 100_000;
  */
 export function runSimulation(task: SimulationTask, target: SimulationTarget, settings: BatchSettings, threads: Threads, on: (progress: BatchProgress<SimulationTable>) => void): BatchRun<SimulationTable> {
   requireTarget(target);
+  if ("realisations" in target) requireRoom(task, target.realisations);
   return runBatches({ task, target, first: 0, most: "realisations" in target ? target.realisations : Infinity }, settings, threads, on);
 }
 
@@ -32,10 +33,27 @@ export function runSimulation(task: SimulationTask, target: SimulationTarget, se
  *
  * @param from  index of the first realisation
  * @param to    index behind the last
+ * @throws {TargetError} more than a part may keep
  */
 export function runPart(task: SimulationTask, from: number, to: number, settings: BatchSettings, threads: Threads, on: (progress: BatchProgress<SimulationTable>) => void): BatchRun<SimulationTable> {
+  requireRoom(task, to - from);
   return runBatches({ task, target: { to } satisfies PartTarget, first: from, most: to }, settings, threads, on);
 }
+
+/**
+ * Refuses more realisations than fit into memory before anything is started.
+ *
+ * @throws {TargetError} with what fits
+ */
+function requireRoom(task: SimulationTask, realisations: number): void {
+  const most = mostRealisations(task).elements;
+  if (realisations <= most) return;
+  const { variants, counts } = task;
+  const cases = variants.length === 1 ? `${counts.length} counts` : `${variants.length} ways with ${counts.length} counts each`;
+  throw new TargetError(`The number of realisations is ${thousands(realisations)}; of ${cases} at most ${thousands(most)} fit into memory at once. Ask for fewer, or name fewer counts or ways.`);
+}
+
+const thousands = (n: number): string => n.toLocaleString("en-US");
 
 /**
  * Refuses a target before anything is started.

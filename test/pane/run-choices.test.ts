@@ -72,6 +72,7 @@ describe("the choices of a run", () => {
 
   it.each<[string, Partial<RunChoices>, Refusal["part"], RegExp]>([
     ["counts that are none", { counts: "2.5" }, "counts", /Counts/],
+    ["more grounds than fit into memory", { stop: "number", realisations: "90000" }, "target", /^With 13 cases \(ways times counts\) at most 36,002 grounds fit into memory\. Ask for fewer, or name fewer counts or ways\.$/],
     ["no method", { methods: [] }, "methods", /at least one method/],
     ["no rule", { rules: [] }, "rules", /at least one design rule/],
     ["more ways than can be looked at", { methods: METHODS.slice(0, 4).map(({ name }) => name), rules: ["geometric", "quartile"] }, "methods", /are 8 ways; at most 6/],

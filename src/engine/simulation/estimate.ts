@@ -31,8 +31,12 @@ export function estimate(task: SimulationTask, elements: readonly Float64Array[]
   const size = count * outcomeColumns.length;
   requireDomain(elements.every((row) => row.length === 2 * size) && form.every((row) => row.length === size), "A realisation", "one of another task", "of this task");
   const useful = elements.length >= 2 ? elements : [];
-  const samples = rowSamples(useful, form, count);
-  const estimated = samples.map(estimateRow);
+  const piles = task.variants[0].problem.building.piles.length;
+  const estimated = Array.from({ length: count }, (_, k) => {
+    const samples = rowSamples(useful, form, k, count);
+    const seen = { elements: howManyAbove(samples.elements[6]), form: howManyAbove(samples.alone[6]) };
+    return { ...estimateRow(samples), seen, meanLengths: meanLengthPercentiles(samples, piles) };
+  });
   const covariance = totalCovariance(estimated, useful.length, form.length);
   const alternatives = task.variants.flatMap((variant, v) => task.counts.map((holes) => ({ v, variant, holes })));
   const investigation = alternatives.map(({ variant, holes }) => investigationOf(variant, holes));
@@ -43,8 +47,7 @@ export function estimate(task: SimulationTask, elements: readonly Float64Array[]
   const rows = alternatives.map(({ v, variant, holes }, k): SimulationRow => {
     const [foundation, failure, delay, surprises, overDesign, totalMetres, damaged, tooShort] = estimated[k].means;
     const best = indexOfLeast(totals, v * task.counts.length, task.counts.length);
-    const seen = { elements: howManyAbove(samples[k].elements[6]), form: howManyAbove(samples[k].alone[6]) };
-    const { unexplained, total } = estimated[k];
+    const { unexplained, total, seen } = estimated[k];
     const plain = covarianceOf(total, total);
     const left = covarianceOf(unexplained, unexplained);
     return {
@@ -57,7 +60,7 @@ export function estimate(task: SimulationTask, elements: readonly Float64Array[]
       failureChanceAtMost: seen.elements + seen.form === 0 ? Math.min(3 / (useful.length + form.length), 1) : undefined,
       carbon: concreteCarbon(variant.problem.prices, variant.problem.piles.diameter, totalMetres.mean),
       surprises: Math.max(surprises.mean, 0), overDesign: Math.max(overDesign.mean, 0), totalMetres: totalMetres.mean, tooShortChance: clamp(tooShort.mean),
-      meanLengths: meanLengthPercentiles(samples[k], variant.problem.building.piles.length),
+      meanLengths: estimated[k].meanLengths,
       chanceCheapest: all.chances[k], regret: all.regrets[k],
       chanceWithin: within[v].chances[k - v * task.counts.length],
       notDistinguishable: totals[k] - totals[best] <= 2 * errorOfDifference(covariance, count, k, best),

@@ -3,15 +3,10 @@ import { requireDomain } from "../numerics/domain-error.js";
 import { covarianceOf } from "./control-variate.js";
 import { estimate, estimateRow, type EstimatedRow } from "./estimate.js";
 import { solvesPerPile } from "./ground-under-piles.js";
+import { mostRealisations, type Totals } from "./kept-rows.js";
 import { rowSamples } from "./row-samples.js";
 import type { SimulationTable } from "./simulation-table.js";
 import { investigationOf, type SimulationTask } from "./task.js";
-
-/** How many realisations of each kind there shall be in all. */
-export interface Totals {
-  readonly elements: number;
-  readonly form: number;
-}
 
 /** Where a run ends: an expected regret of the cheapest row (money), or a number of realisations by finite elements. */
 export type SimulationTarget = { readonly regret: number } | { readonly realisations: number };
@@ -32,11 +27,13 @@ const mostWork = { number: 3, precision: 10 };
  *
  * @param elements  realisations so far, in order of the index; as many as the last checkpoint wanted
  * @param form      the same by the form alone
- * @returns         totals at the next checkpoint, none smaller than before; or "enough". Nothing but the arguments decides, and
- *   with a number of realisations nothing but that number and the pilot's realisations: a run continued to more gives what one long run would have
+ * @param most      of each that a run may keep
+ * @returns         totals at the next checkpoint, none smaller than before; "enough"; or "full" where a run may not keep what the
+ *   precision needs. Nothing but the arguments decides, and with a number of realisations nothing but that number and the pilot's
+ *   realisations: a run continued to more gives what one long run would have
  * @throws {DomainError} the target is no positive number
  */
-export function nextBatch(task: SimulationTask, target: SimulationTarget, elements: readonly Float64Array[], form: readonly Float64Array[]): Totals | "enough" {
+export function nextBatch(task: SimulationTask, target: SimulationTarget, elements: readonly Float64Array[], form: readonly Float64Array[], most = mostRealisations(task)): Totals | "enough" | "full" {
   const done: Totals = { elements: elements.length, form: form.length };
   if ("realisations" in target) {
     const wanted = target.realisations;
@@ -44,7 +41,7 @@ export function nextBatch(task: SimulationTask, target: SimulationTarget, elemen
     const first: Totals = { elements: Math.min(pilot.elements, wanted), form: pilot.form };
     if (done.elements < first.elements || done.form < first.form) return largest(done, first);
     const { ratio } = split(task, elements.slice(0, first.elements), form.slice(0, first.form), mostWork.number);
-    const last: Totals = { elements: wanted, form: Math.max(first.form, Math.ceil(wanted * ratio)) };
+    const last: Totals = { elements: wanted, form: Math.max(first.form, Math.min(Math.ceil(wanted * ratio), most.form)) };
     return done.elements >= last.elements && done.form >= last.form ? "enough" : largest(done, last);
   }
   requireDomain(target.regret > 0 && target.regret < Infinity, "Expected regret", target.regret, "a sum above 0");
@@ -54,14 +51,21 @@ export function nextBatch(task: SimulationTask, target: SimulationTarget, elemen
   const { ratio, ofElements, ofForm } = split(task, elements, form, mostWork.precision);
   const factor = Math.min(Math.max(growthWanted(table, target.regret), 1.1), growth);
   // Totals n and N = ratio n that leave the variance of the decision divided by the factor.
-  const variance = (ofElements / done.elements + ofForm / done.form) / factor;
-  const n = variance > 0 ? (ofElements + ofForm / ratio) / variance : fewest;
+  const now = ofElements / done.elements + ofForm / done.form;
+  const variance = now / factor;
+  const isFull = done.elements >= most.elements || (done.form >= most.form && ofForm / done.form >= now / growthWanted(table, target.regret));
+  if (isFull) return "full";
+  const unbound = variance > 0 ? (ofElements + ofForm / ratio) / variance : fewest;
+  // What the form may not give for want of room, the elements must.
+  const left = variance - ofForm / most.form;
+  const n = unbound * ratio <= most.form ? unbound : left > 0 ? ofElements / left : Infinity;
   const next: Totals = {
-    elements: Math.max(fewest, Math.min(Math.ceil(n), growth * done.elements)),
-    form: Math.min(Math.ceil(n * ratio), growth * growth * done.form),
+    elements: Math.max(fewest, Math.min(Math.ceil(n), growth * done.elements, most.elements)),
+    form: Math.min(Math.ceil(n * ratio), growth * growth * done.form, most.form),
   };
   const grown = largest(done, next);
-  return grown.elements + grown.form > done.elements + done.form ? grown : { elements: done.elements + 1, form: done.form + leastForm };
+  if (grown.elements + grown.form > done.elements + done.form) return grown;
+  return { elements: done.elements + 1, form: Math.min(done.form + leastForm, most.form) };
 }
 
 /**
@@ -92,7 +96,7 @@ export function usualRegret({ variants }: SimulationTask): number {
  */
 function split(task: SimulationTask, elements: readonly Float64Array[], form: readonly Float64Array[], most: number): { ratio: number; ofElements: number; ofForm: number } {
   const count = task.variants.length * task.counts.length;
-  const rows = rowSamples(elements, form, count).map(estimateRow);
+  const rows = Array.from({ length: count }, (_, k) => estimateRow(rowSamples(elements, form, k, count)));
   const { rows: table, cheapest } = estimate(task, elements, form);
   let ofElements = 0;
   let ofForm = 0;

@@ -15,6 +15,7 @@ export interface Simulation {
   readonly field: SiteField;
   readonly errors: ErrorDraws;
   readonly variants: readonly Variant[];
+  /** undefined where no variant wants it */
   readonly interaction: Interaction | undefined;
   /** ln head stiffness of the last realisation by the form and by finite elements, piles x lengths */
   readonly byForm: Float64Array;
@@ -42,7 +43,7 @@ export function prepareSimulation(task: SimulationTask): Simulation {
     field: siteField(ground.terms, { plan, rings: ground.rings, levelBounds: ground.levelBounds, holes: places.holes, readingDepths: places.depths }),
     errors: errorDraws(places),
     variants: problems.map((problem, v) => preparedVariant(problem, ground.profile, places, places.variants[v])),
-    interaction: problems[0].piles.groupInteraction ? interactionOf(problems[0], plan, ground.logLengths) : undefined,
+    interaction: problems.some(({ piles }) => piles.groupInteraction) ? interactionOf(problems[0], plan, ground.logLengths) : undefined,
     byForm: new Float64Array(stiffnesses),
     byElements: new Float64Array(stiffnesses),
   };

@@ -10,26 +10,19 @@ export interface RowSamples {
 }
 
 /**
- * Realisations sorted by rows and columns.
+ * The samples of one row, sorted by columns. One row at a time: all of them would be a second copy of a long run.
  *
  * @param elements  outcomes by elements, then by the form, each rows x columns
  * @param form      outcomes by the form, rows x columns
+ * @param row       which of the rows
  * @param rows      number of variants times number of counts
  */
-export function rowSamples(elements: readonly Float64Array[], form: readonly Float64Array[], rows: number): RowSamples[] {
+export function rowSamples(elements: readonly Float64Array[], form: readonly Float64Array[], row: number, rows: number): RowSamples {
   const width = outcomeColumns.length;
-  const samples = Array.from({ length: rows }, (): RowSamples => {
-    const room = (n: number): Float64Array[] => outcomeColumns.map(() => new Float64Array(n));
-    return { elements: room(elements.length), beside: room(elements.length), alone: room(form.length) };
-  });
-  const sort = (outcomes: readonly Float64Array[], offset: number, into: (sample: RowSamples) => readonly Float64Array[]): void => {
-    const columns = samples.flatMap((sample) => into(sample));
-    outcomes.forEach((outcome, i) => {
-      for (let c = 0; c < columns.length; c++) columns[c][i] = outcome[offset + c];
-    });
+  const sorted = (outcomes: readonly Float64Array[], offset: number): Float64Array[] => {
+    const columns = outcomeColumns.map(() => new Float64Array(outcomes.length));
+    for (let i = 0; i < outcomes.length; i++) for (let c = 0; c < width; c++) columns[c][i] = outcomes[i][offset + c];
+    return columns;
   };
-  sort(elements, 0, (s) => s.elements);
-  sort(elements, rows * width, (s) => s.beside);
-  sort(form, 0, (s) => s.alone);
-  return samples;
+  return { elements: sorted(elements, row * width), beside: sorted(elements, (rows + row) * width), alone: sorted(form, row * width) };
 }

@@ -83,6 +83,6 @@ function price({ task, plan, ground, variants, interaction }: Simulation, built:
   const realised: RealisedPiles = { logLengths, lnStiffness, neededLog };
   built.forEach((b, k) => {
     const { problem } = variants[Math.floor(k / task.counts.length)];
-    priceOutcome(problem, plan, b, realised, interaction, out, at + k * outcomeColumns.length);
+    priceOutcome(problem, plan, b, realised, problem.piles.groupInteraction ? interaction : undefined, out, at + k * outcomeColumns.length);
   });
 }

@@ -3,7 +3,7 @@ import type { Problem } from "../decision/problem.js";
 import { readingDepths } from "../investigation/reading-depths.js";
 import { requireDomain } from "../numerics/domain-error.js";
 
-/** One way to investigate and to design: same ground, building and piles as the other variants, its own investigation, length rule and prices. */
+/** One way to investigate and to design: same ground, building and piles as the other variants, its own investigation, length rule, group interaction and prices. */
 export interface SimulationVariant {
   readonly name: string;
   readonly problem: Problem;
@@ -30,14 +30,14 @@ export function requireTask({ variants, counts }: SimulationTask): void {
   const first = shared(variants[0].problem);
   for (const { name, problem } of variants) {
     requireDomain(problem.building.piles.length > 0, "Number of piles", 0, "at least 1");
-    requireDomain(shared(problem) === first, `Ground, building or piles of "${name}"`, "another one", `that of "${variants[0].name}"; only investigation, design rule, length rule and prices may differ`);
+    requireDomain(shared(problem) === first, `Ground, building or piles of "${name}"`, "another one", `that of "${variants[0].name}"; only investigation, design rule, length rule, group interaction and prices may differ`);
   }
 }
 
 /** What all variants have in common, as text. */
 function shared({ ground, building, piles }: Problem): string {
-  const { diameter, modulus, shortest, longest, groupInteraction } = piles;
-  return JSON.stringify([ground, building.piles, building.value, building.damage, building.allowableSettlement, diameter, modulus, shortest, longest, groupInteraction]);
+  const { diameter, modulus, shortest, longest } = piles;
+  return JSON.stringify([ground, building.piles, building.value, building.damage, building.allowableSettlement, diameter, modulus, shortest, longest]);
 }
 
 /** Price of a number of holes of a variant, money. */

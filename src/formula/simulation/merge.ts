@@ -1,6 +1,6 @@
 import { basename } from "node:path";
 import { inputsHash } from "../../jobs/inputs-hash.js";
-import { runSimulation } from "../../jobs/run-simulation.js";
+import { runSimulation, TargetError } from "../../jobs/run-simulation.js";
 import { simulationStamp } from "../../jobs/simulation-stamp.js";
 import { simulationReport } from "../../pane/sheets/simulation-report.js";
 import { simulationText } from "../../results/index.js";
@@ -33,6 +33,7 @@ on standard error; 2 for a call that cannot be carried out as given; 130 after C
 const KNOWN = { values: { "--out": "a file", "--book": "a file", "--brief": BRIEF_MEANING, "--workers": "a number" }, flags: ["--overwrite"], plain: "parts" };
 const MOST_WORKERS = 64;
 const INTERRUPTED = 130;
+const MISUSED = 2;
 
 /**
  * Carries out one call that joins parts.
@@ -47,9 +48,9 @@ export async function merge(words: readonly string[], terminal: Terminal, thread
     terminal.out(USAGE);
     return 0;
   } catch (reason) {
-    if (!(reason instanceof FormulaLineError)) throw reason;
+    if (!(reason instanceof FormulaLineError || reason instanceof TargetError)) throw reason;
     terminal.err(`${reason.message}\n`);
-    return reason.exitCode;
+    return reason instanceof TargetError ? MISUSED : reason.exitCode;
   }
 }
 

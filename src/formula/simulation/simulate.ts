@@ -1,6 +1,6 @@
 import { usualRegret, type SimulationTable, type SimulationTask } from "../../engine/index.js";
 import type { BatchEnd, BatchRun, KeptRows } from "../../jobs/batch.js";
-import { runPart, runSimulation } from "../../jobs/run-simulation.js";
+import { runPart, runSimulation, TargetError } from "../../jobs/run-simulation.js";
 import { loadState, saveState, type TableLabels } from "../../jobs/simulation-state.js";
 import { simulationStamp } from "../../jobs/simulation-stamp.js";
 import type { Threads } from "../../jobs/threads.js";
@@ -18,6 +18,8 @@ import type { Terminal } from "./terminal.js";
 
 /** Ended by Ctrl-C, as shells count it. */
 const INTERRUPTED = 130;
+/** More was asked for than a run can hold. */
+const MISUSED = 2;
 const SAVE_EVERY = 5_000;
 
 /** A run and everything that is done about it. */
@@ -50,9 +52,9 @@ export async function simulate(words: readonly string[], terminal: Terminal, thr
     terminal.out(SIMULATE_USAGE);
     return 0;
   } catch (reason) {
-    if (!(reason instanceof FormulaLineError)) throw reason;
+    if (!(reason instanceof FormulaLineError || reason instanceof TargetError)) throw reason;
     terminal.err(`${reason.message}\n`);
-    return reason.exitCode;
+    return reason instanceof TargetError ? MISUSED : reason.exitCode;
   }
 }
 

@@ -1,4 +1,4 @@
-import { usualRegret } from "../../engine/index.js";
+import { mostRealisations, usualRegret } from "../../engine/index.js";
 import { rangeText, usualCounts } from "../../inputs/count.js";
 import { CATALOGUE, InputError, METHODS, parseSite, type Site } from "../../inputs/index.js";
 import { inputsHash } from "../../jobs/inputs-hash.js";
@@ -104,9 +104,13 @@ export function orderOf(site: Site, cells: readonly (readonly unknown[])[], choi
     if ("part" in made) return made;
     variants.push(made);
   }
-  const { seed } = site.problem;
+  const task = { variants, counts, seed: site.problem.seed };
+  const room = mostRealisations(task).elements;
+  if ("realisations" in target && target.realisations > room) {
+    return { part: "target", sentence: `With ${ways.length * counts.length} cases (ways times counts) at most ${room.toLocaleString("en-US")} grounds fit into memory. Ask for fewer, or name fewer counts or ways.` };
+  }
   return {
-    task: { variants, counts, seed }, target, units: site.units, money: site.money, block: inputsHash(site.problem), place, at: now,
+    task, target, units: site.units, money: site.money, block: inputsHash(site.problem), place, at: now,
   };
 }
 

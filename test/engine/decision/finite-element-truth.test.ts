@@ -23,11 +23,11 @@ const rows = cases.flatMap((c) =>
 
 describe("the fast model against finite elements under every pile", () => {
   it.each(rows)("$name", ({ c, rule, count, truth }) => {
-    const named = rule === "nearest" || rule === "update" ? "geometric" : (rule as DesignRuleName);
+    const named = ["nearest", "update", "group"].includes(rule) ? "geometric" : (rule as DesignRuleName);
     const found = assess(
       ninePiles({
         scales: [c.horizontalScale, c.verticalScale], cov: c.cov, regionalCov: c.regionalCov, rule: named, update: rule === "update",
-        lengthRule: rule === "nearest" ? "nearest" : "load", ...(count === "0" ? {} : { holes: holes[count] }),
+        lengthRule: rule === "nearest" ? "nearest" : "load", groupInteraction: rule === "group", ...(count === "0" ? {} : { holes: holes[count] }),
       }),
       Number(count),
     );
@@ -42,7 +42,7 @@ describe("the fast model against finite elements under every pile", () => {
   // The cheapest count of the table must be the reference's, or one that the reference cannot tell from it.
   it("the order of counts is the reference's within its errors", () => {
     for (const { c, rule, counts } of cases.flatMap((c) => Object.entries(c.rules).map(([rule, counts]) => ({ c, rule, counts })))) {
-      if (rule === "nearest" || rule === "update") continue;
+      if (["nearest", "update", "group"].includes(rule)) continue;
       const ours = ["1", "4", "9"].map((n) => assess(ninePiles({ scales: [c.horizontalScale, c.verticalScale], cov: c.cov, regionalCov: c.regionalCov, rule: rule as DesignRuleName, holes: holes[n] }), Number(n)).failure);
       const theirs = ["1", "4", "9"].map((n) => counts[n].failure);
       for (let i = 1; i < 3; i++) {

@@ -9,7 +9,7 @@ interface Known {
   readonly value: number;
   readonly standardError: number;
 }
-type Rule = "geometric" | "harmonic" | "quartile" | "nearest" | "update";
+type Rule = "geometric" | "harmonic" | "quartile" | "nearest" | "update" | "group";
 interface Case {
   readonly horizontalScale: number;
   readonly verticalScale: number;
@@ -28,7 +28,7 @@ describe.each(cases)("nine piles, $horizontalScale m / $verticalScale m, COV $co
   const problemOf = (rule: Rule) =>
     ninePiles({
       scales: [known.horizontalScale, known.verticalScale], cov: known.cov, regionalCov: known.regionalCov, update: rule === "update",
-      rule: (rule === "nearest" || rule === "update" ? "geometric" : rule) as DesignRuleName, lengthRule: rule === "nearest" ? "nearest" : "load",
+      rule: (["nearest", "update", "group"].includes(rule) ? "geometric" : rule) as DesignRuleName, lengthRule: rule === "nearest" ? "nearest" : "load", groupInteraction: rule === "group",
     });
   const task: SimulationTask = { variants: rules.map((rule) => ({ name: rule, problem: problemOf(rule) })), counts, seed: "truth" };
   const simulation = prepareSimulation(task);

@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { DomainError, estimate, growthWanted, nextBatch, outcomeColumns, usualRegret, type SimulationTask, type Totals } from "../../../src/engine/index.js";
+import { DomainError, estimate, growthWanted, mostRealisations, nextBatch, outcomeColumns, usualRegret, type SimulationTask, type Totals } from "../../../src/engine/index.js";
 import { stream } from "../../../src/engine/random/stream.js";
 import { ninePiles } from "../decision/example-problem.js";
 
@@ -28,12 +28,13 @@ function rows(seed: number, n: number, missing: number, means: readonly number[]
   return { elements, form };
 }
 const made = rows(1, 3000, 100);
-const run = (target: Parameters<typeof nextBatch>[1], list = made): Totals[] => {
+const run = (target: Parameters<typeof nextBatch>[1], list = made, most?: Totals): Totals[] => {
   const steps: Totals[] = [{ elements: 0, form: 0 }];
   for (;;) {
     const { elements, form } = steps[steps.length - 1];
-    const next = nextBatch(task, target, list.elements.slice(0, elements), list.form.slice(0, form));
-    if (next === "enough") return steps;
+    const next = nextBatch(task, target, list.elements.slice(0, elements), list.form.slice(0, form), most);
+    if (next === "full") expect(most).toBeDefined();
+    if (next === "enough" || next === "full") return steps;
     expect(next.elements).toBeGreaterThanOrEqual(elements);
     expect(next.form).toBeGreaterThanOrEqual(form);
     expect(next.elements + next.form).toBeGreaterThan(elements + form);
@@ -61,8 +62,8 @@ describe("nextBatch to a precision", () => {
   it("splits the work by what the form leaves and what it explains", () => {
     const ratio = (missing: number): number => {
       const { elements, form } = rows(2, 800, missing);
-      const next = nextBatch(task, { realisations: 5000 }, elements.slice(0, 16), form.slice(0, 512));
-      return next === "enough" ? 0 : next.form / next.elements;
+      const next = nextBatch(task, { realisations: 500 }, elements.slice(0, 16), form.slice(0, 512));
+      return typeof next === "string" ? 0 : next.form / next.elements;
     };
     const [near, far] = [ratio(60), ratio(240)];
     expect(near / far).toBeGreaterThan(3);
@@ -77,8 +78,8 @@ describe("nextBatch to a number", () => {
   it("does not let the form take over", () => {
     const { elements, form } = rows(3, 20, 1);
     const next = nextBatch(task, { realisations: 20 }, elements.slice(0, 16), form.slice(0, 512));
-    expect(next === "enough" ? 0 : next.form).toBeLessThan(20 * 400);
-    expect(next === "enough" ? 0 : next.form).toBeGreaterThan(20 * 100);
+    expect(typeof next === "string" ? 0 : next.form).toBeLessThan(20 * 400);
+    expect(typeof next === "string" ? 0 : next.form).toBeGreaterThan(20 * 100);
   });
 
   it("ends at that number", () => expect(last(run({ realisations: 40 })).elements).toBe(40));
@@ -95,6 +96,41 @@ describe("nextBatch to a number", () => {
 
   it("refuses targets that are none", () => {
     for (const target of [{ realisations: 1 }, { realisations: 2.5 }, { regret: 0 }, { regret: Number.NaN }]) expect(() => nextBatch(task, target, [], [])).toThrow(DomainError);
+  });
+});
+
+describe("a run that may keep so many and no more", () => {
+  const at = ({ elements, form }: Totals, target: Parameters<typeof nextBatch>[1], most: Totals) => nextBatch(task, target, made.elements.slice(0, elements), made.form.slice(0, form), most);
+
+  it("never asks for more, and says when a precision needs them", () => {
+    const most = { elements: 300, form: 4000 };
+    const end = last(run({ regret: 0.05 }, made, most));
+    expect(end.form).toBeLessThanOrEqual(most.form);
+    expect(end.elements).toBeLessThanOrEqual(most.elements);
+    expect(at(end, { regret: 0.05 }, most)).toBe("full");
+    expect(at(end, { regret: 1e6 }, most)).toBe("enough");
+  });
+
+  // Variances of the two parts add up: with fewer by the form, more by elements reach the same precision.
+  it("lets the elements give what the form may not", () => {
+    const unbound = last(run({ regret: 2 }));
+    const most = { elements: 3000, form: Math.floor(0.8 * unbound.form) };
+    const bound = last(run({ regret: 2 }, made, most));
+    expect(bound.form).toBe(most.form);
+    expect(bound.elements).toBeGreaterThan(unbound.elements);
+    expect(at(bound, { regret: 2 }, most)).toBe("enough");
+  });
+
+  it("keeps to a number and caps what the form adds to it", () => {
+    const end = last(run({ realisations: 60 }, made, { elements: 60, form: 1000 }));
+    expect(end).toEqual({ elements: 60, form: 1000 });
+  });
+
+  // By hand: 8 columns of 8 bytes, 3 counts; by elements the form's beside them; 200 bytes about each row. 64 and 96 MiB.
+  it("is told by the bytes that its rows take", () => {
+    expect(mostRealisations(task)).toEqual({ elements: Math.floor((64 * 1048576) / 584), form: Math.floor((96 * 1048576) / 392) });
+    const wide = { ...task, variants: Array.from({ length: 6 }, (_, k) => ({ ...task.variants[0], name: String(k) })), counts: Array.from({ length: 20 }, (_, k) => k) };
+    expect(mostRealisations(wide)).toEqual({ elements: Math.floor((64 * 1048576) / 15560), form: Math.floor((96 * 1048576) / 7880) });
   });
 });
 
