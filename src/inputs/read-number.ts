@@ -5,6 +5,8 @@ import { LARGEST_COV } from "./limits.js";
 import { refusal, type Place } from "./place.js";
 import type { UnitReading } from "./read-unit-cell.js";
 
+const ROUNDING = 1e-12;
+
 /** What a number must satisfy: the parts of an input or of a list column that speak of its value. */
 export interface NumberRule {
   readonly kind: UnitKind | "money" | "moneyPerLength";
@@ -43,9 +45,11 @@ export function readNumber(rule: NumberRule, cell: Cell, unit: UnitReading, plac
   const least = (rule.minimum * range.multiply) / range.divide;
   const most = (rule.maximum * range.multiply) / range.divide;
   if (isMoney(rule) && inner <= 0) throw refusal(place, `${written}; a price above zero is needed, or the word none if it costs nothing`);
-  if (inner < least || inner > most) throw refusal(place, `${written}; it must be ${rangeInWords(rule, range.symbol)}${hint(rule, value, unit, least, most)}`);
+  // an end of the range stays one in any unit: 1 m as a formula makes it in feet is an ulp less
+  const near = Math.abs(inner - least) <= ROUNDING * Math.abs(least) ? least : Math.abs(inner - most) <= ROUNDING * Math.abs(most) ? most : inner;
+  if (near < least || near > most) throw refusal(place, `${written}; it must be ${rangeInWords(rule, range.symbol)}${hint(rule, value, unit, least, most)}`);
   if (rule.whole === true && !Number.isInteger(value)) throw refusal(place, `${written}; a whole number ${rangeInWords(rule, "")} is needed`);
-  return inner;
+  return near;
 }
 
 /**

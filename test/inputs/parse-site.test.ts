@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { CATALOGUE, checkSite, parseSite } from "../../src/inputs/index.js";
-import { add, checkOf, put, SMALL, withoutGrid, without } from "./block.js";
+import { add, checkOf, put, refusalOf, SMALL, withoutGrid, without } from "./block.js";
 
 describe("a site block", () => {
   // Source: worked out by hand from SMALL and the defaults that the catalogue states
@@ -72,6 +72,13 @@ describe("values", () => {
   it("may ask for their default in words", () => {
     const rows = add(SMALL, ["Pile modulus", "default"], ["Reading COV", "from the method"], ["Footprint length", "Automatic"], ["Footprint width", "auto"], ["Hole list", "auto"], ["Correlation", "default"]);
     expect(parseSite(rows).problem).toEqual(parseSite(SMALL).problem);
+  });
+
+  it("may stand at the end of their range in any unit, rounded as a formula rounds it, and no farther", () => {
+    const shortest = (feet: number): number => parseSite(put(SMALL, "Shortest length", feet, "ft", "")).problem.piles.shortest;
+    expect((1 / 0.3048) * 0.3048).toBeLessThan(1);
+    expect(shortest(1 / 0.3048)).toBe(1);
+    expect(refusalOf(put(SMALL, "Shortest length", 3.2808, "ft", ""))).toContain("Shortest length (row 17 of the site block) is 3.2808 ft; it must be from 1 m to 150 m");
   });
 
   it("are percentages where the unit cell says so", () => {
