@@ -1,9 +1,8 @@
 import { nodeThreads } from "../../../src/formula/simulation/node-threads.js";
 import { simulationThreads } from "../../../src/formula/simulation/simulate.js";
-import type { SimulationTask } from "../../../src/engine/index.js";
-import { parseSite, templateRows } from "../../../src/inputs/index.js";
 import { runBatches } from "../../../src/jobs/run-batches.js";
 import { runPart } from "../../../src/jobs/run-simulation.js";
+import { MOST, TASK } from "./demonstration-task.js";
 
 // What only whole runs show: two threads against one, how soon a run is cancelled, how often it tells, what it holds in memory.
 
@@ -11,15 +10,13 @@ const ROUNDS = 3;
 // as many as a run to a usual precision needs: each thread prepares for a second first
 const REALISATIONS = 200;
 
-const site = parseSite(templateRows());
-const task: SimulationTask = { variants: [{ name: site.method, problem: site.problem }], counts: Array.from({ length: 13 }, (_, k) => k), seed: site.problem.seed };
 const median = (values: readonly number[]): number => [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)]!;
 const say = (line: string): void => void process.stdout.write(`${line}\n`);
 
 /** Seconds that a part takes from its start to its end, preparing included. */
 async function seconds(workers: number): Promise<number> {
   const begun = performance.now();
-  const run = runPart(task, 0, REALISATIONS, {}, simulationThreads(workers), () => undefined);
+  const run = runPart(TASK, 0, REALISATIONS, {}, simulationThreads(workers), () => undefined);
   const { kind, message } = await run.end;
   if (kind !== "done") throw new Error(message);
   return (performance.now() - begun) / 1000;
@@ -30,7 +27,7 @@ async function cancelled(): Promise<{ took: number; perSecond: number }> {
   let pressed = 0;
   let heard = 0;
   const begun = performance.now();
-  const run = runPart(task, 0, REALISATIONS, {}, simulationThreads(2), ({ done }) => {
+  const run = runPart(TASK, 0, REALISATIONS, {}, simulationThreads(2), ({ done }) => {
     heard++;
     if (done.elements < 10) return;
     pressed = performance.now();
@@ -40,7 +37,7 @@ async function cancelled(): Promise<{ took: number; perSecond: number }> {
   return { took: performance.now() - pressed, perSecond: (1000 * heard) / (pressed - begun) };
 }
 
-/** Megabytes of the whole process, all threads, after so many rows of elements and four times as many of the form. */
+/** Megabytes of the whole process, all threads, at most, over a run of so many rows of elements and the form's to them. */
 async function megabytes(rows: number): Promise<number> {
   let most = 0;
   const run = runBatches({ task: undefined, target: rows, first: 0, most: rows }, {}, nodeThreads(new URL("./wide-thread.ts", import.meta.url), 2), () => {
@@ -60,5 +57,5 @@ for (let round = 0; round < ROUNDS; round++) {
 say(`two threads against one: ${median(ratios).toFixed(2)} x, target 1.8 x on idle cores`);
 const ends = [await cancelled(), await cancelled(), await cancelled()];
 say(`cancelled within ${median(ends.map(({ took }) => took)).toFixed(1)} ms, target 200 ms; progress ${median(ends.map(({ perSecond }) => perSecond)).toFixed(1)} a second, target 4`);
-const [few, many] = [await megabytes(1_000), await megabytes(10_000)];
-say(`memory with 1,000 realisations ${few.toFixed(0)} MB, with 10,000 ${many.toFixed(0)} MB: ${((many - few) / 9).toFixed(1)} MB a thousand (each with four by the form, kept twice)`);
+const [few, many, most] = [await megabytes(1_000), await megabytes(10_000), await megabytes(MOST.elements)];
+say(`memory of all threads with 1,000 realisations ${few.toFixed(0)} MB, with 10,000 ${many.toFixed(0)} MB, with as many as a run may keep (${MOST.elements}) ${most.toFixed(0)} MB: kept by the run and by the thread that makes the tables`);
