@@ -9,6 +9,9 @@ import { WorkbookRefusal } from "../host/workbook-refusal.js";
 import { Calculation } from "./calculation.js";
 import { reference, sheetData } from "./grid-data.js";
 
+/** A sheet and one range of it: cells, whole columns or whole rows. The grid itself reads the first area of several as if it were all. */
+const ONE_RANGE = /^(?:'(?:[^']|'')+'|[^'!,()]+)!\$?(?:[A-Z]{1,3}\$?\d+(?::\$?[A-Z]{1,3}\$?\d+)?|[A-Z]{1,3}:\$?[A-Z]{1,3}|\d+:\$?\d+)$/i;
+
 /** A chart of a sheet with its cells within reach. */
 export interface SheetChart {
   readonly chart: PlannedChart;
@@ -100,9 +103,11 @@ export class PracticeWorkbook implements Workbook {
     const wanted = name.trim().toLowerCase();
     const found = this.book.getDefinedNames().find((candidate) => candidate.getName().toLowerCase() === wanted);
     if (found === undefined) return undefined;
-    const { sheetName, range } = deserializeRangeWithSheet(found.getFormulaOrRefString().replace(/^=/, ""));
+    const meaning = found.getFormulaOrRefString().replace(/^=/, "");
+    if (!ONE_RANGE.test(meaning)) return undefined;
+    const { sheetName, range } = deserializeRangeWithSheet(meaning);
     const sheet = this.book.getSheetByName(sheetName);
-    return sheet === null || Number.isNaN(range.startRow) || Number.isNaN(range.startColumn) ? undefined : { sheet, range };
+    return sheet === null ? undefined : { sheet, range };
   }
 }
 
