@@ -2,7 +2,7 @@ import { gaussLegendre } from "../numerics/gauss-legendre.js";
 import type { CorrelationFamily } from "./correlation-family.js";
 
 /** Below this thickness, in scales of fluctuation, differences of integrals lose more digits than three Gauss points. */
-const THIN = 2 ** -12;
+const THIN = 1 / 4096;
 /** Below this one a cell is a point: the correlation changes by less than the error stated below, and squares may vanish. */
 const POINT = 1e-10;
 

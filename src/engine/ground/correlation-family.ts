@@ -1,3 +1,5 @@
+import { exponentialLessOne } from "../numerics/exponential-less-one.js";
+import { exponential } from "../numerics/exponential.js";
 import { normalCentralChance, normalDistribution, unitNormalLoss } from "../numerics/normal.js";
 
 /**
@@ -20,21 +22,21 @@ export interface CorrelationFamily {
 
 /** Markov (exponential) correlation exp(-2 t). @source Vanmarcke (1983), Random Fields: Analysis and Synthesis */
 export const markovFamily: CorrelationFamily = {
-  correlation: (t) => Math.exp(-2 * t),
-  integral: (t) => -Math.expm1(-2 * t) / 2,
-  tail: (t) => Math.exp(-2 * t) / 2,
-  doubleIntegral: (t) => (t < 0.5 ? exponentialSeries(2 * t, 1, 0) / 4 : (Math.expm1(-2 * t) + 2 * t) / 4),
-  doubleTail: (t) => Math.exp(-2 * t) / 4,
+  correlation: (t) => exponential(-2 * t),
+  integral: (t) => -exponentialLessOne(-2 * t) / 2,
+  tail: (t) => exponential(-2 * t) / 2,
+  doubleIntegral: (t) => (t < 0.5 ? exponentialSeries(2 * t, 1, 0) / 4 : (exponentialLessOne(-2 * t) + 2 * t) / 4),
+  doubleTail: (t) => exponential(-2 * t) / 4,
 };
 
 const ROOT_TWO_PI = Math.sqrt(2 * Math.PI);
 
 /** Gaussian (squared exponential) correlation exp(-pi t^2). @source Vanmarcke (1983), Random Fields: Analysis and Synthesis */
 export const gaussianFamily: CorrelationFamily = {
-  correlation: (t) => Math.exp(-Math.PI * t * t),
+  correlation: (t) => exponential(-Math.PI * t * t),
   integral: (t) => normalCentralChance(ROOT_TWO_PI * t),
   tail: (t) => normalDistribution(-ROOT_TWO_PI * t),
-  doubleIntegral: (t) => t * normalCentralChance(ROOT_TWO_PI * t) + Math.expm1(-Math.PI * t * t) / (2 * Math.PI),
+  doubleIntegral: (t) => t * normalCentralChance(ROOT_TWO_PI * t) + exponentialLessOne(-Math.PI * t * t) / (2 * Math.PI),
   doubleTail: (t) => unitNormalLoss(ROOT_TWO_PI * t) / ROOT_TWO_PI,
 };
 
@@ -45,9 +47,9 @@ const RANGE = 4 / 3;
 export const sphericalFamily: CorrelationFamily = within(RANGE, {
   correlation: (v) => v * v * (1.5 - 0.5 * v),
   integral: (u) => RANGE * u * (1 - u * (0.75 - 0.125 * u * u)),
-  tail: (v) => RANGE * v ** 3 * (0.5 - 0.125 * v),
+  tail: (v) => RANGE * v * v * v * (0.5 - 0.125 * v),
   doubleIntegral: (u) => RANGE ** 2 * u * u * (0.5 - u * (0.25 - 0.025 * u * u)),
-  doubleTail: (v) => RANGE ** 2 * v ** 4 * (0.125 - 0.025 * v),
+  doubleTail: (v) => RANGE ** 2 * (v * v) ** 2 * (0.125 - 0.025 * v),
 });
 
 /** Triangular correlation 1 - t up to t = 1; valid along a line only. @source Vanmarcke (1983), as above */
@@ -56,16 +58,16 @@ export const triangularFamily: CorrelationFamily = within(1, {
   integral: (u) => u * (1 - 0.5 * u),
   tail: (v) => 0.5 * v * v,
   doubleIntegral: (u) => u * u * (0.5 - u / 6),
-  doubleTail: (v) => v ** 3 / 6,
+  doubleTail: (v) => (v * v * v) / 6,
 });
 
 /** Second-order Markov correlation (1 + 4 t) exp(-4 t). @source Vanmarcke (1983), Random Fields: Analysis and Synthesis */
 export const secondOrderMarkovFamily: CorrelationFamily = {
-  correlation: (t) => (1 + 4 * t) * Math.exp(-4 * t),
-  integral: (t) => -Math.expm1(-4 * t) / 2 - t * Math.exp(-4 * t),
-  tail: (t) => (t + 0.5) * Math.exp(-4 * t),
-  doubleIntegral: (t) => (t < 0.25 ? exponentialSeries(4 * t, 3, 1) / 16 : t / 2 - 3 / 16 + (t / 4 + 3 / 16) * Math.exp(-4 * t)),
-  doubleTail: (t) => (t / 4 + 3 / 16) * Math.exp(-4 * t),
+  correlation: (t) => (1 + 4 * t) * exponential(-4 * t),
+  integral: (t) => -exponentialLessOne(-4 * t) / 2 - t * exponential(-4 * t),
+  tail: (t) => (t + 0.5) * exponential(-4 * t),
+  doubleIntegral: (t) => (t < 0.25 ? exponentialSeries(4 * t, 3, 1) / 16 : t / 2 - 3 / 16 + (t / 4 + 3 / 16) * exponential(-4 * t)),
+  doubleTail: (t) => (t / 4 + 3 / 16) * exponential(-4 * t),
 };
 
 /** (c + d y) exp(-y) less its terms below y^2, d being 0 or 1: sum from k = 2 of (c - d k) (-y)^k / k!, for y <= 1. */

@@ -1,3 +1,4 @@
+import { hypotenuse } from "../numerics/hypotenuse.js";
 import { lineFamily } from "./correlation.js";
 import type { GroundStructure } from "./separable-terms.js";
 
@@ -12,6 +13,6 @@ import type { GroundStructure } from "./separable-terms.js";
 export function fieldCorrelation(ground: GroundStructure): (distance: number, depthDifference: number) => number {
   const family = lineFamily(ground.correlation);
   const { horizontalScale, verticalScale } = ground;
-  if (ground.correlation === "ellipsoidal") return (distance, depth) => family.correlation(Math.hypot(distance / horizontalScale, depth / verticalScale));
+  if (ground.correlation === "ellipsoidal") return (distance, depth) => family.correlation(hypotenuse(distance / horizontalScale, depth / verticalScale));
   return (distance, depth) => family.correlation(distance / horizontalScale) * family.correlation(Math.abs(depth) / verticalScale);
 }

@@ -1,5 +1,7 @@
+import { arcSine } from "../numerics/arc-sine.js";
 import { requireDomain } from "../numerics/domain-error.js";
 import { gaussLegendre } from "../numerics/gauss-legendre.js";
+import { sine } from "../numerics/sine.js";
 import { pointsOfRing, ringGeometry, type RingGeometry } from "./ring-geometry.js";
 
 /** Correlation in plan by distance, m: from 1 at 0, not increasing, tending to 0. */
@@ -121,11 +123,11 @@ function meanOverRing(plan: PlanCorrelation, reach: number, distance: number, ra
   const product = 4 * distance * radius;
   if (product === 0) return plan(Math.abs(near));
   const share = (reach * reach - near * near) / product;
-  const end = share >= 1 ? Math.PI : 2 * Math.asin(Math.sqrt(share));
+  const end = share >= 1 ? Math.PI : 2 * arcSine(Math.sqrt(share));
   let sum = 0;
   for (let k = 0; k < rule.nodes.length; k++) {
     const t = rule.nodes[k];
-    const half = Math.sin((end * t * t) / 2);
+    const half = sine((end * t * t) / 2);
     sum += rule.weights[k] * t * plan(Math.sqrt(near * near + product * half * half));
   }
   return (2 * end * sum) / Math.PI;

@@ -1,4 +1,7 @@
+import { arcCosine } from "../numerics/arc-sine.js";
 import { gaussLegendre, type QuadratureRule } from "../numerics/gauss-legendre.js";
+import { hyperbolicSine, inverseHyperbolicSine } from "../numerics/hyperbolic.js";
+import { sine } from "../numerics/sine.js";
 
 /** Points of one ring by their distance from the centre of another, with the share of the ring that each stands for. */
 export interface RingPoints {
@@ -40,13 +43,13 @@ const kept: RingGeometry[] = [];
  */
 export function pointsOfRing(centreDistance: number, radius: number, other: number, rule: QuadratureRule): RingPoints {
   const cosine = (centreDistance ** 2 + radius ** 2 - other ** 2) / (2 * centreDistance * radius);
-  const cut = Math.acos(Math.min(1, Math.max(-1, cosine)));
+  const cut = arcCosine(Math.min(1, Math.max(-1, cosine)));
   const distances: number[] = [];
   const weights: number[] = [];
   for (const span of [-cut, Math.PI - cut]) {
     if (span === 0) continue;
     rule.nodes.forEach((t, k) => {
-      const half = Math.sin((cut + span * t ** 3) / 2);
+      const half = sine((cut + span * t * t * t) / 2);
       distances.push(Math.sqrt((centreDistance - radius) ** 2 + 4 * centreDistance * radius * half * half));
       weights.push((rule.weights[k] * 3 * t * t * Math.abs(span)) / Math.PI);
     });
@@ -77,11 +80,11 @@ function makeGeometry(radii: Float64Array, distances: Float64Array): RingGeometr
   const smallest = radii.reduce((least, r) => (r > 0 ? Math.min(least, r) : least), Infinity);
   const close = CLOSENESS * (smallest < Infinity ? smallest : 1);
   const reach = radii.reduce((a, b) => Math.max(a, b), 0) + distances.reduce((a, b) => Math.max(a, b), 0);
-  const sides = Array.from(radii, (radius) => [radius, reach].map((far) => Math.max(5, Math.ceil(Math.asinh(far / close) / GROWTH) + 2)));
+  const sides = Array.from(radii, (radius) => [radius, reach].map((far) => Math.max(5, Math.ceil(inverseHyperbolicSine(far / close) / GROWTH) + 2)));
   const grids = Array.from(radii, (radius, r) => {
     const [inside, outside] = sides[r];
     return Float64Array.from({ length: inside + outside }, (_, k) =>
-      k < inside ? Math.abs(radius - close * Math.sinh(GROWTH * k)) : radius + close * Math.sinh(GROWTH * (k - inside)),
+      k < inside ? Math.abs(radius - close * hyperbolicSine(GROWTH * k)) : radius + close * hyperbolicSine(GROWTH * (k - inside)),
     );
   });
   const nr = radii.length;
@@ -99,7 +102,7 @@ function makeGeometry(radii: Float64Array, distances: Float64Array): RingGeometr
     points.distances.forEach((distance, k) => {
       const [inside, outside] = sides[outer];
       const beyond = distance >= radii[outer];
-      const place = Math.asinh(Math.abs(distance - radii[outer]) / close) / GROWTH;
+      const place = inverseHyperbolicSine(Math.abs(distance - radii[outer]) / close) / GROWTH;
       const first = Math.min(Math.max(Math.floor(place) - 1, 0), (beyond ? outside : inside) - 4);
       places.push(beyond ? inside + first : first);
       fractions.push(place - first - 1);

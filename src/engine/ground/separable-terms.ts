@@ -1,4 +1,5 @@
 import { requireDomain } from "../numerics/domain-error.js";
+import { exponential } from "../numerics/exponential.js";
 import { averageCovariance } from "./average-covariance.js";
 import { gaussianFamily, type CorrelationFamily } from "./correlation-family.js";
 import { lineFamily, type CorrelationName } from "./correlation.js";
@@ -56,8 +57,8 @@ export function separableTerms(ground: GroundStructure): SeparableTerm[] {
   };
   let u = 0;
   for (let k = 0; k < TERMS; k++) {
-    u = Math.exp(FIRST + k * STEP);
-    add((STEP / Math.sqrt(Math.PI * u)) * Math.exp(-1 / u), u);
+    u = exponential(FIRST + k * STEP);
+    add((STEP / Math.sqrt(Math.PI * u)) * exponential(-1 / u), u);
   }
   add(rest, REST * u);
   return terms;

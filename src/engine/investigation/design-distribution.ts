@@ -1,4 +1,6 @@
 import { requireDomain } from "../numerics/domain-error.js";
+import { exponentialLessOne } from "../numerics/exponential-less-one.js";
+import { logarithmOfOnePlus } from "../numerics/logarithm.js";
 import { normalDensity, normalDistribution, normalQuantile } from "../numerics/normal.js";
 import type { DesignRule } from "./design-rule.js";
 import type { ReadingSums } from "./reading-sums.js";
@@ -63,7 +65,7 @@ export function designDistribution(rule: DesignRule, sums: ReadingSums | undefin
     case "arithmetic":
     case "harmonic": {
       const sign = rule.name === "arithmetic" ? 1 : -1;
-      const variance = Math.log1p(meanOfExponentials(sums, variances));
+      const variance = logarithmOfOnePlus(meanOfExponentials(sums, variances));
       return { mean: meanOfLogs + (sign * (total - variance)) / 2, variance, gain: 1, bend: -sign };
     }
     case "quartile":
@@ -104,7 +106,7 @@ function meanOfExponentials(sums: ReadingSums, v: LogVariances): number {
     for (let lag = 0; lag < readings; lag++) {
       const own = d === 0 ? v.hole + (lag === 0 ? v.reading : 0) : 0;
       const covariance = v.ground * sums.meanVariance * sums.correlation[d * readings + lag] + common + own;
-      sum += holePairs[d] * lagPairs[lag] * Math.expm1(covariance);
+      sum += holePairs[d] * lagPairs[lag] * exponentialLessOne(covariance);
     }
   }
   return sum / (sums.holes * readings) ** 2;
@@ -149,7 +151,7 @@ function quartileBelow(n: number, spread: SampleSpread): number {
   const z = normalQuantile((position - 0.375) / (n + 0.25));
   // Readings of one layout are flatter than normal, because their spread varies from layout to layout (Cornish and Fisher's kurtosis term).
   const excess = spread.meanSquare > 0 ? (-3 * spread.varianceOfSquare) / (spread.meanSquare ** 2 + spread.varianceOfSquare) : 0;
-  return -(z + (excess / 24) * (z ** 3 - 3 * z));
+  return -(z + (excess / 24) * z * (z * z - 3));
 }
 
 /**

@@ -1,3 +1,4 @@
+import { hypotenuse } from "../numerics/hypotenuse.js";
 import type { Point } from "./hole-positions.js";
 
 /** Correlation of the unit field between two places: horizontal distance and depth difference, m. */
@@ -87,7 +88,7 @@ function holeDistances(holes: readonly Point[]): { distances: number[]; classOf:
   for (let i = 0; i < holes.length; i++) {
     for (let j = 0; j < holes.length; j++) {
       if (i === j) continue;
-      const distance = Math.hypot(holes[i].x - holes[j].x, holes[i].y - holes[j].y);
+      const distance = hypotenuse(holes[i].x - holes[j].x, holes[i].y - holes[j].y);
       const key = Math.round(distance * 1e6); // to a micrometre: a grid's equal distances differ by rounding only
       let at = index.get(key);
       if (at === undefined) {

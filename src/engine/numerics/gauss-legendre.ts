@@ -1,4 +1,5 @@
 import { requireDomain } from "./domain-error.js";
+import { sine } from "./sine.js";
 
 /** Nodes and weights of a quadrature rule. */
 export interface QuadratureRule {
@@ -29,7 +30,7 @@ function makeRule(n: number): QuadratureRule {
   const nodes = new Float64Array(n);
   const weights = new Float64Array(n);
   for (let i = 0; i < (n + 1) >> 1; i++) {
-    let t = 2 * Math.sin((Math.PI * (i + 0.75)) / (2 * n + 1)) ** 2;
+    let t = 2 * sine((Math.PI * (i + 0.75)) / (2 * n + 1)) ** 2;
     let slope = 0;
     for (let iteration = 0; iteration < 100; iteration++) {
       let value = 1;

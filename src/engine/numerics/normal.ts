@@ -1,8 +1,11 @@
 import { requireDomain } from "./domain-error.js";
+import { exponential } from "./exponential.js";
+import { logarithm } from "./logarithm.js";
 
 const INVERSE_ROOT_TWO_PI = 0.3989422804014326779;
 /** Below this distance from 0 the rational function of x itself is used (Cody's limit, the upper quartile). */
 const CENTRE = 0.67448975;
+const E_TO_MINUS_64 = 1.603810890548638e-28;
 
 /**
  * Density of the standard normal distribution.
@@ -56,7 +59,7 @@ export function normalQuantile(p: number): number {
   requireDomain(p > 0 && p < 1, "Probability", p, "above 0 and below 1");
   const q = p - 0.5;
   if (Math.abs(q) <= 0.425) return q * ratio(QUANTILE_CENTRE_ABOVE, QUANTILE_CENTRE_BELOW, 0.180625 - q * q);
-  const r = Math.sqrt(-Math.log(q < 0 ? p : 1 - p));
+  const r = Math.sqrt(-logarithm(q < 0 ? p : 1 - p));
   const x = r <= 5 ? ratio(QUANTILE_MIDDLE_ABOVE, QUANTILE_MIDDLE_BELOW, r - 1.6) : ratio(QUANTILE_FAR_ABOVE, QUANTILE_FAR_BELOW, r - 5);
   return q < 0 ? -x : x;
 }
@@ -83,7 +86,10 @@ export function unitNormalLoss(u: number): number {
 function expOfMinusHalfSquare(y: number): number {
   if (y > 39) return 0;
   const coarse = Math.trunc(y * 16) / 16;
-  return Math.exp(-0.5 * coarse * coarse) * Math.exp(-0.5 * (y - coarse) * (y + coarse));
+  const half = 0.5 * coarse * coarse;
+  const rest = exponential(-0.5 * (y - coarse) * (y + coarse));
+  // far out e to the power alone would be taken for 0 while the answer still has digits
+  return half < 700 ? exponential(-half) * rest : exponential(64 - half) * rest * E_TO_MINUS_64;
 }
 
 /** (1 - Phi(y)) / exp(-y^2/2) for y above the square root of 32. */

@@ -19,9 +19,9 @@ import { normalQuantile } from "./normal.js";
  */
 export function sobolPoints(dimensions: number, count: number, random?: Stream): Float64Array {
   requireDomain(Number.isInteger(dimensions) && dimensions >= 1 && dimensions <= 256, "Number of dimensions", dimensions, "a whole number from 1 to 256");
-  requireDomain(Number.isInteger(count) && count >= 1 && count <= 2 ** 20, "Number of points", count, "a whole number from 1 to 2^20");
-  const bits = Math.ceil(Math.log2(count));
-  const size = 2 ** bits;
+  requireDomain(Number.isInteger(count) && count >= 1 && count <= 1048576, "Number of points", count, "a whole number from 1 to 2^20");
+  const bits = 32 - Math.clz32(count - 1);
+  const size = 1 << bits;
   const points = new Float64Array(dimensions * count);
   for (let dimension = 0; dimension < dimensions; dimension++) {
     const directions = directionNumbers(dimension, bits);
@@ -30,7 +30,7 @@ export function sobolPoints(dimensions: number, count: number, random?: Stream):
     for (let i = 0, p = dimension * count; i < count; i++, p++) {
       if (i > 0) place ^= directions[31 - Math.clz32(i & -i)];
       // Below the last level of the tree each point has its own branch, so the remaining digits are independent.
-      points[p] = (random === undefined ? place : turned![place] + ((random.word() >>> 0) + 0.5) / 2 ** 32) / size;
+      points[p] = (random === undefined ? place : turned![place] + ((random.word() >>> 0) + 0.5) / 4294967296) / size;
     }
   }
   return points;
@@ -71,12 +71,12 @@ function directionNumbers(dimension: number, bits: number): Int32Array {
 
 /** Where each of the 2^bits places of an interval goes when every node of the binary tree above them is turned over at random. */
 function randomTree(bits: number, random: Stream): Int32Array {
-  const places = new Int32Array(2 ** bits);
+  const places = new Int32Array(1 << bits);
   for (let level = 0; level < bits; level++) {
     let word = 0;
     // Highest first, so that a node is read before its first child overwrites it.
-    for (let node = 2 ** level - 1; node >= 0; node--) {
-      if (((2 ** level - 1 - node) & 31) === 0) word = random.word();
+    for (let node = (1 << level) - 1; node >= 0; node--) {
+      if ((((1 << level) - 1 - node) & 31) === 0) word = random.word();
       const turn = word & 1;
       word >>>= 1;
       const place = places[node] * 2;

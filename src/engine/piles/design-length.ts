@@ -1,6 +1,9 @@
 import type { Kilonewtons, Kilopascals, Metres } from "../../units/quantities.js";
 import { metres } from "../../units/quantities.js";
 import { requireDomain } from "../numerics/domain-error.js";
+import { exponential } from "../numerics/exponential.js";
+import { hyperbolicTangent } from "../numerics/hyperbolic.js";
+import { logarithm } from "../numerics/logarithm.js";
 
 /** A pile to be designed in ground of one modulus. */
 export interface DesignTask {
@@ -83,10 +86,10 @@ let elasticity = 0;
 
 /** Head stiffness over shear modulus and radius, P / (G r0 w), of a pile of a given length over radius. */
 function dimensionless(form: Form, slenderness: number): number {
-  const zeta = Math.log(form.reach * slenderness);
+  const zeta = logarithm(form.reach * slenderness);
   const mu = Math.sqrt(2 / (zeta * form.lambda));
   const y = mu * slenderness;
-  const tanh = Math.tanh(y);
+  const tanh = hyperbolicTangent(y);
   const shaft = tanh / mu;
   const shaftChange = ((1 - tanh * tanh) * y * (1 - 1 / (2 * zeta)) + tanh / (2 * zeta)) / mu;
   const toBase = form.base / (Math.PI * form.lambda);
@@ -113,19 +116,19 @@ function stiffEnough(form: Form, from: number, to: number, needed: number): numb
 
 /** Root of ln stiffness = ln needed between a slenderness too small and one large enough. */
 function lengthOf(form: Form, from: number, enough: number, needed: number): number {
-  let low = Math.log(from);
-  let high = Math.log(enough);
-  const target = Math.log(needed);
+  let low = logarithm(from);
+  let high = logarithm(enough);
+  const target = logarithm(needed);
   let x = (low + high) / 2;
   for (let i = 0; i < 80; i++) {
-    const gap = Math.log(dimensionless(form, Math.exp(x))) - target;
+    const gap = logarithm(dimensionless(form, exponential(x))) - target;
     if (gap >= 0) high = x;
     else low = x;
     const step = -gap / elasticity;
     let next = x + step;
     if (!(next > low && next < high)) next = (low + high) / 2;
-    if (Math.abs(next - x) < 1e-10) return Math.exp(next);
+    if (Math.abs(next - x) < 1e-10) return exponential(next);
     x = next;
   }
-  return Math.exp(high);
+  return exponential(high);
 }

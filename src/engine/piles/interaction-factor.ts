@@ -1,4 +1,6 @@
 import { requireDomain } from "../numerics/domain-error.js";
+import { hyperbolicTangent, inverseHyperbolicSine } from "../numerics/hyperbolic.js";
+import { logarithm } from "../numerics/logarithm.js";
 
 /** A pile about whose neighbours is asked. */
 export interface InteractingPile {
@@ -35,9 +37,9 @@ export function interactionFactor(pile: InteractingPile, spacing: number): numbe
   requireDomain(radius > 0 && length > 0 && length < Infinity, "Pile", `${length} m long with a radius of ${radius} m`, "longer and thicker than nothing");
   requireDomain(spacing >= 2 * radius, "Spacing of piles", spacing, `at least the diameter, ${2 * radius} m`);
   const reach = 2.5 * averageRatio * (1 - poisson) * length;
-  const zeta = Math.log(reach / radius);
+  const zeta = logarithm(reach / radius);
   requireDomain(zeta > 0, "Length over radius", length / radius, "large enough for the radius of influence to lie outside the shaft");
-  const together = stiffness(pile, zeta + Math.asinh(reach / (2 * spacing)), 1 + (2 * radius) / (Math.PI * spacing));
+  const together = stiffness(pile, zeta + inverseHyperbolicSine(reach / (2 * spacing)), 1 + (2 * radius) / (Math.PI * spacing));
   return stiffness(pile, zeta, 1) / together - 1;
 }
 
@@ -45,7 +47,7 @@ export function interactionFactor(pile: InteractingPile, spacing: number): numbe
 function stiffness({ length, radius, averageRatio, poisson, tipShearModulus, pileModulus }: InteractingPile, zeta: number, softening: number): number {
   const lambda = pileModulus / tipShearModulus;
   const muLength = (Math.sqrt(2 / (zeta * lambda)) * length) / radius;
-  const perShaft = (Math.tanh(muLength) / muLength) * (length / radius);
+  const perShaft = (hyperbolicTangent(muLength) / muLength) * (length / radius);
   const base = 4 / ((1 - poisson) * softening);
   return (base + ((2 * Math.PI * averageRatio) / zeta) * perShaft) / (1 + (base * perShaft) / (Math.PI * lambda));
 }

@@ -1,7 +1,9 @@
 import { requireDomain } from "../numerics/domain-error.js";
+import { exponential } from "../numerics/exponential.js";
 import { gaussLegendre } from "../numerics/gauss-legendre.js";
 import type { Kilopascals, Metres } from "../../units/quantities.js";
 import { metres } from "../../units/quantities.js";
+import { logarithm } from "../numerics/logarithm.js";
 import { energyShares } from "./energy-shares.js";
 import { buildMesh, type PileMesh } from "./pile-mesh.js";
 import { pileMeshLines, standardGroups } from "./pile-mesh-lines.js";
@@ -25,7 +27,7 @@ export function pileResponse(pile: PileGeometry, median: (depth: Metres) => Kilo
   const weights = energyShares(mesh, moduli, solution);
   return {
     length: pile.length,
-    lnStiffness: -Math.log(solution.compliance),
+    lnStiffness: -logarithm(solution.compliance),
     rings: mesh.rings,
     levelBounds: mesh.levelBounds,
     weights,
@@ -75,9 +77,9 @@ export function medianModuli(mesh: PileMesh, median: (depth: Metres) => Kilopasc
       const depth = levelBounds[level] + (levelBounds[level + 1] - levelBounds[level]) * rule.nodes[q];
       const modulus = median(metres(depth));
       requireDomain(modulus > 0 && modulus < Infinity, "Median ground modulus", modulus, "above 0 kPa");
-      ln += rule.weights[q] * Math.log(modulus);
+      ln += rule.weights[q] * logarithm(modulus);
     }
-    for (let ring = 0; ring < rings.length; ring++) moduli[ring * levels + level] = Math.exp(ln);
+    for (let ring = 0; ring < rings.length; ring++) moduli[ring * levels + level] = exponential(ln);
   }
   return moduli;
 }

@@ -1,4 +1,5 @@
 import { requireDomain } from "../numerics/domain-error.js";
+import { geometricStep } from "../numerics/geometric-step.js";
 import { metres, type Kilonewtons, type Kilopascals, type Metres } from "../../units/quantities.js";
 import type { DesignedLength } from "./design-length.js";
 import { randolphWroth } from "./randolph-wroth.js";
@@ -66,7 +67,7 @@ function firstEnough(shortest: number, longest: number, enough: (length: number)
   if (enough(shortest)) return shortest;
   let low = shortest;
   for (let k = 1; k <= trials; k++) {
-    let high = k === trials ? longest : shortest * (longest / shortest) ** (k / trials);
+    let high = k === trials ? longest : geometricStep(shortest, longest, k / trials);
     if (enough(high)) {
       while (high - low > 1e-4) {
         const middle = (low + high) / 2;

@@ -1,6 +1,8 @@
 import type { Kilonewtons, Kilopascals, Metres } from "../../units/quantities.js";
 import { metres } from "../../units/quantities.js";
 import { requireDomain } from "../numerics/domain-error.js";
+import { hyperbolicCosine, hyperbolicTangent } from "../numerics/hyperbolic.js";
+import { logarithm } from "../numerics/logarithm.js";
 
 /** A compressible pile in ground that stiffens with depth, as the closed form describes it. */
 export interface ShaftAndBase {
@@ -53,15 +55,15 @@ export function randolphWroth(pile: ShaftAndBase): ShaftAndBaseAnswer {
   requireDomain(nu >= 0 && nu <= 0.5, "Poisson's ratio", nu, "from 0 to 0.5");
   requireDomain(eta > 0 && rho > 0 && xi > 0 && eta < Infinity && rho < Infinity && xi < Infinity, "Ratio of radii or moduli", Math.min(eta, rho, xi), "above 0");
   const influence = Math.max((0.25 + xi * (2.5 * rho * (1 - nu) - 0.25)) * length, leastInfluence * radius);
-  const zeta = Math.log(influence / radius);
+  const zeta = logarithm(influence / radius);
   requireDomain(zeta > 0, "Length over radius", length / radius, "large enough for the radius of influence to lie outside the shaft");
   const lambda = pileModulus / shear;
   const muLength = (Math.sqrt(2 / (zeta * lambda)) * length) / radius;
-  const perShaft = (Math.tanh(muLength) / muLength) * (length / radius);
+  const perShaft = (hyperbolicTangent(muLength) / muLength) * (length / radius);
   const base = (4 * eta) / ((1 - nu) * xi);
   const numerator = base + ((2 * Math.PI * rho) / zeta) * perShaft;
   const denominator = 1 + (base * perShaft) / (Math.PI * lambda);
-  return { zeta, muLength, stiffness: (shear * radius * numerator) / denominator, baseShare: base / Math.cosh(muLength) / numerator };
+  return { zeta, muLength, stiffness: (shear * radius * numerator) / denominator, baseShare: base / hyperbolicCosine(muLength) / numerator };
 }
 
 /**

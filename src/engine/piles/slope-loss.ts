@@ -62,7 +62,7 @@ export function regressionSlope(loss: number, variance: number): number {
 function lossAlong(mesh: PileMesh, moduli: Float64Array, solution: PileSolution, groups: CellGroups, covariance: Float64Array, fields: Float64Array, kept: number): number {
   const { unknowns, envelope, elementUnknowns } = mesh;
   const { compliance, displacements } = solution;
-  const count = covariance.length ** 0.5;
+  const count = Math.sqrt(covariance.length);
   const bands = groups.levelBounds.length - 1;
   const halves = groundHalves(mesh, groups, bands);
   const forces = new Float64Array(halves.length * ELEMENT_UNKNOWNS);

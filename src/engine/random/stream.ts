@@ -1,4 +1,5 @@
 import tychei from "seedrandom/lib/tychei.js";
+import { logarithm } from "../numerics/logarithm.js";
 
 /** A source of random numbers, fixed by the seed and the path that made it and by how often it was asked. */
 export interface Stream {
@@ -39,7 +40,7 @@ export function stream(seed: string, ...path: number[]): Stream {
         v = 2 * generator.double() - 1;
         square = u * u + v * v;
       } while (square >= 1 || square === 0);
-      const scale = Math.sqrt((-2 * Math.log(square)) / square);
+      const scale = Math.sqrt((-2 * logarithm(square)) / square);
       spare = v * scale;
       return u * scale;
     },
