@@ -9,7 +9,7 @@ import { pileMesh } from "../piles/pile-stiffness.js";
 import type { PileGeometry } from "../piles/pile-response.js";
 import { elementLnStiffness } from "./element-stiffness.js";
 import { lengthForm, type LengthForm } from "./length-form.js";
-import { rowProducts } from "./row-products.js";
+import { addRowProducts } from "./ordered-rows.js";
 
 /** Lengths at which the form is made, in even steps of the logarithm. */
 const lengthCount = 16;
@@ -75,14 +75,15 @@ export function formStiffness(ground: GroundUnderPiles, field: Float64Array, lev
   const piles = out.length / lengths;
   const felt = new Float64Array(piles * cells);
   const width = 1 + ground.forms[0].values.length;
-  const seen = new Float64Array(piles * width);
+  const seen = new Float64Array(width * piles);
   ground.forms.forEach((form, k) => {
     const n = form.felt.length;
     for (let i = 0; i < piles; i++) for (let c = 0; c < n; c++) felt[i * n + c] = field[i * cells + form.felt[c]];
-    rowProducts(felt, piles, form.functionals, width, n, seen);
+    seen.fill(0);
+    addRowProducts(form.functionals, felt, piles, n, 1, seen);
     for (let i = 0; i < piles; i++) {
-      let ln = form.lnStiffness + form.slope * seen[i * width] + form.weightSum * level + form.rest;
-      for (let r = 1; r < width; r++) ln += form.values[r - 1] * (seen[i * width + r] + form.sums[r] * level) ** 2;
+      let ln = form.lnStiffness + form.slope * seen[i] + form.weightSum * level + form.rest;
+      for (let r = 1; r < width; r++) ln += form.values[r - 1] * (seen[r * piles + i] + form.sums[r] * level) ** 2;
       out[i * lengths + k] = ln;
     }
   });

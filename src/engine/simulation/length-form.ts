@@ -13,6 +13,7 @@ import { medianModuli, pileMesh } from "../piles/pile-stiffness.js";
 import { projectLevels } from "../piles/project-levels.js";
 import { secondOrderForm } from "../piles/second-order.js";
 import { regressionSlope, slopeLoss } from "../piles/slope-loss.js";
+import { fullRows, type OrderedRows } from "./ordered-rows.js";
 
 /** Parts of the second-order form that are kept: with a dozen, ln stiffness comes nearer to finite elements by a fiftieth of its error. */
 const ranks = 8;
@@ -48,7 +49,7 @@ export interface LengthForm {
   /** places (ring * cells + cell) in the realised ground that the pile feels */
   readonly felt: Int32Array;
   /** the energy shares, then a functional a part, each over the felt places */
-  readonly functionals: Float64Array;
+  readonly functionals: OrderedRows;
   /** sums of the functionals over the whole ground, the shares' first */
   readonly sums: Float64Array;
 }
@@ -96,7 +97,7 @@ export function lengthForm(pile: PileGeometry, ground: FormGround, bounds: Float
     return Math.abs(functionals[c]) > unfelt;
   });
   const overFelt = Float64Array.from({ length: (1 + ranks) * felt.length }, (_, at) => functionals[Math.floor(at / felt.length) * cells + felt[at % felt.length]]);
-  return { mesh, moduli, lnStiffness: -Math.log(solution.compliance), slope, weightSum: sums[0], rest, values, felt, functionals: overFelt, sums };
+  return { mesh, moduli, lnStiffness: -Math.log(solution.compliance), slope, weightSum: sums[0], rest, values, felt, functionals: fullRows(overFelt, 1 + ranks, felt.length), sums };
 }
 
 /** Covariance of the field of relative standard deviations between the cells of a form. */
