@@ -20,7 +20,7 @@ const USAGE = `Writes a workbook for Excel: the site block with the name Site, a
   npm run --silent template -- bid.xlsx
   npm run --silent template -- new-job.xlsx --blank
 
-  FILE.xlsx      the workbook to write; without it probeworth.xlsx
+  FILE.xlsx      the workbook to write
   --blank        leaves the inputs that every job must state blank; without it the figures of the invented demonstration stand there
   --development  for the add-in that developers load (functions PROBEDEV), which the installed one does not calculate
   --overwrite    replaces a file that is there
@@ -29,7 +29,6 @@ Exit code 0; 2 for a call that cannot be carried out as given, with the reason o
 `;
 
 const KNOWN = { values: {}, flags: ["--blank", "--development", "--overwrite"], plain: "the workbook to write" };
-const USUAL_NAME = "probeworth.xlsx";
 
 /**
  * Carries out one call that writes the template.
@@ -42,7 +41,8 @@ export function template(words: readonly string[]): Said {
     if (options === "help") return { out: USAGE, err: "", code: 0 };
     const { flags, plain } = options;
     if (plain.length > 1) throw misused(`One workbook is written, and ${plain.length} names are given: ${plain.join(", ")}.`);
-    const path = plain[0] ?? USUAL_NAME;
+    const path = plain[0];
+    if (path === undefined) throw misused("Give the name of the workbook to write, such as bid.xlsx; --help says more.");
     const overwrite = flags.has("--overwrite");
     requireFree(path, overwrite);
     writeNewFile(path, templateWorkbook(flags.has("--blank"), flags.has("--development") ? "PROBEDEV" : "PROBE"), overwrite);
