@@ -1,4 +1,5 @@
 import { concreteCarbon, investigationCost } from "../costs/prices.js";
+import { hypotenuse } from "../numerics/hypotenuse.js";
 import { normalQuantile } from "../numerics/normal.js";
 import { requireDomain } from "../numerics/domain-error.js";
 import { percentile as percentileOf, weightedPercentile } from "../numerics/percentile.js";
@@ -39,7 +40,7 @@ export function assess(problem: Problem, count: number): Assessment {
     return {
       count, investigation, foundation, failure, delay,
       total: investigation + foundation + failure + delay,
-      standardError: Math.hypot(samplingError, modelScatter * failure),
+      standardError: hypotenuse(samplingError, modelScatter * failure),
       failureChance,
       carbon: concreteCarbon(problem.prices, problem.piles.diameter, totalMetres),
       surprises, tooShortChance: drawn.tooShortChance, totalMetres,

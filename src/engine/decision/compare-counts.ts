@@ -1,3 +1,4 @@
+import { hypotenuse } from "../numerics/hypotenuse.js";
 import { normalDensity, normalDistribution } from "../numerics/normal.js";
 import { assess } from "./assess.js";
 import type { Assessment, CountRow } from "./assessment.js";
@@ -17,7 +18,7 @@ export function assessCounts(problem: Problem, counts: readonly number[]): Count
   return rows.map((row, i) => ({
     ...row,
     chanceCheapest: chances[i],
-    notDistinguishable: row.total - least.total <= 2 * Math.hypot(errorOfDifference(row), errorOfDifference(least)),
+    notDistinguishable: row.total - least.total <= 2 * hypotenuse(errorOfDifference(row), errorOfDifference(least)),
   }));
 }
 

@@ -1,3 +1,4 @@
+import { exponential } from "../numerics/exponential.js";
 import { factorSemidefinite } from "../numerics/semidefinite-factor.js";
 import { normalQuantile } from "../numerics/normal.js";
 import { sobolNormals } from "../numerics/sobol.js";
@@ -61,7 +62,7 @@ export function outerNodes(law: DesignLaw, seed: string): OuterNodes {
   if (law.size === 0) return { normals: new Float64Array(0), weights: Float64Array.of(1), drawsPerNode: totalDraws };
   if (law.size === 1) {
     const normals = Float64Array.from({ length: commonNodes }, (_, k) => spread * normalQuantile((k + 0.5) / commonNodes));
-    const weights = normals.map((value) => Math.exp(-(value ** 2) / 2 + (value / spread) ** 2 / 2));
+    const weights = normals.map((value) => exponential(-(value ** 2) / 2 + (value / spread) ** 2 / 2));
     const sum = weights.reduce((total, value) => total + value, 0);
     return { normals, weights: weights.map((value) => value / sum), drawsPerNode: totalDraws / commonNodes };
   }

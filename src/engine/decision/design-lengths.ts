@@ -1,4 +1,5 @@
 import { kilonewtons, kilopascals, metres, type Kilonewtons, type Metres } from "../../units/quantities.js";
+import { exponential } from "../numerics/exponential.js";
 import { designLength, type DesignedLength } from "../piles/design-length.js";
 import { profileDesign } from "../piles/profile-design.js";
 import { groundProfile } from "./ground-profile.js";
@@ -31,7 +32,7 @@ export function designedClasses(problem: Problem, plan: Plan, lnDesignValue: num
       byLoad[c] = byLoad[0];
       continue;
     }
-    const found = design(kilonewtons(plan.loads[c]), Math.exp(lnDesignValue), building.allowableSettlement, metres(rounding === "built" ? piles.lengthStep : 0));
+    const found = design(kilonewtons(plan.loads[c]), exponential(lnDesignValue), building.allowableSettlement, metres(rounding === "built" ? piles.lengthStep : 0));
     byLoad[c] = rounding === "built" || found.length <= piles.shortest ? found.length : Math.min(found.length + piles.lengthStep / 2, piles.longest);
     allowable &&= found.allowable;
   }

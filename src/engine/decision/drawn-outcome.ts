@@ -1,3 +1,4 @@
+import { logarithm } from "../numerics/logarithm.js";
 import { normalDistribution } from "../numerics/normal.js";
 import { gaussLegendre } from "../numerics/gauss-legendre.js";
 import { lnDesignValues, outerNodes, type DesignLaw } from "./design-law.js";
@@ -50,7 +51,7 @@ export function drawnOutcome(problem: Problem, model: SiteModel, holes: HoleCova
   const draws = standardDraws(n, drawsPerNode, problem.seed);
   const width = 2 * n * drawsPerNode;
   const { distortion, foundDistortion, surprises: drawnSurprises, draw } = distortionDraws(plan, drawsPerNode);
-  const needed = Float64Array.from(plan.piles, (p) => Math.log(p.load / problem.building.allowableSettlement));
+  const needed = Float64Array.from(plan.piles, (p) => logarithm(p.load / problem.building.allowableSettlement));
   const laws = lengthLaws(model);
   const interaction = rememberedInteraction(problem, model, laws);
   const lengthened = finds && interaction !== undefined ? lengthenedPlaces(model, holes, laws, problem.piles.longest, needed) : undefined;

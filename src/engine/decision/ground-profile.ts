@@ -1,3 +1,5 @@
+import { exponential } from "../numerics/exponential.js";
+import { logarithm, logarithmOfOnePlus } from "../numerics/logarithm.js";
 import type { Ground, GroundLayer } from "./problem.js";
 
 /** The ground's medians and variances by depth, split into a level that scales and a shape that does not. */
@@ -27,20 +29,20 @@ export interface GroundProfile {
  * The regional multiplier has unit mean and lowers the median in the same way.
  */
 export function groundProfile(ground: Ground): GroundProfile {
-  const variances = ground.layers.map((layer) => Math.log1p(layer.cov ** 2));
-  const regionalVariance = Math.log1p(ground.regionalCov ** 2);
+  const variances = ground.layers.map((layer) => logarithmOfOnePlus(layer.cov ** 2));
+  const regionalVariance = logarithmOfOnePlus(ground.regionalCov ** 2);
   const groundVariance = variances.find((v) => v > 0) ?? 0;
   const at = (depth: number): number => layerAt(ground.layers, depth);
   const logMedian = (depth: number): number => {
     const layer = ground.layers[at(depth)];
-    return Math.log(layer.mean + layer.increase * (depth - layer.top)) - variances[at(depth)] / 2 - regionalVariance / 2;
+    return logarithm(layer.mean + layer.increase * (depth - layer.top)) - variances[at(depth)] / 2 - regionalVariance / 2;
   };
   const surface = logMedian(0);
   const relative = variances.map((v) => (groundVariance > 0 ? Math.sqrt(v / groundVariance) : 1));
   const uniform = ground.layers.length === 1 && ground.layers[0].increase === 0;
   return {
-    modulus: Math.exp(surface),
-    shape: uniform ? () => 1 : (depth) => Math.exp(logMedian(depth) - surface),
+    modulus: exponential(surface),
+    shape: uniform ? () => 1 : (depth) => exponential(logMedian(depth) - surface),
     shapeKey: uniform
       ? "uniform"
       : JSON.stringify(ground.layers.map((l, i) => [l.top, l.mean / ground.layers[0].mean, l.increase / ground.layers[0].mean, variances[i] - variances[0]])),

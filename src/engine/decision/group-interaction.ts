@@ -1,5 +1,7 @@
+import { exponential } from "../numerics/exponential.js";
 import { gaussLegendre } from "../numerics/gauss-legendre.js";
 import { lagrangeWeights } from "../numerics/lagrange.js";
+import { logarithm } from "../numerics/logarithm.js";
 import { interactionFactor, type InteractingPile } from "../piles/interaction-factor.js";
 import { groundProfile } from "./ground-profile.js";
 import type { Plan } from "./plan.js";
@@ -75,13 +77,13 @@ export function groupInteraction(logLengths: Float64Array, pileOf: (length: numb
   const count = logLengths.length;
   const table = new Float64Array(distances.length * count);
   for (let k = 0; k < count; k++) {
-    const pile = pileOf(Math.exp(logLengths[k]));
+    const pile = pileOf(exponential(logLengths[k]));
     // Piles that touch may stand a rounding nearer than they can.
     for (let d = 1; d < distances.length; d++) table[d * count + k] = interactionFactor(pile, Math.max(distances[d], 2 * pile.radius));
   }
   const eachPair = (lengths: Float64Array, use: (i: number, j: number, alpha: number) => void): void => {
     const n = lengths.length;
-    const logs = lengths.map(Math.log);
+    const logs = lengths.map(logarithm);
     let last = Number.NaN;
     let start = 0;
     let weights: Float64Array = new Float64Array(4);

@@ -1,4 +1,5 @@
 import type { Point } from "../investigation/hole-positions.js";
+import { hypotenuse } from "../numerics/hypotenuse.js";
 import { rowAtDistance } from "./distance-interpolation.js";
 import type { Plan } from "./plan.js";
 import { ranks, type StructureTables } from "./structure-tables.js";
@@ -28,7 +29,7 @@ export function layoutTables(tables: StructureTables, plan: Plan, holes: readonl
   const curve = new Float64Array(forms * ranks);
   for (let i = 0; i < piles; i++) {
     for (let h = 0; h < n; h++) {
-      const distance = Math.hypot(plan.piles[i].x - holes[h].x, plan.piles[i].y - holes[h].y);
+      const distance = hypotenuse(plan.piles[i].x - holes[h].x, plan.piles[i].y - holes[h].y);
       rowAtDistance(tables.coordinates, tables.holes, lengths * groups, distance, row);
       rowAtDistance(tables.coordinates, tables.curveHoles, forms * ranks, distance, curve);
       for (let k = 0; k < lengths; k++) {

@@ -1,4 +1,5 @@
 import { lagrangeWeights } from "../numerics/lagrange.js";
+import { logarithm } from "../numerics/logarithm.js";
 import type { HoleCovariance } from "./hole-covariance.js";
 import { placeOfLength, type LengthLaws } from "./needed-length.js";
 import type { SiteModel } from "./site-model.js";
@@ -32,7 +33,7 @@ export function lengthenedPlaces(
     const slopes: Float64Array[] = new Array<Float64Array>(lengths.length);
     const starts = Float64Array.from(lengths, (length) => placeOfLength(laws, length));
     const ready = (pile: number): void => {
-      const own = lagrangeWeights(grid, Math.min(Math.max(Math.log(lengths[pile]), grid[0]), grid[count - 1]));
+      const own = lagrangeWeights(grid, Math.min(Math.max(logarithm(lengths[pile]), grid[0]), grid[count - 1]));
       const toNormal = (at: { start: number; weights: Float64Array }, s: number): number => {
         let sum = 0;
         for (let q = 0; q < 4; q++) sum += at.weights[q] * holes.design[(pile * count + at.start + q) * size + s];

@@ -1,3 +1,4 @@
+import { logarithm } from "../numerics/logarithm.js";
 import { normalDistribution } from "../numerics/normal.js";
 import { lagrangeWeights } from "../numerics/lagrange.js";
 import type { HoleCovariance } from "./hole-covariance.js";
@@ -109,7 +110,7 @@ export function trialLength(laws: LengthLaws, model: SiteModel, length: number, 
     threshold = root <= 0 ? (curve > 0 ? Infinity : -Infinity) : (1 - Math.sqrt(root)) / (2 * curve);
   }
   const grid = model.family.logLengths;
-  const { start, weights } = lagrangeWeights(grid, clamp(Math.log(length), grid[0], grid[grid.length - 1]));
+  const { start, weights } = lagrangeWeights(grid, clamp(logarithm(length), grid[0], grid[grid.length - 1]));
   return { start, weights, threshold, variance, restVariance: along(laws.restVariance) };
 }
 
@@ -140,7 +141,7 @@ export function chanceTooSoft(trial: TrialLength, lengths: number, holes: HoleCo
 function place(laws: LengthLaws, length: number): { at: number; t: number } {
   const first = laws.logLengths[0];
   const step = laws.logLengths[1] - first;
-  const x = clamp((Math.log(length) - first) / step, 0, steps - 1);
+  const x = clamp((logarithm(length) - first) / step, 0, steps - 1);
   const at = Math.min(Math.floor(x), steps - 2);
   return { at, t: x - at };
 }

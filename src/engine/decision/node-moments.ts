@@ -1,3 +1,5 @@
+import { exponentialLessOne } from "../numerics/exponential-less-one.js";
+import { logarithm } from "../numerics/logarithm.js";
 import { factorSemidefinite } from "../numerics/semidefinite-factor.js";
 import { lagrangeWeights } from "../numerics/lagrange.js";
 import type { HoleCovariance } from "./hole-covariance.js";
@@ -77,7 +79,7 @@ function interpolation(grid: Float64Array, lengths: Float64Array, starts: Int32A
       weights.copyWithin(i * 4, (i - 1) * 4, i * 4);
       continue;
     }
-    const found = lagrangeWeights(grid, Math.min(Math.max(Math.log(lengths[i]), grid[0]), grid[grid.length - 1]));
+    const found = lagrangeWeights(grid, Math.min(Math.max(logarithm(lengths[i]), grid[0]), grid[grid.length - 1]));
     starts[i] = found.start;
     weights.set(found.weights, i * 4);
     last = lengths[i];
@@ -107,7 +109,7 @@ function bendCovariance(covariance: Float64Array, holes: HoleCovariance, q: numb
     }
     if (covariance[i * n + i] > 0) lambda = Math.max(lambda, gram[i * n + i] / covariance[i * n + i]);
   }
-  const scale = lambda > 0 ? -Math.expm1(-lambda * q) / lambda : q;
+  const scale = lambda > 0 ? -exponentialLessOne(-lambda * q) / lambda : q;
   for (let i = 0; i < n; i++) {
     for (let j = 0; j <= i; j++) {
       covariance[i * n + j] -= scale * gram[i * n + j];

@@ -1,4 +1,7 @@
 import { metres, kilopascals, type Kilopascals, type Metres } from "../../units/quantities.js";
+import { exponential } from "../numerics/exponential.js";
+import { geometricStep } from "../numerics/geometric-step.js";
+import { logarithm } from "../numerics/logarithm.js";
 import { pileResponse } from "../piles/pile-stiffness.js";
 import { projectLevels } from "../piles/project-levels.js";
 import type { PileGeometry, PileResponse } from "../piles/pile-response.js";
@@ -50,11 +53,11 @@ export interface PileFamily {
 }
 
 /** Step of ln modulus between two nodes. */
-export const nodeStep = Math.log(nodeRatio);
+export const nodeStep = logarithm(nodeRatio);
 
 /** n lengths from the shortest to the longest, each the same factor above the one before, m. */
 function geometricLengths(shortest: number, longest: number, n: number): Float64Array {
-  return Float64Array.from({ length: n }, (_, i) => (i === n - 1 ? longest : shortest * (longest / shortest) ** (i / (n - 1))));
+  return Float64Array.from({ length: n }, (_, i) => (i === n - 1 ? longest : geometricStep(shortest, longest, i / (n - 1))));
 }
 
 /**
@@ -66,13 +69,13 @@ export function pileFamily(key: FamilyKey): PileFamily {
   // Interpolation needs a range of lengths even where only one length is allowed.
   const longest = Math.max(key.longest, 1.5 * key.shortest);
   const lengths = geometricLengths(key.shortest, longest, lengthCount);
-  const logLengths = lengths.map(Math.log);
+  const logLengths = lengths.map(logarithm);
   const geometry = (length: number): PileGeometry => ({
     diameter: key.diameter, pileModulus: key.pileModulus, poissonRatio: key.poissonRatio, length: metres(length),
   });
   const nodes = new Map<number, FamilyNode>();
   const analyse = (j: number): FamilyNode => {
-    const modulus = key.pileModulus / nodeRatio ** j;
+    const modulus = key.pileModulus * exponential(-j * nodeStep);
     const responses = Array.from(lengths, (length, i) =>
       pileResponse(
         geometry(length),
@@ -103,7 +106,7 @@ export function pileFamily(key: FamilyKey): PileFamily {
       return node;
     },
     locate(modulus) {
-      const x = Math.log(key.pileModulus / modulus) / nodeStep;
+      const x = logarithm(key.pileModulus / modulus) / nodeStep;
       // Nodes are numbered towards softer ground: the softer node of the pair is the one above x.
       const j = Math.floor(x) + 1;
       return { j, fraction: j - x };

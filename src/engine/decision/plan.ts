@@ -1,3 +1,4 @@
+import { hypotenuse } from "../numerics/hypotenuse.js";
 import type { PilePoint } from "./problem.js";
 import { neighbourPairs, type NeighbourPair } from "./neighbour-pairs.js";
 
@@ -27,7 +28,7 @@ export function sortedPlan(piles: readonly PilePoint[]): Plan {
   const distanceOf = new Int32Array(n * n);
   for (let i = 0; i < n; i++) {
     for (let j = 0; j < i; j++) {
-      const distance = Math.hypot(piles[i].x - piles[j].x, piles[i].y - piles[j].y);
+      const distance = hypotenuse(piles[i].x - piles[j].x, piles[i].y - piles[j].y);
       const key = Math.round(distance * 1e6); // a grid's equal distances differ by rounding only
       let at = index.get(key);
       if (at === undefined) {

@@ -6,6 +6,8 @@ import { automaticHoles, type Point } from "../investigation/hole-positions.js";
 import { readingDepths } from "../investigation/reading-depths.js";
 import { readingSums, type ReadingSums } from "../investigation/reading-sums.js";
 import { requireDomain } from "../numerics/domain-error.js";
+import { hypotenuse } from "../numerics/hypotenuse.js";
+import { logarithmOfOnePlus } from "../numerics/logarithm.js";
 import { groundProfile } from "./ground-profile.js";
 import { commonLaw, nearestLaw, type DesignLaw } from "./design-law.js";
 import { layoutTables, type LayoutTables } from "./layout.js";
@@ -74,9 +76,9 @@ export function preparedSite(problem: Problem): PreparedSite {
     const variances: LogVariances = {
       ground: profile.groundVariance,
       regional: profile.regionalVariance,
-      reading: Math.log1p(investigation.readingCov ** 2),
-      hole: Math.log1p(investigation.holeCov ** 2),
-      method: Math.log1p(investigation.methodCov ** 2),
+      reading: logarithmOfOnePlus(investigation.readingCov ** 2),
+      hole: logarithmOfOnePlus(investigation.holeCov ** 2),
+      method: logarithmOfOnePlus(investigation.methodCov ** 2),
     };
     const nearest = (places: readonly Point[]): DesignLaw => {
       const n = places.length;
@@ -93,7 +95,7 @@ export function preparedSite(problem: Problem): PreparedSite {
         }
       }
       const ofPile = Int32Array.from(building.piles, (p) => {
-        const distances = places.map((h) => Math.hypot(h.x - p.x, h.y - p.y));
+        const distances = places.map((h) => hypotenuse(h.x - p.x, h.y - p.y));
         return distances.indexOf(Math.min(...distances));
       });
       return nearestLaw(single, between, n, ofPile);
@@ -148,5 +150,5 @@ function reachOf(problem: Problem): number {
   ];
   xs.push(...places.map((p) => p.x));
   ys.push(...places.map((p) => p.y));
-  return Math.hypot(Math.max(...xs) - Math.min(...xs), Math.max(...ys) - Math.min(...ys));
+  return hypotenuse(Math.max(...xs) - Math.min(...xs), Math.max(...ys) - Math.min(...ys));
 }

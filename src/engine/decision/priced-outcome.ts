@@ -1,5 +1,6 @@
 import { damageShare } from "../costs/damage.js";
 import { foundationCost } from "../costs/prices.js";
+import { hypotenuse } from "../numerics/hypotenuse.js";
 import type { DrawnOutcome } from "./drawn-outcome.js";
 import { damageThreshold } from "./node-draws.js";
 import type { Problem } from "./problem.js";
@@ -52,7 +53,7 @@ export function pricedOutcome(problem: Problem, drawn: DrawnOutcome): PricedOutc
   }
   return {
     foundation: sum.foundation, failure: sum.failure, delay: sum.delay, failureChance: Math.min(sum.failureChance, 1),
-    surprises: sum.surprises, totalMetres: sum.metres, samplingError: Math.hypot(errorOfMean(byDraws), drawn.isSampled ? errorOfMean(byNodes) : 0),
+    surprises: sum.surprises, totalMetres: sum.metres, samplingError: hypotenuse(errorOfMean(byDraws), drawn.isSampled ? errorOfMean(byNodes) : 0),
   };
 }
 

@@ -1,4 +1,5 @@
 import { factorSemidefinite } from "../numerics/semidefinite-factor.js";
+import { sine } from "../numerics/sine.js";
 import { symmetricEigen } from "../numerics/symmetric-eigen.js";
 
 /** A quadratic form of a random field by its few largest parts: g' M g = sum of values_r (functionals_r ' g)^2 and a remainder. */
@@ -78,7 +79,7 @@ function whiten(matrix: Float64Array, root: Float64Array, n: number): Float64Arr
 function leadingEigen(a: Float64Array, n: number, ranks: number): { values: Float64Array; vectors: Float64Array } {
   const width = Math.min(n, ranks + 8);
   // A fixed start with no special direction: results may not depend on anything but the matrix.
-  let block: Float64Array = Float64Array.from({ length: n * width }, (_, i) => Math.sin(1 + i * 1.7548776662466927));
+  let block: Float64Array = Float64Array.from({ length: n * width }, (_, i) => sine(1 + i * 1.7548776662466927));
   for (let iteration = 0; iteration < 6; iteration++) {
     orthonormalise(block, n, width);
     block = times(a, block, n, width);

@@ -1,4 +1,5 @@
 import { lagrangeWeights } from "../numerics/lagrange.js";
+import { logarithm } from "../numerics/logarithm.js";
 import type { HoleCovariance } from "./hole-covariance.js";
 import type { SiteModel } from "./site-model.js";
 import { ranks } from "./structure-tables.js";
@@ -111,7 +112,7 @@ function weightsOfForms({ family }: SiteModel, lengths: Float64Array): Float64Ar
   for (let i = 0; i < lengths.length; i++) {
     // Piles of one load share their length, and mostly stand next to each other in the list.
     if (i > 0 && lengths[i] === lengths[i - 1]) weights.copyWithin(i * forms, (i - 1) * forms, i * forms);
-    else weights.set(lagrangeWeights(grid, Math.min(Math.max(Math.log(lengths[i]), grid[0]), grid[forms - 1])).weights, i * forms);
+    else weights.set(lagrangeWeights(grid, Math.min(Math.max(logarithm(lengths[i]), grid[0]), grid[forms - 1])).weights, i * forms);
   }
   return weights;
 }

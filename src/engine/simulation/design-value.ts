@@ -1,5 +1,7 @@
 import type { DesignRule } from "../investigation/design-rule.js";
 import { requireDomain } from "../numerics/domain-error.js";
+import { exponential } from "../numerics/exponential.js";
+import { logarithm } from "../numerics/logarithm.js";
 import { moments } from "../numerics/moments.js";
 import { percentile } from "../numerics/percentile.js";
 
@@ -20,7 +22,7 @@ export function lnDesignValue(rule: DesignRule, logs: Float64Array): number {
     case "harmonic":
       return -lnMeanOfExponentials(logs, -1);
     case "quartile":
-      return Math.log(percentile(logs.map(Math.exp), 25)); // of the readings themselves: between two of them the logarithm's quartile lies lower
+      return logarithm(percentile(logs.map(exponential), 25)); // of the readings themselves: between two of them the logarithm's quartile lies lower
     case "lessdeviations": {
       requireDomain(logs.length >= 2, "Number of readings", logs.length, "at least 2 for a rule that takes off standard deviations");
       const spread = moments(logs);
@@ -38,6 +40,6 @@ function mean(values: Float64Array): number {
 function lnMeanOfExponentials(logs: Float64Array, sign: number): number {
   const middle = logs[0]; // keeps the exponentials near 1
   let sum = 0;
-  for (const value of logs) sum += Math.exp(sign * (value - middle));
-  return sign * middle + Math.log(sum / logs.length);
+  for (const value of logs) sum += exponential(sign * (value - middle));
+  return sign * middle + logarithm(sum / logs.length);
 }

@@ -1,3 +1,5 @@
+import { exponential } from "../numerics/exponential.js";
+import { logarithm } from "../numerics/logarithm.js";
 import { headCompliance } from "../piles/pile-solution.js";
 import { averageLevels } from "../piles/project-levels.js";
 import type { LengthForm } from "./length-form.js";
@@ -14,6 +16,6 @@ import type { LengthForm } from "./length-form.js";
 export function elementLnStiffness(form: LengthForm, pileModulus: number, field: Float64Array, bounds: Float64Array): number {
   const { mesh } = form;
   const onLevels = averageLevels(field, mesh.rings.length, bounds, mesh.levelBounds);
-  for (let c = 0; c < onLevels.length; c++) onLevels[c] = form.moduli[c] * Math.exp(onLevels[c]);
-  return -Math.log(headCompliance(mesh, onLevels, pileModulus));
+  for (let c = 0; c < onLevels.length; c++) onLevels[c] = form.moduli[c] * exponential(onLevels[c]);
+  return -logarithm(headCompliance(mesh, onLevels, pileModulus));
 }

@@ -2,6 +2,7 @@ import { groundProfile } from "../decision/ground-profile.js";
 import type { Problem } from "../decision/problem.js";
 import { separableTerms } from "../ground/separable-terms.js";
 import { requireDomain } from "../numerics/domain-error.js";
+import { exponential } from "../numerics/exponential.js";
 import { stream } from "../random/stream.js";
 import { addProduct, covarianceRoot } from "./covariance-root.js";
 
@@ -49,7 +50,7 @@ export function groundSlice({ ground, seed }: Problem, index: number, { x, depth
   const sd = Math.sqrt(profile.groundVariance);
   return field.map((value, k) => {
     const depth = depths[Math.floor(k / width)];
-    return Math.exp(profile.logMedian(depth) + level + sd * profile.relativeSd(depth) * value);
+    return exponential(profile.logMedian(depth) + level + sd * profile.relativeSd(depth) * value);
   });
 }
 

@@ -3,8 +3,10 @@ import { groundProfile, type GroundProfile } from "../decision/ground-profile.js
 import { cellValues } from "../decision/cell-tables.js";
 import { levelGrid } from "../decision/level-grid.js";
 import type { Problem } from "../decision/problem.js";
+import { exponential } from "../numerics/exponential.js";
 import { lagrangeWeights } from "../numerics/lagrange.js";
 import { separableTerms, type SeparableTerm } from "../ground/separable-terms.js";
+import { logarithm } from "../numerics/logarithm.js";
 import { pileMesh } from "../piles/pile-stiffness.js";
 import type { PileGeometry } from "../piles/pile-response.js";
 import { elementLnStiffness } from "./element-stiffness.js";
@@ -35,12 +37,12 @@ export function groundUnderPiles({ ground, piles }: Problem): GroundUnderPiles {
   const profile = groundProfile(ground);
   const terms = separableTerms(ground);
   // Interpolation needs a range of lengths even where only one length is allowed.
-  const range = Math.log(Math.max(piles.longest / piles.shortest, 1.5));
-  const logLengths = Float64Array.from({ length: lengthCount }, (_, k) => Math.log(piles.shortest) + (range * k) / (lengthCount - 1));
+  const range = logarithm(Math.max(piles.longest / piles.shortest, 1.5));
+  const logLengths = Float64Array.from({ length: lengthCount }, (_, k) => logarithm(piles.shortest) + (range * k) / (lengthCount - 1));
   const geometry = (length: number): PileGeometry => ({
     diameter: piles.diameter, pileModulus: piles.modulus, poissonRatio: ground.poissonRatio, length: metres(length),
   });
-  const deepest = pileMesh(geometry(Math.exp(logLengths[lengthCount - 1])));
+  const deepest = pileMesh(geometry(exponential(logLengths[lengthCount - 1])));
   const levelBounds = levelGrid(deepest.levelBounds[deepest.levelBounds.length - 1]);
   const { groundVariance, regionalVariance, relativeSd, modulus, shape } = profile;
   const about = { terms, median: (depth: Metres) => kilopascals(modulus * shape(depth)), relativeSd, groundVariance, regionalVariance };
@@ -51,7 +53,7 @@ export function groundUnderPiles({ ground, piles }: Problem): GroundUnderPiles {
     levelBounds,
     cellSd: cellValues(levelBounds, (depth) => Math.sqrt(groundVariance) * relativeSd(depth)),
     logLengths,
-    forms: Array.from(logLengths, (ln) => lengthForm(geometry(Math.exp(ln)), about, levelBounds)),
+    forms: Array.from(logLengths, (ln) => lengthForm(geometry(exponential(ln)), about, levelBounds)),
     pileModulus: piles.modulus,
   };
 }

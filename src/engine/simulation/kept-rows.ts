@@ -11,7 +11,7 @@ export interface Totals {
  * Bytes that the figures of a run may take, by kind. All realisations are kept, because tables depend on their order and percentiles on
  * each of them; the thread that makes the tables holds half as much again while it looks, and stays below 300 MB.
  */
-const room: Totals = { elements: 64 * 2 ** 20, form: 96 * 2 ** 20 };
+const room: Totals = { elements: 64 * 1048576, form: 96 * 1048576 };
 
 /** Bytes about the figures of a realisation: what an array weighs by itself. */
 const aboutRow = 200;

@@ -3,6 +3,7 @@ import { cellCovariance, cellValues } from "../decision/cell-tables.js";
 import { lowRankForm } from "../decision/quadratic-form.js";
 import { ringTables } from "../ground/ring-average.js";
 import type { SeparableTerm } from "../ground/separable-terms.js";
+import { logarithm } from "../numerics/logarithm.js";
 import { energyShares } from "../piles/energy-shares.js";
 import type { CellGroups } from "../piles/grouped-form.js";
 import type { PileMesh } from "../piles/pile-mesh.js";
@@ -97,7 +98,7 @@ export function lengthForm(pile: PileGeometry, ground: FormGround, bounds: Float
     return Math.abs(functionals[c]) > unfelt;
   });
   const overFelt = Float64Array.from({ length: (1 + ranks) * felt.length }, (_, at) => functionals[Math.floor(at / felt.length) * cells + felt[at % felt.length]]);
-  return { mesh, moduli, lnStiffness: -Math.log(solution.compliance), slope, weightSum: sums[0], rest, values, felt, functionals: fullRows(overFelt, 1 + ranks, felt.length), sums };
+  return { mesh, moduli, lnStiffness: -logarithm(solution.compliance), slope, weightSum: sums[0], rest, values, felt, functionals: fullRows(overFelt, 1 + ranks, felt.length), sums };
 }
 
 /** Covariance of the field of relative standard deviations between the cells of a form. */

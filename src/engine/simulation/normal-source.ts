@@ -1,3 +1,5 @@
+import { exponential } from "../numerics/exponential.js";
+import { logarithm } from "../numerics/logarithm.js";
 import type { Stream } from "../random/stream.js";
 
 /** Layers of the ziggurat, where its tail begins, and the area of a layer. */
@@ -8,9 +10,9 @@ const area = 9.91256303526217e-3;
 /** Right edge of each layer, the lowest one's stretched by its tail; and what share of it lies inside the layer above. */
 const edges = new Float64Array(layers + 1);
 const inside = new Float64Array(layers);
-edges[0] = area / Math.exp((-tail * tail) / 2);
+edges[0] = area / exponential((-tail * tail) / 2);
 edges[1] = tail;
-for (let i = 2; i < layers; i++) edges[i] = Math.sqrt(-2 * Math.log(area / edges[i - 1] + Math.exp((-edges[i - 1] * edges[i - 1]) / 2)));
+for (let i = 2; i < layers; i++) edges[i] = Math.sqrt(-2 * logarithm(area / edges[i - 1] + exponential((-edges[i - 1] * edges[i - 1]) / 2)));
 for (let i = 0; i < layers; i++) inside[i] = edges[i + 1] / edges[i];
 
 /** Gives standard normals by the thousand. */
@@ -44,13 +46,13 @@ export function normalSource(seed: Stream): NormalSource {
   const outside = (u: number, layer: number): number | undefined => {
     if (layer === 0) {
       for (;;) {
-        const x = Math.log(uniform()) / tail;
-        if (-2 * Math.log(uniform()) >= x * x) return u < 0 ? x - tail : tail - x;
+        const x = logarithm(uniform()) / tail;
+        if (-2 * logarithm(uniform()) >= x * x) return u < 0 ? x - tail : tail - x;
       }
     }
     const x = u * edges[layer];
-    const low = Math.exp((x * x - edges[layer] * edges[layer]) / 2);
-    const high = Math.exp((x * x - edges[layer + 1] * edges[layer + 1]) / 2);
+    const low = exponential((x * x - edges[layer] * edges[layer]) / 2);
+    const high = exponential((x * x - edges[layer + 1] * edges[layer + 1]) / 2);
     return low + uniform() * (high - low) < 1 ? x : undefined;
   };
   return {

@@ -3,6 +3,8 @@ import { foundationCost } from "../costs/prices.js";
 import type { Interaction } from "../decision/group-interaction.js";
 import type { Plan } from "../decision/plan.js";
 import type { Problem } from "../decision/problem.js";
+import { exponential } from "../numerics/exponential.js";
+import { logarithm } from "../numerics/logarithm.js";
 import { lnStiffnessAt } from "./stiffness-curve.js";
 
 /**
@@ -54,16 +56,16 @@ export function priceOutcome(
   for (let i = 0; i < n; i++) {
     const { load } = plan.piles[i];
     const length = built.lengths[i];
-    const needed = Math.exp(neededLog[i]);
+    const needed = exponential(neededLog[i]);
     const trial = length + delay.surpriseTolerance;
-    const needs = Math.log(load / building.allowableSettlement);
+    const needs = logarithm(load / building.allowableSettlement);
     if (needed < length) overDesign += length - needed;
-    settlements[i] = lengthened[i] = load * Math.exp(-lnStiffnessAt(logLengths, lnStiffness, i, Math.log(length)));
-    if (trial >= piles.longest || lnStiffnessAt(logLengths, lnStiffness, i, Math.log(trial)) >= needs) continue;
+    settlements[i] = lengthened[i] = load * exponential(-lnStiffnessAt(logLengths, lnStiffness, i, logarithm(length)));
+    if (trial >= piles.longest || lnStiffnessAt(logLengths, lnStiffness, i, logarithm(trial)) >= needs) continue;
     surprises++;
     // Softer than needed at the trial length yet stiff enough at a shorter one: the curve dips, and the rig goes on to the end.
     lengths[i] = needed > trial && needed <= piles.longest ? needed : piles.longest;
-    lengthened[i] = load * Math.exp(-lnStiffnessAt(logLengths, lnStiffness, i, Math.log(lengths[i])));
+    lengthened[i] = load * exponential(-lnStiffnessAt(logLengths, lnStiffness, i, logarithm(lengths[i])));
     delayCost += delay.daysPerSurprise * delay.dayCost + (lengths[i] - length) * prices.perPileMetre;
   }
   const found = surprises > 0 ? delay.foundShare : 0;

@@ -2,6 +2,7 @@ import type { Plan } from "../decision/plan.js";
 import { pointRingTable, ringTables } from "../ground/ring-average.js";
 import type { SeparableTerm } from "../ground/separable-terms.js";
 import type { Point } from "../investigation/hole-positions.js";
+import { hypotenuse } from "../numerics/hypotenuse.js";
 
 /** Where the ground is looked at. */
 export interface FieldPlaces {
@@ -52,14 +53,14 @@ export function planCovariances(terms: readonly SeparableTerm[], { plan, rings, 
       }
     });
   }
-  const away = Float64Array.from(holes.flatMap((hole) => plan.piles.map((p) => Math.hypot(p.x - hole.x, p.y - hole.y))));
+  const away = Float64Array.from(holes.flatMap((hole) => plan.piles.map((p) => hypotenuse(p.x - hole.x, p.y - hole.y))));
   terms.forEach((term, t) => {
     const matrix = out[t];
     const seen = holes.length === 0 ? away : pointRingTable(term.plan, rings, away);
     for (let h = 0; h < holes.length; h++) {
       const row = ringCount + h;
       for (let k = 0; k < ringCount; k++) matrix[row * n + k] = matrix[k * n + row] = seen[h * ringCount + k];
-      for (let g = 0; g <= h; g++) matrix[row * n + ringCount + g] = matrix[(ringCount + g) * n + row] = term.plan(Math.hypot(holes[h].x - holes[g].x, holes[h].y - holes[g].y));
+      for (let g = 0; g <= h; g++) matrix[row * n + ringCount + g] = matrix[(ringCount + g) * n + row] = term.plan(hypotenuse(holes[h].x - holes[g].x, holes[h].y - holes[g].y));
     }
   });
   return out;

@@ -1,5 +1,6 @@
 import type { GroundProfile } from "../decision/ground-profile.js";
 import type { Investigation } from "../decision/problem.js";
+import { logarithmOfOnePlus } from "../numerics/logarithm.js";
 import type { Stream } from "../random/stream.js";
 import type { HolePlaces, PlacesOfVariant } from "./hole-places.js";
 
@@ -41,7 +42,7 @@ export interface ReadingLaw {
 
 /** The law of one investigation's readings. */
 export function readingLaw(investigation: Investigation, profile: GroundProfile, places: HolePlaces, own: PlacesOfVariant): ReadingLaw {
-  const variances = [investigation.methodCov, investigation.holeCov, investigation.readingCov].map((cov) => Math.log1p(cov ** 2));
+  const variances = [investigation.methodCov, investigation.holeCov, investigation.readingCov].map((cov) => logarithmOfOnePlus(cov ** 2));
   return {
     depths: own.depths,
     logModulus: profile.logModulus,

@@ -1,5 +1,6 @@
 import { designLengths } from "../decision/design-lengths.js";
 import { requireDomain } from "../numerics/domain-error.js";
+import { logarithm } from "../numerics/logarithm.js";
 import { stream, type Stream } from "../random/stream.js";
 import { elementStiffness, formStiffness, scaleField } from "./ground-under-piles.js";
 import { outcomeColumns, priceOutcome, type BuiltPiles, type RealisedPiles } from "./outcome.js";
@@ -78,8 +79,8 @@ function price({ task, plan, ground, variants, interaction }: Simulation, built:
   const { logLengths } = ground;
   const { building, piles } = variants[0].problem;
   const from = logLengths[0];
-  const to = Math.max(from, Math.min(Math.log(piles.longest), logLengths[logLengths.length - 1]));
-  const neededLog = Float64Array.from(plan.piles, ({ load }, i) => neededLogLength(logLengths, lnStiffness, i, from, to, Math.log(load / building.allowableSettlement)));
+  const to = Math.max(from, Math.min(logarithm(piles.longest), logLengths[logLengths.length - 1]));
+  const neededLog = Float64Array.from(plan.piles, ({ load }, i) => neededLogLength(logLengths, lnStiffness, i, from, to, logarithm(load / building.allowableSettlement)));
   const realised: RealisedPiles = { logLengths, lnStiffness, neededLog };
   built.forEach((b, k) => {
     const { problem } = variants[Math.floor(k / task.counts.length)];

@@ -3,6 +3,7 @@ import type { GroundProfile } from "../decision/ground-profile.js";
 import type { Problem } from "../decision/problem.js";
 import { designDistribution, type LogVariances } from "../investigation/design-distribution.js";
 import { readingSums } from "../investigation/reading-sums.js";
+import { hypotenuse } from "../numerics/hypotenuse.js";
 import type { HolePlaces, PlacesOfVariant } from "./hole-places.js";
 import { lnDesignValue } from "./design-value.js";
 import { logReadings, readingLaw, type ErrorDraws, type ReadingLaw } from "./readings.js";
@@ -55,7 +56,7 @@ export function preparedVariant(problem: Problem, profile: GroundProfile, places
     const groups = holes.length === 0 ? [] : apart ? Array.from(holes, (h) => Int32Array.of(h)) : [holes];
     const ofPile = Int32Array.from(building.piles, (p) => {
       if (!apart) return 0;
-      const distances = Array.from(holes, (h) => Math.hypot(places.holes[h].x - p.x, places.holes[h].y - p.y));
+      const distances = Array.from(holes, (h) => hypotenuse(places.holes[h].x - p.x, places.holes[h].y - p.y));
       return distances.indexOf(Math.min(...distances));
     });
     return { groups, ofPile, updates: groups.map(update), unread };
