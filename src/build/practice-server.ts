@@ -3,6 +3,7 @@ import { stat } from "node:fs/promises";
 import { createServer, type Server, type ServerResponse } from "node:http";
 import type { AddressInfo } from "node:net";
 import { extname, join, normalize, sep } from "node:path";
+import { THREAD_POLICY } from "./content-policy.js";
 
 const TRIES = 20;
 
@@ -77,6 +78,7 @@ async function answer(folder: string, url: string, response: ServerResponse): Pr
     "Content-Length": size,
     "Cache-Control": "no-store",
     "X-Content-Type-Options": "nosniff",
+    ...(extname(file) === ".js" ? { "Content-Security-Policy": THREAD_POLICY } : {}),
   });
   createReadStream(file).on("error", () => response.destroy()).pipe(response);
 }

@@ -3,6 +3,7 @@ import { connect } from "node:net";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { afterAll, beforeAll, expect, it } from "vitest";
+import { THREAD_POLICY } from "../../src/build/content-policy.js";
 import { servePractice, type PracticeServer } from "../../src/build/practice-server.js";
 
 let above: string;
@@ -34,6 +35,9 @@ it("serves the page on this machine's own address and nothing else", async () =>
   expect(await (await fetch(address)).text()).toBe("<p>page</p>");
   expect((await fetch(`${address}main.js`)).headers.get("content-type")).toMatch(/javascript/);
   expect((await fetch(`${address}none.js`)).status).toBe(404);
+  // pages carry their policy themselves; a thread has no other than that of its script's headers
+  expect((await fetch(`${address}main.js`)).headers.get("content-security-policy")).toBe(THREAD_POLICY);
+  expect((await fetch(address)).headers.get("content-security-policy")).toBeNull();
 });
 
 it("takes the next port where one is busy, and says so", async () => {
