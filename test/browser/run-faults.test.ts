@@ -1,5 +1,13 @@
+import ExcelJS from "exceljs";
+import { execFile } from "node:child_process";
+import { mkdtemp, rm } from "node:fs/promises";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { promisify } from "node:util";
+import { fileURLToPath } from "node:url";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import type { Locator, Page, Worker } from "playwright-core";
+import type { CellValue } from "../../src/host/workbook.js";
 import { openPane, picture, startPane, type PaneSite } from "./harness/pane-page.js";
 
 // a run on a machine that is busy with other tests takes minutes
@@ -39,6 +47,8 @@ async function totals(page: Page): Promise<string[]> {
 const threads = (page: Page): Worker[] => page.workers().filter((worker) => worker.url().includes("simulation-worker"));
 
 let undisturbed: string[];
+/** row, column and value of every cell of the two sheets that the pane wrote */
+let fromPane: [number, number, CellValue][][];
 
 describe("a run that nobody disturbs", () => {
   it("is what the disturbed ones are held against", { timeout: WAIT }, async () => {
@@ -47,7 +57,37 @@ describe("a run that nobody disturbs", () => {
     await finish(page);
     undisturbed = await totals(page);
     expect(undisturbed.length).toBe(2);
+    await page.locator(".simulated").getByLabel("Holes your client proposes").fill("0");
+    await page.getByRole("button", { name: "Write the tables" }).click();
+    await expect.poll(() => page.evaluate(() => window.book.inserted.length)).toBe(1);
+    await page.getByRole("button", { name: "Write the client brief" }).click();
+    await expect.poll(() => page.evaluate(() => window.book.inserted.length)).toBe(2);
+    fromPane = await page.evaluate(() => window.book.inserted.map(({ cells }) => cells.map(({ row, column, value }): [number, number, CellValue] => [row, column, value ?? ""])));
     await page.context().close();
+  });
+
+  it("writes the sheets that the terminal writes, to the last digit", { timeout: WAIT }, async () => {
+    const folder = await mkdtemp(join(tmpdir(), "terminal-"));
+    const file = join(folder, "out.xlsx");
+    const words = ["--import", "tsx", "src/formula/simulation/simulate-main.ts", "--counts", "0,2", "--realisations", "8", "--workers", "2", "--brief", "0", "--out", file];
+    await promisify(execFile)(process.execPath, words, { cwd: fileURLToPath(new URL("../..", import.meta.url)) });
+    const book = new ExcelJS.Workbook();
+    await book.xlsx.readFile(file);
+    await rm(folder, { recursive: true });
+    let compared = 0;
+    ["Simulation", "Client brief"].forEach((name, sheet) => {
+      const cellAt = (row: number, column: number): unknown => book.getWorksheet(name)!.getCell(row + 1, column + 1).value ?? "";
+      // the day, and in the brief the stamp's last lines, which tell the day and where the inputs were read
+      const dates = fromPane[sheet]!.flatMap(([row, , value]) => (value === "Date" || value === "Stamp" ? [row] : []));
+      const isOfTheDay = (row: number): boolean => (sheet === 0 ? dates.includes(row) : row > dates[0]!);
+      expect(dates.length).toBe(1);
+      for (const [row, column, value] of fromPane[sheet]!.filter(([at]) => !isOfTheDay(at))) {
+        expect(cellAt(row, column), `${name}, row ${row + 1}, column ${column + 1}`).toBe(value);
+        if (typeof value === "number") compared++;
+      }
+      expect(fromPane[sheet]!.map(([, , value]) => value).join(" ")).toMatch(sheet === 0 ? /Hash of the inputs [0-9a-f]{16}/ : /Against buying none, as proposed, this /);
+    });
+    expect(compared).toBeGreaterThan(60);
   });
 });
 
@@ -68,16 +108,12 @@ describe("a thread of the browser", () => {
     const page = await opened();
     await start(page, "0, 2", 400);
     await reach(page, 2);
-    const ending = expect.poll(() => words(page).textContent(), { timeout: WAIT, interval: 50 }).toMatch(/^(No thread can be kept at work|The thread that makes the tables cannot be kept at work): .*no room for another array.*\. \d+ grounds? by finite elements and [\d,]+ by the short form are there and kept on this machine\.$/);
-    const ended = page.getByRole("button", { name: "Go on" }).waitFor({ timeout: WAIT });
-    let hasEnded = false;
-    void ended.then(() => (hasEnded = true));
-    while (!hasEnded) {
-      // a thread that is just being ended cannot be asked
-      for (const thread of threads(page)) await thread.evaluate(() => void setTimeout(() => { throw new Error("no room for another array"); })).catch(() => undefined);
-      await page.waitForTimeout(100);
-    }
-    await ending;
+    // whatever takes the place of a thread dies as it begins
+    await page.route("**/simulation-worker.js", (route) => route.fulfill({ contentType: "text/javascript", body: 'throw new Error("the browser allows no more");' }));
+    for (const thread of threads(page)) await thread.evaluate(() => void setTimeout(() => { throw new Error("pulled from under the run"); }));
+    const ending = /^(No thread|The thread that makes the tables|Realisations? .*) (can be kept at work|cannot be kept at work|could not be computed in 3 tries): .*the browser allows no more\. \d+ grounds? by finite elements and [\d,]+ by the short form are there and kept on this machine\.$/;
+    await expect.poll(() => words(page).textContent(), { timeout: WAIT, interval: 50 }).toMatch(ending);
+    expect(await page.getByRole("button", { name: "Go on" }).isVisible()).toBe(true);
     await picture(page, "run-failed-320-light");
     await page.context().close();
   });
@@ -154,12 +190,9 @@ describe("a storage that refuses", () => {
 
   it("lets the run go on and says that it cannot be kept: one that fills up", { timeout: WAIT }, async () => {
     const page = await opened(() => {
-      const add = IDBObjectStore.prototype.add;
-      IDBObjectStore.prototype.add = function (...values: Parameters<typeof add>) {
-        const request = add.apply(this, values);
-        // as a browser does that finds the disk full: the whole transaction is taken back
-        request.addEventListener("success", () => this.transaction.abort());
-        return request;
+      // as a browser does that finds the disk full: the whole transaction is taken back as it would end
+      IDBTransaction.prototype.commit = function () {
+        this.abort();
       };
       Object.defineProperty(IDBTransaction.prototype, "error", { get: () => new DOMException("", "QuotaExceededError") });
     });
