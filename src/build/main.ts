@@ -1,4 +1,4 @@
-import { mkdir, writeFile } from "node:fs/promises";
+import { mkdir, rm, writeFile } from "node:fs/promises";
 import { fileURLToPath } from "node:url";
 import { DEVELOPMENT, formFrom } from "./form.js";
 
@@ -11,6 +11,7 @@ const COMMANDS: Readonly<Record<string, (words: readonly string[]) => Promise<vo
     const { buildAddIn } = await import("./build-add-in.js");
     const { buildPractice } = await import("./practice-page.js");
     for (const { name, bytes } of await buildAddIn(form)) process.stdout.write(`${name.padEnd(28)} ${(bytes / 1000).toFixed(1).padStart(9)} kB\n`);
+    await rm(`${dist}/practice`, { recursive: true, force: true }); // parts of an older build would be served with it
     await buildPractice(`${dist}/practice`, form);
     process.stdout.write(
       form.namespace === "PROBE"
