@@ -1,5 +1,7 @@
 /** The one door of the engine: everything that the rest of the house may use stands here. */
 export { DomainError } from "./numerics/domain-error.js";
+export { geometricStep } from "./numerics/geometric-step.js";
+export { hypotenuse } from "./numerics/hypotenuse.js";
 export { correlation, varianceReduction, type CorrelationName, type LineCorrelationName } from "./ground/correlation.js";
 export { randolphWrothSettlement } from "./piles/randolph-wroth.js";
 export { designLength } from "./piles/design-length.js";

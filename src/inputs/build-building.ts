@@ -1,4 +1,4 @@
-import type { Building, DamagePoint, PilePoint } from "../engine/index.js";
+import { hypotenuse, type Building, type DamagePoint, type PilePoint } from "../engine/index.js";
 import { kilonewtons, metres } from "../units/quantities.js";
 import { amount } from "./cells.js";
 import { InputError } from "./input-error.js";
@@ -27,7 +27,7 @@ export function buildPiles(values: Values): PilePoint[] {
   const diameter = values.number("pileDiameter");
   for (let i = 0; i < piles.length; i++) {
     for (let j = 0; j < i; j++) {
-      const apart = Math.hypot(piles[i]!.x - piles[j]!.x, piles[i]!.y - piles[j]!.y);
+      const apart = hypotenuse(piles[i]!.x - piles[j]!.x, piles[i]!.y - piles[j]!.y);
       if (apart >= diameter * (1 - 1e-9)) continue; // piles that touch are walls, and allowed
       const names = list === undefined ? `piles ${j + 1} and ${i + 1} of the grid` : `piles ${j + 1} and ${i + 1} of the pile list (rows ${list.rows[j]!.row} and ${list.rows[i]!.row} of the site block)`;
       throw new InputError(apart === 0 ? `${sentence(names)} stand in one place; give each pile its own.`

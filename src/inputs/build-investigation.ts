@@ -1,4 +1,4 @@
-import type { DesignRule, DesignRuleName, Investigation, PilePoint, Point } from "../engine/index.js";
+import { hypotenuse, type DesignRule, type DesignRuleName, type Investigation, type PilePoint, type Point } from "../engine/index.js";
 import { metres } from "../units/quantities.js";
 import { amount } from "./cells.js";
 import { InputError } from "./input-error.js";
@@ -86,7 +86,7 @@ function buildHoles(values: Values, piles: readonly PilePoint[] | undefined): Po
     const twin = holes.findIndex((other, j) => j < i && other.x === hole.x && other.y === hole.y);
     if (twin >= 0) throw new InputError(`Holes ${twin + 1} and ${i + 1} of the hole list (rows ${list.rows[twin]!.row} and ${list.rows[i]!.row} of the site block) stand in one place; give each hole its own.`);
     if (reach === undefined) return;
-    const away = Math.hypot(hole.x - reach.x, hole.y - reach.y);
+    const away = hypotenuse(hole.x - reach.x, hole.y - reach.y);
     if (away > reach.radius + FARTHEST_HOLE) throw new InputError(`Hole ${i + 1} of the hole list (${row(i)}) stands ${amount(Math.round(away))} m from the middle of the piles; holes and piles need the same coordinates.`);
   });
   return holes;
@@ -96,7 +96,7 @@ function middleAndReach(piles: readonly PilePoint[]): { x: number; y: number; ra
   const xs = piles.map(({ x }) => x);
   const ys = piles.map(({ y }) => y);
   const [left, right, low, high] = [Math.min(...xs), Math.max(...xs), Math.min(...ys), Math.max(...ys)];
-  return { x: (left + right) / 2, y: (low + high) / 2, radius: Math.hypot(right - left, high - low) / 2 };
+  return { x: (left + right) / 2, y: (low + high) / 2, radius: hypotenuse(right - left, high - low) / 2 };
 }
 
 function buildDesignRule(values: Values, regionalCov: number): DesignRule {

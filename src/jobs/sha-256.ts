@@ -1,6 +1,6 @@
 const PRIMES = firstPrimes(64);
 // the first 32 bits of the fractions of cube and square roots of the first primes, as the standard defines them
-const ROUND = Uint32Array.from(PRIMES, (prime) => fraction(Math.cbrt(prime)));
+const ROUND = Uint32Array.from(PRIMES, (prime) => fraction(cubeRoot(prime)));
 const START = Uint32Array.from(PRIMES.slice(0, 8), (prime) => fraction(Math.sqrt(prime)));
 
 /**
@@ -15,7 +15,7 @@ export function sha256(bytes: Uint8Array): string {
   padded.set(bytes);
   padded[bytes.length] = 0x80;
   const view = new DataView(padded.buffer);
-  view.setUint32(length - 8, Math.floor(bytes.length / 2 ** 29));
+  view.setUint32(length - 8, Math.floor(bytes.length / 536870912));
   view.setUint32(length - 4, (bytes.length << 3) >>> 0);
   const state = START.slice();
   const w = new Uint32Array(64);
@@ -52,7 +52,14 @@ function turned(word: number, by: number): number {
 }
 
 function fraction(value: number): number {
-  return Math.floor((value - Math.floor(value)) * 2 ** 32);
+  return Math.floor((value - Math.floor(value)) * 4294967296);
+}
+
+/** By Newton's steps, which every engine takes alike; `Math.cbrt` need not. */
+function cubeRoot(value: number): number {
+  let root = value;
+  for (let step = 0; step < 40; step++) root -= (root * root * root - value) / (3 * root * root);
+  return root;
 }
 
 function firstPrimes(count: number): number[] {

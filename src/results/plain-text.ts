@@ -1,3 +1,5 @@
+import { decade, powerOfTen } from "./powers-of-ten.js";
+
 /** Thousands with commas whatever the machine's language, so that a run reads the same everywhere. */
 export function grouped(value: number): string {
   const [whole = "0", fraction] = String(Math.abs(value)).split(".");
@@ -19,7 +21,7 @@ export function aligned(rows: readonly (readonly string[])[], words: readonly nu
 /** The power of ten that leaves four figures of the largest sum. */
 export function moneyStep(sums: readonly number[]): number {
   const largest = Math.max(1, ...sums);
-  return 10 ** Math.max(0, Math.floor(Math.log10(largest)) - 3);
+  return powerOfTen(Math.max(0, decade(largest) - 3));
 }
 
 /** "1", "1 and 2", "1, 2 and 3". */

@@ -70,8 +70,8 @@ const DAYS = [unit("days", "days", 1, 1, ["day", "d", "days/hole", "day/hole", "
 const MASSES_PER_VOLUME = [
   unit("massPerVolume", "kg/m3", 1, 1, []),
   unit("massPerVolume", "t/m3", 1000, 1, ["tonne/m3", "tonnes/m3"], false),
-  unit("massPerVolume", "lb/ft3", KILOGRAMS_PER_POUND, METRES_PER_FOOT ** 3, ["pcf"]),
-  unit("massPerVolume", "lb/yd3", KILOGRAMS_PER_POUND, (3 * METRES_PER_FOOT) ** 3, []),
+  unit("massPerVolume", "lb/ft3", KILOGRAMS_PER_POUND, METRES_PER_FOOT * SQUARE_FOOT, ["pcf"]),
+  unit("massPerVolume", "lb/yd3", KILOGRAMS_PER_POUND, 27 * METRES_PER_FOOT * SQUARE_FOOT, []),
 ];
 
 /** Growth of stiffness with depth: each pressure over each depth, because logs print all of them. */

@@ -1,4 +1,4 @@
-import type { CountRow, SimulationRow } from "../../engine/index.js";
+import { hypotenuse, type CountRow, type SimulationRow } from "../../engine/index.js";
 import { tableStep } from "./conclusion.js";
 import { holesInWords, sentenceCase, type NumberWriter } from "./numbers.js";
 
@@ -19,7 +19,7 @@ export function agreementInWords(quick: readonly CountRow[], simulated: readonly
   if (pairs.length === 0) return "";
   const gap = ({ row, same }: (typeof pairs)[number]): number => Math.abs(same.total - row.total) / Math.max(row.total, Number.MIN_VALUE);
   const widest = pairs.reduce((most, pair) => (gap(pair) > gap(most) ? pair : most));
-  const within = pairs.filter(({ row, same }) => Math.abs(same.total - row.total) <= 2 * Math.hypot(row.standardError, same.standardError)).length;
+  const within = pairs.filter(({ row, same }) => Math.abs(same.total - row.total) <= 2 * hypotenuse(row.standardError, same.standardError)).length;
   const quickBest = pairs.reduce((best, pair) => (pair.same.total < best.same.total ? pair : best));
   const regret = quickBest.row.total - Math.min(...pairs.map(({ row }) => row.total));
   const step = tableStep(simulated);

@@ -1,3 +1,5 @@
+import { decade, powerOfTen } from "../../results/powers-of-ten.js";
+
 /** Writes numbers for people: grouped, and no finer than they are known. */
 export interface NumberWriter {
   /** money, rounded to a step */
@@ -28,7 +30,7 @@ export function numberWriter(locale?: string): NumberWriter {
   return {
     plain,
     money: (value, step) => {
-      const decimals = step >= 1 ? 0 : Math.ceil(-Math.log10(step));
+      const decimals = step >= 1 ? 0 : -decade(step);
       return plain(Math.round(value / step) * step, decimals);
     },
     percent: (share) => {
@@ -48,7 +50,7 @@ export function numberWriter(locale?: string): NumberWriter {
  * @returns              a power of ten; at least 1 where sums reach 100
  */
 export function moneyStep(standardError: number, largest: number): number {
-  const power = (value: number): number => 10 ** Math.floor(Math.log10(value) + 1e-12);
+  const power = (value: number): number => powerOfTen(decade(value));
   const byError = standardError > 0 ? power(standardError) / 10 : 0;
   const bySize = largest > 0 ? power(largest) / 1e4 : 0;
   const step = Math.max(byError, bySize);

@@ -1,6 +1,7 @@
 import type { SimulationTable } from "../../engine/index.js";
 import type { BatchProgress } from "../../jobs/batch.js";
 import { timeInWords } from "../../jobs/time-in-words.js";
+import { decade, powerOfTen } from "../../results/powers-of-ten.js";
 import type { RunState } from "../run-store.js";
 import { tableStep } from "./conclusion.js";
 import { holesInWords, sentenceCase, shorten, type NumberWriter } from "./numbers.js";
@@ -52,7 +53,7 @@ export function surenessInWords(table: SimulationTable, money: string, writer: N
 
 /** Two figures of a sum that says how small a doubt is. */
 function regretStep(regret: number): number {
-  return regret > 0 ? Math.max(0.01, 10 ** (Math.floor(Math.log10(regret)) - 1)) : 1;
+  return regret > 0 ? Math.max(0.01, powerOfTen(decade(regret) - 1)) : 1;
 }
 
 /**

@@ -1,3 +1,4 @@
+import { geometricStep } from "../../engine/index.js";
 import type { Section } from "../../jobs/section.js";
 import { holesInWords, joinWords, type NumberWriter } from "./numbers.js";
 
@@ -21,7 +22,7 @@ export function sliceBounds(modulus: Float64Array): number[] {
   const at = (share: number): number => sorted[Math.min(sorted.length - 1, Math.floor(share * sorted.length))]! / 1000;
   const [low, high] = [at(0.05), at(0.95)];
   const inner = SLICE_COLOURS.length - 2;
-  const bounds = Array.from({ length: inner + 1 }, (_, k) => Number((low * (high / low) ** (k / inner)).toPrecision(2)));
+  const bounds = Array.from({ length: inner + 1 }, (_, k) => Number((geometricStep(low, high, k / inner)).toPrecision(2)));
   return bounds.filter((bound, k) => k === 0 || bound > bounds[k - 1]!);
 }
 

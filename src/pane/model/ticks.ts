@@ -1,3 +1,5 @@
+import { decade, powerOfTen } from "../../results/powers-of-ten.js";
+
 /**
  * A step of 1, 2 or 5 times a power of ten, so that an axis carries round numbers.
  *
@@ -8,7 +10,7 @@
 export function niceStep(span: number, most: number): number {
   if (!(span > 0) || !(most >= 1) || !Number.isFinite(span)) return 1;
   const exact = span / most;
-  const power = 10 ** Math.floor(Math.log10(exact));
+  const power = powerOfTen(decade(exact));
   for (const factor of [1, 2, 5, 10]) {
     const step = factor * power;
     if (step >= exact * (1 - 1e-9)) return step;
@@ -26,7 +28,7 @@ export function niceStep(span: number, most: number): number {
  */
 export function niceTicks(low: number, high: number, most: number): number[] {
   const step = niceStep(high - low, most);
-  const decimals = Math.max(0, -Math.floor(Math.log10(step)));
+  const decimals = Math.max(0, -decade(step));
   const ticks: number[] = [];
   const last = Math.floor(high / step + 1e-9);
   for (let k = Math.ceil(low / step - 1e-9); k <= last; k++) ticks.push(Number((k * step).toFixed(decimals)));
@@ -41,7 +43,7 @@ export function niceTicks(low: number, high: number, most: number): number[] {
  */
 export function scaleBarLength(width: number): number {
   const third = width / 3;
-  const power = 10 ** Math.floor(Math.log10(third));
+  const power = powerOfTen(decade(third));
   for (const factor of [5, 2, 1]) if (factor * power <= third) return factor * power;
   return power;
 }
