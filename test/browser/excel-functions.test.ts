@@ -133,7 +133,7 @@ describe("cell functions in the library's own runtime", () => {
     beside(async (excel, { enter, at }) => {
       await enter(0, 0, "=TEST.LATER(5)");
       await enter(0, 1, "=A1+1");
-      await enter(0, 2, "=TEST.ONE(A2)");
+      await enter(0, 2, "=TEST.SHOW(A1:A2,A2)");
       const busy = new ErrorValue("#BUSY!");
       expect([at(0, 0), at(0, 1), at(0, 2)]).toEqual([busy, busy, busy]);
       await excel.page.waitForFunction(() => window.kept.length === 1);
@@ -141,7 +141,7 @@ describe("cell functions in the library's own runtime", () => {
       await excel.page.evaluate(() => (window.kept[0] as () => void)());
       await expect.poll(() => at(0, 1), { timeout: 10_000 }).toBe(6);
       await excel.calculated();
-      expect([at(0, 0), at(0, 2)]).toEqual([5, "6"]);
+      expect([at(0, 0), at(0, 2)]).toEqual([5, "[[[5],[6]],6,null,null]"]);
     }));
 
   it("are cancelled when their formula goes, and not called again while nothing changes", () =>
@@ -158,15 +158,13 @@ describe("cell functions in the library's own runtime", () => {
       expect(excel.host.functions.seen.map(({ name }) => name)).toEqual(["ENDLESS", "ONE", "ONE"]);
     }));
 
-  it("show #NAME? without metadata, under another namespace and in the stored form, but #VALUE! where only the body is missing", () =>
+  it("show #NAME? without metadata, but #VALUE! where only the body is missing", () =>
     beside(async (excel, { enter, at }) => {
       await enter(0, 0, "=TEST.NOWHERE()");
-      await enter(0, 1, "=PROBE.VERSION()");
-      await enter(0, 2, "=_xldudf_PROBEDEV_VERSION()");
       // the library's runtime calls what is not there, and reports the exception
-      await enter(0, 3, "=TEST.MISSING()");
+      await enter(0, 1, "=TEST.MISSING()");
       await excel.calculated();
-      expect([0, 1, 2, 3].map((row) => at(0, row))).toEqual(["#NAME?", "#NAME?", "#NAME?", "#VALUE!"].map((code) => new ErrorValue(code)));
+      expect([at(0, 0), at(0, 1)]).toEqual(["#NAME?", "#VALUE!"].map((code) => new ErrorValue(code)));
     }));
 
   it("answer a preview without touching a cell", () =>

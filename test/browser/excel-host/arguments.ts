@@ -69,6 +69,6 @@ export class Arguments {
 }
 
 /** True for an object of the platform among the arguments. */
-export function isOpened(value: unknown): value is Opened {
+function isOpened(value: unknown): value is Opened {
   return typeof value === "object" && value !== null && "kind" in value && "target" in value;
 }

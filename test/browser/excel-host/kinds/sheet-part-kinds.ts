@@ -15,6 +15,7 @@ export const worksheetProtectionKind: Kind<SheetModel> = {
       sheet.protection = options;
     },
     unprotect: (sheet) => {
+      if (sheet.protection === undefined) throw accessDenied(`${sheet.name} is not protected`);
       sheet.protection = undefined;
     },
   },
