@@ -3,9 +3,14 @@ import { PRODUCT_VERSION } from "../results/index.js";
 import type { KeptRows } from "./batch.js";
 import { inputsHash } from "./inputs-hash.js";
 
+/** Raised by every change that moves a digit of any realisation, and of the form of what is kept: older realisations are refused, not mixed with newer ones. */
+const FORMAT = 2;
+/** What made realisations that may be joined with those of now. */
+export const KEPT_VERSION = `${PRODUCT_VERSION}/${FORMAT}`;
+
 /** A run as it is kept: plain data that a page's own store takes as it is, and that stateText writes into a file. */
 export interface SimulationState extends KeptRows {
-  readonly format: 1;
+  readonly format: typeof FORMAT;
   readonly version: string;
   /** hash of the task */
   readonly inputs: string;
@@ -35,7 +40,7 @@ export class StateError extends Error {
  * @param rows  `rows()` of the run
  */
 export function saveState(task: SimulationTask, rows: KeptRows, labels: TableLabels, part?: SimulationState["part"]): SimulationState {
-  return { format: 1, version: PRODUCT_VERSION, inputs: inputsHash(task), task, ...(part === undefined ? {} : { part }), labels, elements: rows.elements, form: rows.form };
+  return { format: FORMAT, version: PRODUCT_VERSION, inputs: inputsHash(task), task, ...(part === undefined ? {} : { part }), labels, elements: rows.elements, form: rows.form };
 }
 
 /**
@@ -60,7 +65,10 @@ export function loadState(state: unknown, task: SimulationTask): KeptRows {
 export function requireState(state: unknown): SimulationState {
   const found = state as Partial<SimulationState> | null;
   if (typeof found !== "object" || found === null || typeof found.version !== "string" || typeof found.inputs !== "string") throw new StateError("This is no saved simulation.");
-  if (found.format !== 1 || found.version !== PRODUCT_VERSION) {
+  if (found.version === PRODUCT_VERSION && found.format !== FORMAT) {
+    throw new StateError(`The saved run was made by another build of version ${PRODUCT_VERSION}, whose realisations differ from those of this one in their last digits or in how they are kept; start anew, or finish it with that build.`);
+  }
+  if (found.version !== PRODUCT_VERSION) {
     throw new StateError(`The saved run was made by version ${found.version} and this is version ${PRODUCT_VERSION}, whose realisations are not the same; start anew, or finish it with the other version.`);
   }
   const isWhole = typeof found.task === "object" && found.task !== null && areRuns(found.elements) && areRuns(found.form) && inputsHash(found.task) === found.inputs;

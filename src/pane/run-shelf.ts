@@ -1,6 +1,6 @@
 import type { KeptRows } from "../jobs/batch.js";
 import type { RowKind, RowRun } from "../jobs/realisations.js";
-import { PRODUCT_VERSION } from "../results/index.js";
+import { KEPT_VERSION } from "../jobs/simulation-state.js";
 import type { RunOrder } from "./run-order.js";
 
 /** A place on this machine where runs are kept. */
@@ -50,9 +50,9 @@ export function browserShelf(): RunShelf {
     async put(inputs, order) {
       const work = (await base()).transaction([ORDERS, ROWS], "readwrite");
       const orders = work.objectStore(ORDERS);
-      orders.put({ inputs, version: PRODUCT_VERSION, order } satisfies KeptOrder);
+      orders.put({ inputs, version: KEPT_VERSION, order } satisfies KeptOrder);
       const all = (await answer(orders.getAll())) as KeptOrder[];
-      const old = all.sort((a, b) => b.order.at - a.order.at).filter((kept, k) => k >= MOST_RUNS || kept.version !== PRODUCT_VERSION);
+      const old = all.sort((a, b) => b.order.at - a.order.at).filter((kept, k) => k >= MOST_RUNS || kept.version !== KEPT_VERSION);
       for (const kept of old) {
         orders.delete(kept.inputs);
         const keys = await answer(work.objectStore(ROWS).index("inputs").getAllKeys(kept.inputs));
@@ -70,14 +70,14 @@ export function browserShelf(): RunShelf {
     async rows(inputs) {
       const work = (await base()).transaction([ORDERS, ROWS]);
       const kept = (await answer(work.objectStore(ORDERS).get(inputs))) as KeptOrder | undefined;
-      if (kept?.version !== PRODUCT_VERSION) return { elements: [], form: [] };
+      if (kept?.version !== KEPT_VERSION) return { elements: [], form: [] };
       const runs = (await answer(work.objectStore(ROWS).index("inputs").getAll(inputs))) as KeptRun[];
       const of = (kind: RowKind): RowRun[] => runs.filter((run) => run.kind === kind).sort((a, b) => a.from - b.from);
       return { elements: of("elements"), form: of("form") };
     },
     async latest() {
       const all = (await answer((await base()).transaction(ORDERS).objectStore(ORDERS).getAll())) as KeptOrder[];
-      const [last] = all.filter(({ version }) => version === PRODUCT_VERSION).sort((a, b) => b.order.at - a.order.at);
+      const [last] = all.filter(({ version }) => version === KEPT_VERSION).sort((a, b) => b.order.at - a.order.at);
       return last === undefined ? undefined : { inputs: last.inputs, order: last.order };
     },
     async clear() {

@@ -63,7 +63,12 @@ describe("a saved run", () => {
     const message = `The saved run was made by version 0.0.9 and this is version ${PRODUCT_VERSION}, whose realisations are not the same; start anew, or finish it with the other version.`;
     expect(() => loadState({ ...state(), version: "0.0.9" }, smallTask())).toThrow(new StateError(message));
     expect(() => stateOfText(stateText({ ...state(), version: "0.0.9" }))).toThrow(new StateError(message));
-    expect(() => requireState({ ...state(), format: 2 })).toThrow(StateError);
+  });
+
+  it("is refused when its realisations are those of older arithmetic", () => {
+    const message = `The saved run was made by another build of version ${PRODUCT_VERSION}, whose realisations differ from those of this one in their last digits or in how they are kept; start anew, or finish it with that build.`;
+    for (const format of [1, 3, undefined]) expect(() => requireState({ ...state(), format })).toThrow(new StateError(message));
+    expect(() => stateOfText(stateText({ ...state(), format: 1 as never }))).toThrow(new StateError(message));
   });
 
   it("is refused cut short at any place, or with one sign changed", () => {
