@@ -1,5 +1,7 @@
 /** Fewer realisations than this say too little of the coefficient: the form then stands for the elements as it is. */
 const fewest = 12;
+/** The same where few realisations carry the form's variance: one damaged building in thirty says nothing of how form and elements compare. */
+const fewestCarrying = 8;
 
 /** A mean by finite elements with the second-order form as control variate. */
 export interface ControlledMean {
@@ -18,7 +20,8 @@ export interface ControlledMean {
  * Mean of a quantity from few realisations by finite elements, each with the form in the same ground beside it, and many by the form alone.
  *
  * The coefficient is that of least squares, shrunk by N / (n + N) because the form's mean is known no better than that. Where there
- * are few elements, or one of the two never varied among them, it is that of a form which is right (1 before shrinking).
+ * are few elements, or few among them vary, it is that of a form which is right (1 before shrinking): then nothing is fitted and the mean
+ * has no bias.
  *
  * @param elements  by finite elements, n
  * @param beside    by the form in the same realisations, n
@@ -32,13 +35,26 @@ export function controlledMean(elements: Float64Array, beside: Float64Array, alo
   if (n < 2) return { mean: meanOf(alone), error: Math.sqrt(covarianceOf(alone, alone) / many), coefficient: 1, slope: 1, correlation: undefined };
   const [own, form, joint] = [covarianceOf(elements, elements), covarianceOf(beside, beside), covarianceOf(elements, beside)];
   const correlation = own > 0 && form > 0 ? Math.max(-1, Math.min(1, joint / Math.sqrt(own * form))) : undefined;
-  const isFitted = n >= fewest && form > 0 && own > 0;
+  const isFitted = n >= fewest && own > 0 && carrying(beside) >= fewestCarrying;
   const slope = isFitted ? joint / form : 1;
   if (many < 2) return { mean: meanOf(elements), error: Math.sqrt((own * caution(n, 1)) / n), coefficient: 0, slope, correlation };
   const coefficient = (slope * many) / (n + many);
   const residual = own - 2 * coefficient * joint + coefficient ** 2 * form;
   const variance = (Math.max(residual, 0) * caution(n, isFitted ? 2 : 1)) / n + (coefficient ** 2 * covarianceOf(alone, alone)) / many;
   return { mean: meanOf(elements) + coefficient * (meanOf(alone) - meanOf(beside)), error: Math.sqrt(variance), coefficient, slope, correlation };
+}
+
+/** How many of the values carry their variance: a third of them where they are normal, one where all but one are equal, 0 where all are. */
+function carrying(values: Float64Array): number {
+  const mean = meanOf(values);
+  let square = 0;
+  let fourth = 0;
+  for (let i = 0; i < values.length; i++) {
+    const d = (values[i] - mean) ** 2;
+    square += d;
+    fourth += d * d;
+  }
+  return fourth > 0 ? (square * square) / fourth : 0;
 }
 
 /**
