@@ -194,18 +194,25 @@ function helpTab(workbook: Workbook | undefined, siteName: () => string, options
     if (inserted !== undefined) tell(`The example stands on the new sheet ${inserted.sheet}.`);
   };
   const content = { functions: options.functions?.functions, namespace: options.namespace ?? "PROBE", siteName, versions: options.versions ?? { pane: PRODUCT_VERSION, functions: PRODUCT_VERSION }, notice: workbook === undefined ? (options.withoutWorkbook ?? "No workbook is connected to this page, so only the help is shown.") : undefined };
-  const actions = { ...(repair === undefined ? {} : { repair: () => void repair() }),  copy: copyText, insert: workbook === undefined ? undefined : (id: string, formula: string) => void insert(id, formula), tell };
+  const actions = { ...(repair === undefined ? {} : { repair: () => void repair() }), copy: copyText, insert: workbook === undefined ? undefined : (id: string, formula: string) => void insert(id, formula), tell };
   return { name: "Help", content: () => helpView(content, actions) };
 }
 
 async function addSheet(workbook: Workbook, plan: SheetPlan, tell: (sentence: string) => void): Promise<InsertedSheet | undefined> {
+  // Excel holds a request back while a cell is being edited, and the person cannot know what it waits for.
+  const waits = setTimeout(() => tell("The workbook has not answered yet. If a cell is being edited, press Enter or Esc there."), PATIENCE);
   try {
     return await workbook.insertSheet(plan);
   } catch (reason) {
     tell(reason instanceof WorkbookRefusal ? reason.message : `No sheet could be added: ${inWords(reason)}.`);
     return undefined;
+  } finally {
+    clearTimeout(waits);
   }
 }
+
+/** Milliseconds after which it is worth saying that a sheet is not there yet. */
+const PATIENCE = 1500;
 
 function inWords(reason: unknown): string {
   return (reason instanceof Error ? reason.message : String(reason)).replace(/\.$/, "");
