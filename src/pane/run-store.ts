@@ -201,7 +201,7 @@ export class RunStore {
 
   private sayUnkept(reason: unknown, hasKept = false): void {
     const what = hasKept ? "The rest of this run" : "This run";
-    this.publish({ isKept: false, note: `${what} cannot be kept for later, because the storage of this machine refused it (${wordsOf(reason)}). It goes on, and is lost when the pane closes; write the tables before.` });
+    this.publish({ isKept: false, note: `${what} cannot be kept for later, because the storage of this machine refused it (${wordsOf(reason)}). It is lost when the pane closes; write the tables before that.` });
   }
 
   private publish(change: Partial<RunState>): void {

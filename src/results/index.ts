@@ -6,7 +6,7 @@ export { groundKindTable } from "./ground-kind-table.js";
 export { layoutTable } from "./layout-table.js";
 export { lengthTable } from "./length-table.js";
 export { methodTable } from "./method-table.js";
-export { simulationLengthTable, simulationTable, stampTable, type SimulationStamp } from "./simulation-table.js";
+export { fewGrounds, simulationLengthTable, simulationTable, stampTable, type SimulationStamp } from "./simulation-table.js";
 export { grouped } from "./plain-text.js";
 export { simulationText } from "./simulation-text.js";
 export { tableCells } from "./result-table.js";

@@ -1,7 +1,7 @@
 import { lengthPercentiles, type SimulationTable } from "../engine/index.js";
 import { resultIn, resultUnit, type UnitSystem } from "../units/result-units.js";
 import { aligned, grouped, joined, moneyStep } from "./plain-text.js";
-import { hasOneMethod, rowName, simulationVerdict, type SimulationStamp } from "./simulation-table.js";
+import { fewGrounds, hasOneMethod, rowName, simulationVerdict, type SimulationStamp } from "./simulation-table.js";
 
 /**
  * A simulated table as lines of text for a terminal, money rounded to what a bid can use.
@@ -29,7 +29,7 @@ export function simulationText(table: SimulationTable, stamp: SimulationStamp, u
   const best = table.rows[table.cheapest];
   const ties = table.rows.filter((row) => row.variant === best.variant && row.notDistinguishable && row !== best).map((row) => row.count);
   const closing = `Cheapest: ${rowName(best, isOne)}, total ${`${currency} ${money(best.total)}`.trim()}${ties.length === 0 ? "" : `; ${joined(ties)} cannot be told from it`}. Expected regret of choosing it: ${small(table.expectedRegret)}.`;
-  return [...aligned([head, ...body], words), "", closing, stampLine(stamp)].join("\n");
+  return [...aligned([head, ...body], words), "", closing, ...fewGrounds(table), stampLine(stamp)].join("\n");
 }
 
 function stampLine({ version, seed, inputs, elements, form }: SimulationStamp): string {

@@ -183,7 +183,7 @@ describe("a storage that refuses", () => {
     const page = await opened(() => Object.defineProperty(globalThis, "indexedDB", { value: undefined }));
     await start(page, "0, 2", 3);
     await finish(page);
-    expect(await notes(page)).toContain("This run cannot be kept for later, because the storage of this machine refused it (this browser gives the page none). It goes on, and is lost when the pane closes; write the tables before.");
+    expect(await notes(page)).toContain("This run cannot be kept for later, because the storage of this machine refused it (this browser gives the page none). It is lost when the pane closes; write the tables before that.");
     await picture(page, "run-unkept-320-light");
     await page.context().close();
   });

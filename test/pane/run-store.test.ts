@@ -132,7 +132,7 @@ describe("a run in the pane", () => {
     void store.start(order);
     await settled();
     expect(started.length).toBe(1);
-    expect(store.state).toMatchObject({ isKept: false, note: "This run cannot be kept for later, because the storage of this machine refused it (quota exceeded). It goes on, and is lost when the pane closes; write the tables before." });
+    expect(store.state).toMatchObject({ isKept: false, note: "This run cannot be kept for later, because the storage of this machine refused it (quota exceeded). It is lost when the pane closes; write the tables before that." });
     await bench(shelf).store.open();
     started[0]!.end({});
     // the next one is tried anew

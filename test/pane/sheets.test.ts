@@ -66,6 +66,10 @@ describe("the sheet of all figures", () => {
     expect(warned[1]![0]).toMatch(/^This run was not finished/);
     expect(warned[2]![0]).toMatch(/^The site block has changed since/);
     expect(text(simulationSheet(contentOf(report())))).not.toMatch(/not finished|has changed/);
+    const few = simulatedTable(rows, { elements: 9, form: 2000 });
+    expect(report({ table: few }).warnings).toEqual(["This rests on few grounds: the errors of so few are themselves not well known, and usually stated too small."]);
+    expect(report({ table: simulatedTable(rows, { elements: 24, form: 399 }) }).warnings.length).toBe(1);
+    expect(report().warnings).toEqual([]);
     expect(report({ phase: "running" }).warnings.join(" ")).toMatch(/not finished/);
     expect(reportOf(state({ table: undefined }), new Date())).toBeUndefined();
   });

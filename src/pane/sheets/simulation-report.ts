@@ -1,7 +1,7 @@
 import type { SimulationTable, SimulationTask } from "../../engine/index.js";
 import type { SimulationContent } from "../../host/simulation-sheet.js";
 import { simulationStamp } from "../../jobs/simulation-stamp.js";
-import type { SimulationStamp } from "../../results/index.js";
+import { fewGrounds, type SimulationStamp } from "../../results/index.js";
 import type { UnitSystem } from "../../units/result-units.js";
 
 /** What a report needs to know of the run besides its figures. */
@@ -36,7 +36,7 @@ export interface SimulationReport {
  * @param now  date of the writing
  */
 export function simulationReport(run: ReportedRun, table: SimulationTable, standing: ReportedStanding, now: Date): SimulationReport {
-  return { run, table, stamp: simulationStamp(run.task, table, now), warnings: warningsOf(run, standing) };
+  return { run, table, stamp: simulationStamp(run.task, table, now), warnings: [...warningsOf(run, standing), ...fewGrounds(table)] };
 }
 
 /** What the sheet of all figures needs of a report. */

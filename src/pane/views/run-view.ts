@@ -1,3 +1,4 @@
+import { fewGrounds } from "../../results/index.js";
 import { numberWriter, shorten, type NumberWriter } from "../model/numbers.js";
 import { orderInWords } from "../model/run-choices.js";
 import { bestInWords, progressInWords, standingInWords, surenessInWords } from "../model/run-words.js";
@@ -84,7 +85,7 @@ function livePanel(store: RunStore, writer: NumberWriter): HTMLElement {
   const title = freshId("title");
   const best = element("p", { class: "answer" });
   const sure = element("p", { class: "comparison" });
-  const few = element("p", { class: "hint" }, "Few grounds so far: the error of so few is itself not well known.");
+  const few = element("p", { class: "hint" });
   const picture = costFigure(writer, false);
   const ways = element("div");
   const choice = wayChoice("Way shown", () => show());
@@ -102,7 +103,8 @@ function livePanel(store: RunStore, writer: NumberWriter): HTMLElement {
     const money = shorten(order.money, 12);
     best.textContent = bestInWords(table, money, writer);
     sure.textContent = surenessInWords(table, money, writer);
-    few.hidden = table.elements >= 10;
+    few.textContent = fewGrounds(table).join("");
+    few.hidden = few.textContent === "";
     const { rows, cheapest } = rowsOfWay(table, choice.chosen());
     picture.show(rows, cheapest, money);
     ways.replaceChildren(...(waysOf(table).length > 1 ? [waysTable(table, money, writer)] : []));

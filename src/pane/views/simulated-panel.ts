@@ -1,4 +1,5 @@
 import { lengthPercentiles, type CountRow, type SimulationTable } from "../../engine/index.js";
+import { fewGrounds } from "../../results/index.js";
 import { resultIn, resultUnit } from "../../units/result-units.js";
 import { agreementInWords } from "../model/agreement.js";
 import { conclude, tableStep } from "../model/conclusion.js";
@@ -99,8 +100,9 @@ export function simulatedPanel(store: RunStore, quick: QuickFigures, actions: Si
     answer.textContent = words.answer;
     comparison.textContent = client.value !== "" && proposed() === undefined ? "The proposed count must be a whole number, 0 or more." : words.comparison;
     sure.textContent = surenessInWords(state.table, money, writer);
-    remarks.replaceChildren(...words.remarks.map((remark) => element("li", {}, remark)));
-    remarks.hidden = words.remarks.length === 0;
+    const all = [...fewGrounds(state.table), ...words.remarks];
+    remarks.replaceChildren(...all.map((remark) => element("li", {}, remark)));
+    remarks.hidden = all.length === 0;
     picture.show(rows, cheapest, money);
     lengths.show(rows, cheapest, state.order.task.variants[0]!.problem.building.piles.length, state.order.units);
     compare(state.order, state.table);
