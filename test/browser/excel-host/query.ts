@@ -16,7 +16,7 @@ export function query(object: Opened, { Select = [], Expand = [], Top, Skip }: W
     if (Top !== undefined || Skip !== undefined) throw notModelled(`$top and $skip of ${object.kind}`);
     return answer(object, paths, host);
   }
-  const onCollection = paths.filter(([first]) => paths.length > 0 && kind.get?.[first ?? ""] !== undefined);
+  const onCollection = paths.filter(([first]) => kind.get?.[first ?? ""] !== undefined);
   const onItems = paths.filter((path) => !onCollection.includes(path));
   const own = onCollection.length > 0 ? answer(object, onCollection, host) : {};
   if (onItems.length === 0 && onCollection.length > 0) return own;

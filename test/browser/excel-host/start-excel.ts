@@ -10,6 +10,19 @@ import { libraryFile, LIBRARY_ADDRESS } from "./library.js";
 import type { SupportedSets } from "./requirement-sets.js";
 import type { WireRequest } from "./wire.js";
 
+// the library's own numbers of methods, events and flags
+const EXECUTE_RICH_API = 93;
+const COMMAND_COMPLETED = 94;
+const COMMAND_INVOKED = 39;
+const UNKNOWN_METHOD = 5_001;
+const SHARED_RUNTIME = 1;
+const CUSTOM_FUNCTIONS = 2;
+const DELAY_FOR_CELL_EDIT = 64;
+const OF_FUNCTIONS = 2_048;
+
+/** Longer than any workbook of the tests takes on a machine that is busy with others, ms. */
+const PATIENCE = 60_000;
+
 /** Which Excel, and what it opens. */
 export interface ExcelOptions {
   /** the page that the manifest names; its origin is the only one that may be asked for anything, besides the library */
@@ -74,30 +87,23 @@ export async function startExcel(browser: Browser, options: ExcelOptions): Promi
     command: async (action) => {
       const id = `command-${commands.size + 1}`;
       const done = new Promise<number>((resolve) => commands.set(id, resolve));
-      const isHeard = await page.evaluate((payload) => (window as unknown as { excelFire(event: number, payload: unknown): boolean }).excelFire(39, payload), [id, action, JSON.stringify({ source: { id: action } })]);
+      const isHeard = await page.evaluate((payload) => (window as unknown as { excelFire(event: number, payload: unknown): boolean }).excelFire(payload.event, payload.content), { event: COMMAND_INVOKED, content: [id, action, JSON.stringify({ source: { id: action } })] });
       if (!isHeard) throw new Error("The page does not listen to the ribbon yet.");
       const status = await done;
       if (status !== 0) throw new Error(`The page has no action ${action} (${status}).`);
     },
     calculated: async () => {
-      const end = Date.now() + 20_000;
+      const end = Date.now() + PATIENCE;
       do {
         host.settle();
         if (host.functions.waiting === 0) return;
         await new Promise((resolve) => setTimeout(resolve, 20));
       } while (Date.now() < end);
-      throw new Error(`${host.functions.waiting} cell functions have not answered in 20 s.`);
+      throw new Error(`${host.functions.waiting} cell functions have not answered in ${PATIENCE / 1_000} s.`);
     },
     close: () => context.close(),
   };
 }
-
-const EXECUTE_RICH_API = 93;
-const COMMAND_COMPLETED = 94;
-const SHARED_RUNTIME = 1;
-const CUSTOM_FUNCTIONS = 2;
-/** a request of the runtime of custom functions carries this among its flags */
-const OF_FUNCTIONS = 2_048;
 
 /** One call of window.external.Execute, decided on the test's side. */
 async function execute(host: ExcelHost, method: number, text: string): Promise<{ status: number; body: string }> {
@@ -113,14 +119,11 @@ async function execute(host: ExcelHost, method: number, text: string): Promise<{
   return reply.length > host.faults.largest ? { status: OUTRIGHT.responseTooLarge, body: "" } : { status: 0, body: reply };
 }
 
-const UNKNOWN_METHOD = 5_001;
-const DELAY_FOR_CELL_EDIT = 64;
-
 function supportedSets(excelApi: string): SupportedSets {
   return {
     ExcelApi: excelApi,
     CustomFunctions: "1.7",
-    CustomFunctionsRuntime: "1.4",
+    CustomFunctionsRuntime: excelApi === "1.9" ? "1.3" : "1.4",
     SharedRuntime: "1.1",
     RibbonApi: "1.1",
     DelayForCellEdit: "1.1",

@@ -11,9 +11,8 @@ export function registering(whose: "Workbook" | "Worksheet"): Record<string, Cal
   const calls: Record<string, Call> = {};
   for (const { member, type } of EVENTS) {
     const id = (target: SheetModel | WorkbookModel): string => (whose === "Workbook" ? "Workbook" : (target as SheetModel).id);
-    const [first, last] = member.startsWith("Event") ? ["_Register", "_Unregister"] : ["_Register", "_Unregister"];
-    calls[`${first}${member}`] = (target, _given, host) => host.events.register(type, id(target));
-    calls[`${last}${member}`] = (target, _given, host) => host.events.unregister(type, id(target));
+    calls[`_Register${member}`] = (target, _given, host) => host.events.register(type, id(target));
+    calls[`_Unregister${member}`] = (target, _given, host) => host.events.unregister(type, id(target));
   }
   return calls;
 }

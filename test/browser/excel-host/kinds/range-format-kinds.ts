@@ -69,7 +69,6 @@ export const rangeFormatKind: Kind<Place> = {
     protection: (place) => opened("FormatProtection", place),
     borders: (place) => opened("RangeBorderCollection", place),
   },
-  call: { autofitColumns: (place) => refuseLook(place), autofitRows: (place) => refuseLook(place) },
 };
 
 function border(place: Place, key: unknown): Opened {

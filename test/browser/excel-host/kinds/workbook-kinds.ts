@@ -8,7 +8,6 @@ const MODES = ["Automatic", "AutomaticExceptTables", "Manual"];
 
 /** The workbook: the root of all objects. */
 export const workbookKind: Kind<WorkbookModel> = {
-  get: { name: () => "Bid.xlsx", readOnly: () => false, isDirty: () => true },
   open: {
     application: (book) => opened("Application", book),
     worksheets: (book) => opened("WorksheetCollection", book),
@@ -31,7 +30,6 @@ export const workbookKind: Kind<WorkbookModel> = {
   },
   call: {
     _RemoveReference: (_book, given, { references }) => references.release(given.text(0)),
-    _SetOsfControlContainerReadyForCustomFunctions: () => null,
   },
 };
 

@@ -26,6 +26,8 @@ export class WorkbookModel {
   selection: { sheet: SheetModel; areas: readonly Area[] };
   /** told of every change, in order */
   readonly listeners = new Set<(event: ModelEvent) => void>();
+  /** told of changes of which Excel raises no event */
+  readonly quiet = new Set<() => void>();
   private sheetsMade = 0;
 
   constructor() {
@@ -143,8 +145,6 @@ export class WorkbookModel {
   private tellAll(): void {
     for (const listener of this.quiet) listener();
   }
-  /** told of changes of which Excel raises no event */
-  readonly quiet = new Set<() => void>();
 
   private newSheet(name: string): SheetModel {
     const sheet = new SheetModel(`{00000000-0001-0000-${String(this.sheetsMade++).padStart(4, "0")}-000000000000}`, name);
