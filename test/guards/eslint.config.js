@@ -5,6 +5,8 @@ const PROJECTS = ["src/*/tsconfig.json", "test/tsconfig.json"];
 
 /** Where the answer may depend on nothing but the arguments. */
 const PURE = ["src/units/**/*.ts", "src/engine/**/*.ts"];
+/** Where figures are made or rounded that must be the same to the bit in every engine. */
+const FIGURES = [...PURE, ...["inputs", "results", "functions", "jobs", "host", "pane"].map((folder) => `src/${folder}/**/*.ts`)];
 const PAGES = ["src/host/**/*.ts", "src/pane/**/*.ts", "src/practice/**/*.ts"];
 
 const named = { selector: "ExportDefaultDeclaration", message: "Named exports only: a name that the importer chooses cannot be searched for." };
@@ -17,6 +19,12 @@ const skipped = {
   message: "A test that does not run is no test.",
 };
 const random = { object: "Math", property: "random", message: "Randomness is a stream argument, so that every figure can be repeated." };
+
+const ARITHMETIC = "The language leaves its last digits to the engine; src/engine/numerics has its own, and results/powers-of-ten.ts powers of ten.";
+const inexact = ["acos", "acosh", "asin", "asinh", "atan", "atan2", "atanh", "cbrt", "cos", "cosh", "exp", "expm1", "hypot", "log", "log10", "log1p", "log2", "pow", "sin", "sinh", "tan", "tanh"]
+  .map((property) => ({ object: "Math", property, message: ARITHMETIC }));
+const powers = { selector: ":matches(BinaryExpression[operator='**']:not([right.value=2]), AssignmentExpression[operator='**='])", message: `Only a square is the same everywhere: write products. ${ARITHMETIC}` };
+const local = ["toLocaleString", "localeCompare"].map((property) => ({ property, message: "Depends on the machine's language." }));
 
 const banned = (names, message) => names.map((name) => ({ name, message }));
 const clock = banned(["Date", "performance"], "Same arguments, same answer: no clock.");
@@ -55,6 +63,8 @@ export default tseslint.config(
     rules: { "@typescript-eslint/no-explicit-any": "off" },
   },
   { files: PURE, rules: { "no-restricted-globals": ["error", ...clock, ...ambient, ...excel] } },
+  { files: FIGURES, rules: { "no-restricted-syntax": ["error", named, extension, powers], "no-restricted-properties": ["error", random, ...inexact] } },
+  { files: [...PURE, "src/inputs/**/*.ts", "src/results/**/*.ts", "src/functions/**/*.ts"], rules: { "no-restricted-properties": ["error", random, ...inexact, ...local] } },
   { files: ["src/inputs/**/*.ts", "src/results/**/*.ts", "src/functions/**/*.ts"], rules: { "no-restricted-globals": ["error", ...clock, ...excel] } },
   { files: ["src/jobs/**/*.ts", "src/formula/**/*.ts"], rules: { "no-restricted-globals": ["error", ...excel] } },
   { files: ["src/pane/**/*.ts", "src/practice/**/*.ts"], rules: { "no-restricted-globals": ["error", ...dialogs, ...excel] } },
@@ -74,6 +84,7 @@ export default tseslint.config(
       "no-restricted-properties": [
         "error",
         random,
+        ...inexact,
         ...["innerHTML", "outerHTML", "insertAdjacentHTML", "createContextualFragment"].map((property) => ({ property, message: "Cell text is untrusted and never becomes HTML; use textContent." })),
       ],
     },

@@ -21,6 +21,14 @@ const PLANTED: readonly (readonly [string, string, string, string])[] = [
   ["a file that is too long", "src/engine/numerics/p16.ts", `${Array.from({ length: 181 }, (_, k) => `export const line${k} = ${k};`).join("\n")}\n`, "max-lines"],
   ["a skipped test", "test/units/p17.test.ts", 'import { it } from "vitest";\nit.skip("later", () => undefined);\n', "no-restricted-syntax"],
   ["a test that runs alone", "test/units/p18.test.ts", 'import { it } from "vitest";\nit.only("me", () => undefined);\n', "no-restricted-syntax"],
+  ["a logarithm as the engine that runs it has it", "src/engine/numerics/p19.ts", "export const ln = (x: number): number => Math.log(x);\n", "no-restricted-properties"],
+  ["a sine taken out of Math by name", "src/units/p20.ts", "const { sin } = Math;\nexport const sine = sin;\n", "no-restricted-properties"],
+  ["an exponential in the pane", "src/pane/p21.ts", "export const e = (x: number): number => Math.exp(x);\n", "no-restricted-properties"],
+  ["a hypotenuse in the inputs", "src/inputs/p22.ts", "export const far = (x: number, y: number): number => Math.hypot(x, y);\n", "no-restricted-properties"],
+  ["a cube as a power", "src/engine/numerics/p23.ts", "export const cube = (x: number): number => x ** 3;\n", "no-restricted-syntax"],
+  ["a power that is not known", "src/results/p24.ts", "export const power = (x: number, n: number): number => x ** n;\n", "no-restricted-syntax"],
+  ["a power in place", "src/jobs/p25.ts", "export const power = (x: number): number => { x **= 2; return x; };\n", "no-restricted-syntax"],
+  ["a number in the machine's language", "src/results/p26.ts", "export const text = (x: number): string => x.toLocaleString();\n", "no-restricted-properties"],
 ];
 
 interface FileReport {
