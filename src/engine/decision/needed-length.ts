@@ -70,7 +70,7 @@ function lawAt(model: SiteModel, laws: LengthLaws, s: number): void {
 /** E ln K at a length, the second-order term's mean included. */
 export function expectedLnStiffness(laws: LengthLaws, length: number): number {
   const { at, t } = place(laws, length);
-  return (1 - t) * laws.base[at] + t * laws.base[at + 1];
+  return between(laws.base, at, t);
 }
 
 /** Place of a length among the laws' lengths, 0 for the first. */
@@ -99,10 +99,9 @@ export interface TrialLength {
  */
 export function trialLength(laws: LengthLaws, model: SiteModel, length: number, needed: number): TrialLength {
   const { at, t } = place(laws, length);
-  const along = (values: Float64Array): number => (1 - t) * values[at] + t * values[at + 1];
-  const variance = along(laws.variance);
-  const curve = along(laws.curve);
-  const gap = needed - along(laws.base) - curve * variance;
+  const variance = between(laws.variance, at, t);
+  const curve = between(laws.curve, at, t);
+  const gap = needed - between(laws.base, at, t) - curve * variance;
   let threshold = gap;
   if (Math.abs(curve) > 1e-9) {
     // Lower root of gap = z - curve z^2: beyond the parabola's top no ground is stiff enough.
@@ -111,7 +110,7 @@ export function trialLength(laws: LengthLaws, model: SiteModel, length: number, 
   }
   const grid = model.family.logLengths;
   const { start, weights } = lagrangeWeights(grid, clamp(logarithm(length), grid[0], grid[grid.length - 1]));
-  return { start, weights, threshold, variance, restVariance: along(laws.restVariance) };
+  return { start, weights, threshold, variance, restVariance: between(laws.restVariance, at, t) };
 }
 
 /**
@@ -144,6 +143,10 @@ function place(laws: LengthLaws, length: number): { at: number; t: number } {
   const x = clamp((logarithm(length) - first) / step, 0, steps - 1);
   const at = Math.min(Math.floor(x), steps - 2);
   return { at, t: x - at };
+}
+
+function between(values: Float64Array, at: number, t: number): number {
+  return (1 - t) * values[at] + t * values[at + 1];
 }
 
 function clamp(x: number, low: number, high: number): number {

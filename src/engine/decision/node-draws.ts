@@ -71,16 +71,18 @@ export function distortionDraws(plan: Plan, block: number, using: Kernels = kern
         const at = layOut(n, plan.pairs.length, draws);
         const room = using.room(at.end);
         const { doubles } = room;
-        for (let d = 0; d < 2 * n; d++) doubles.set(values.subarray(d * block + from, d * block + from + draws), at.values + d * draws);
+        if (draws === block) doubles.set(values, at.values);
+        else for (let d = 0; d < 2 * n; d++) doubles.set(values.subarray(d * block + from, d * block + from + draws), at.values + d * draws);
         doubles.set(moments.factor, at.factors);
         doubles.fill(0, at.ground, at.ground + n * draws);
         for (let i = 0; i < n; i++) using.addRows(at.ground + i * draws, at.factors + i * n, i + 1, at.values, draws);
         writeTables(room, at, plan, moments, draws);
+        const ofDraws = surprises.subarray(from);
         for (let i = 0; i < n; i++) {
           using.settle(at.ln, at.settlement + i * draws, at.numbers + i * numbersWidth, at.places + (i * placesWidth) / 2, draws);
           if (found === undefined) continue;
           if (interaction !== undefined) places.fill(found.designPlace(i), i * draws, (i + 1) * draws);
-          lengthen(doubles, at, i, draws, plan.piles[i].load, found, surprises.subarray(from), interaction === undefined ? undefined : places);
+          lengthen(doubles, at, i, draws, plan.piles[i].load, found, ofDraws, interaction === undefined ? undefined : places);
         }
         let settled = at.settlement;
         if (factors !== undefined) {
@@ -143,7 +145,7 @@ function writeTables({ doubles, ints }: Room, at: Places, plan: Plan, { means, q
     const number = at.numbers + i * numbersWidth;
     doubles[number] = plan.piles[i].load;
     doubles[number + 1] = residual[i];
-    for (let k = 0; k < quadraticWidth; k++) doubles[number + 2 + k] = quadratic[i * quadraticWidth + k];
+    for (let k = 0, q = i * quadraticWidth; k < quadraticWidth; k++) doubles[number + 2 + k] = quadratic[q + k];
     doubles[number + 2] += means[i];
     doubles[number + 3] += 1; // the pile is the first of its neighbours: its own deviation itself
     const place = 2 * at.places + i * placesWidth;
@@ -163,14 +165,15 @@ function lengthen(
   doubles: Float64Array, at: Places, pile: number, draws: number, load: number, found: FoundSurprises, surprises: Float64Array, places: Float64Array | undefined,
 ): void {
   const row = pile * draws;
+  const { ln: lnAt, settlement, lengthened } = at;
   const needed = found.needed[pile];
   const toTolerance = found.toTolerance[pile];
   const toLongest = found.toLongest[pile];
-  doubles.copyWithin(at.lengthened + row, at.settlement + row, at.settlement + row + draws);
+  doubles.copyWithin(lengthened + row, settlement + row, settlement + row + draws);
   for (let m = 0; m < draws; m++) {
-    const ln = doubles[at.ln + m];
+    const ln = doubles[lnAt + m];
     if (ln + toTolerance >= needed) continue;
-    doubles[at.lengthened + row + m] = load * exponential(-Math.min(needed, ln + toLongest));
+    doubles[lengthened + row + m] = load * exponential(-Math.min(needed, ln + toLongest));
     if (places !== undefined) places[row + m] = found.builtPlace(pile, ln);
     surprises[m]++;
   }

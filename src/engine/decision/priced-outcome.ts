@@ -37,18 +37,20 @@ export function pricedOutcome(problem: Problem, drawn: DrawnOutcome): PricedOutc
     sum.metres += weight * drawn.metres[node];
     sum.surprises += weight * drawn.surprises[node];
     sum.delay += weight * delay;
+    const share = weight / drawsPerNode;
     const nodeBlock = Math.floor((node * replicates) / weights.length);
     byNodes[nodeBlock] += replicates * weight * (foundation + delay);
+    const lose = (part: number, distortion: number, m: number): void => {
+      if (part === 0 || distortion <= threshold) return;
+      const loss = building.value * damageShare(building.damage, distortion) * part * share;
+      sum.failure += loss;
+      sum.failureChance += part * share;
+      byDraws[Math.floor((m * replicates) / drawsPerNode)] += replicates * loss;
+      byNodes[nodeBlock] += replicates * loss;
+    };
     for (let m = 0, at = node * drawsPerNode; m < drawsPerNode; m++, at++) {
-      const share = weight / drawsPerNode;
-      for (const [part, distortion] of [[1 - found, drawn.distortion[at]], [found, drawn.foundDistortion[at]]]) {
-        if (part === 0 || distortion <= threshold) continue;
-        const loss = building.value * damageShare(building.damage, distortion) * part * share;
-        sum.failure += loss;
-        sum.failureChance += part * share;
-        byDraws[Math.floor((m * replicates) / drawsPerNode)] += replicates * loss;
-        byNodes[nodeBlock] += replicates * loss;
-      }
+      lose(1 - found, drawn.distortion[at], m);
+      if (found > 0) lose(found, drawn.foundDistortion[at], m);
     }
   }
   return {

@@ -47,8 +47,10 @@ export function secondOrderTerms(model: SiteModel, holes: HoleCovariance, at: Pi
     const r00 = root[0], r10 = root[5], r11 = root[6], r20 = root[10], r21 = root[11], r22 = root[12];
     const r30 = root[15], r31 = root[16], r32 = root[17], r33 = root[18], r40 = root[20], r41 = root[21], r42 = root[22], r43 = root[23], r44 = root[24];
     // Where a neighbour is missing the pile stands in for it: its row of the root is zero.
-    const [p0, p1, p2, p3, p4] = [0, 1, 2, 3, 4].map((a) => near[a] ?? i);
-    const [seen0, seen1, seen2, seen3, seen4] = [p0, p1, p2, p3, p4].map((p) => seenAt(p, plan.distanceOf[i * n + p]));
+    const p0 = i, p1 = m > 1 ? near[1] : i, p2 = m > 2 ? near[2] : i, p3 = m > 3 ? near[3] : i, p4 = m > 4 ? near[4] : i;
+    const row = i * n;
+    const seen0 = seenAt(p0, plan.distanceOf[row + p0]), seen1 = seenAt(p1, plan.distanceOf[row + p1]), seen2 = seenAt(p2, plan.distanceOf[row + p2]);
+    const seen3 = seenAt(p3, plan.distanceOf[row + p3]), seen4 = seenAt(p4, plan.distanceOf[row + p4]);
     sums.fill(0);
     let restVariance = 0;
     for (let b = 0; b < 2; b++) {
@@ -98,7 +100,7 @@ export function secondOrderTerms(model: SiteModel, holes: HoleCovariance, at: Pi
         sums[0] += share * rest;
       }
     }
-    inDeviations(sums, root, m, quadratic.subarray(i * quadraticWidth, (i + 1) * quadraticWidth));
+    inDeviations(sums, root, m, quadratic, i * quadraticWidth);
     residual[i] = Math.sqrt(Math.max(restVariance, 0));
   }
   return { quadratic, residual };
@@ -151,12 +153,12 @@ function interpolated({ plan, family, curveCovariance }: SiteModel, at: PilesAtN
 }
 
 /** Turns a quadratic in directions u = root (deviations) into one in the deviations themselves: constant, linear, lower triangle. */
-function inDeviations(sums: Float64Array, root: Float64Array, m: number, out: Float64Array): void {
-  out[0] = sums[0];
-  for (let a = 0, next = 1 + most; a < m; a++) {
+function inDeviations(sums: Float64Array, root: Float64Array, m: number, out: Float64Array, at: number): void {
+  out[at] = sums[0];
+  for (let a = 0, next = at + 1 + most; a < m; a++) {
     let linear = 0;
     for (let p = a; p < m; p++) linear += root[p * most + a] * sums[1 + p];
-    out[1 + a] = 2 * linear;
+    out[at + 1 + a] = 2 * linear;
     for (let e = 0; e <= a; e++) {
       let sum = 0;
       for (let p = a; p < m; p++) {
