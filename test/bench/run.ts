@@ -3,7 +3,7 @@ import { bandSolves } from "./cases/band-solve.js";
 import { draws } from "./cases/draws.js";
 import { matrices } from "./cases/matrices.js";
 import { pileFamilyCase, pileForm, pileSolve } from "./cases/pile-response.js";
-import { costTable, firstCall, newPiles, oneCount, sensitivity } from "./cases/prices.js";
+import { costTable, firstCall, newPiles, oneCount, otherPrice, sensitivity } from "./cases/prices.js";
 import { quasiRandom } from "./cases/quasi-random.js";
 import { ringMeans } from "./cases/ring-means.js";
 import { oneElements, oneForm, prepare, savedAtHigh, savedAtModerate } from "./cases/simulation.js";
@@ -13,7 +13,7 @@ import { PeerProcess, peersAvailable } from "./peer-process.js";
 
 /** A list of cases cannot name the state of each; each is handed its own and no other's. */
 type AnyCase = BenchCase<never, never>;
-const CASES = [oneCount, costTable, firstCall, newPiles, sensitivity, ...draws, ...bandSolves, pileSolve, pileForm, pileFamilyCase, ...matrices, quasiRandom, ringMeans, prepare, oneElements, oneForm, savedAtModerate, savedAtHigh] as unknown as readonly AnyCase[];
+const CASES = [oneCount, otherPrice, costTable, firstCall, newPiles, sensitivity, ...draws, ...bandSolves, pileSolve, pileForm, pileFamilyCase, ...matrices, quasiRandom, ringMeans, prepare, oneElements, oneForm, savedAtModerate, savedAtHigh] as unknown as readonly AnyCase[];
 
 interface Spread {
   readonly low: number;

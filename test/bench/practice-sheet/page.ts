@@ -33,7 +33,7 @@ function sensitivity(): SheetPlan {
 
 const row = templateRows().findIndex(([label]) => label === "Mean stiffness");
 const container = document.getElementById("grid")!;
-const grid = startGrid({ container, workbook: workbookData("bench", [siteSheet(), sensitivity()]), descriptions: [], reasons: new CellReasons(), dark: false });
+const { grid } = startGrid({ container, workbook: workbookData("bench", [siteSheet(), sensitivity()]), descriptions: [], reasons: new CellReasons(), dark: false });
 const book = grid.getActiveWorkbook()!;
 
 function siteWith(stiffness: number): (string | number)[][] {
