@@ -117,8 +117,8 @@ function sensitivity(): SheetPlan {
 }
 
 function check(): SheetPlan {
-  // the looks of the cells that the rows spill into: a head, then one row an input
-  const looks = Array.from({ length: CATALOGUE.length + 1 }, (_, k) =>
+  // the looks of the cells that the rows spill into: a head, one row an input, and one on the whole block
+  const looks = Array.from({ length: CATALOGUE.length + 2 }, (_, k) =>
     [0, 1, 2, 3].map((column): PlannedCell => ({ row: 2 + k, column, style: k > 0 ? "label" : column === 1 ? "numberhead" : "head" })),
   ).flat();
   return {
