@@ -5,7 +5,7 @@ import designWords from "@univerjs/design/locale/en-US";
 import { UniverDocsPlugin } from "@univerjs/docs";
 import { UniverDocsUIPlugin } from "@univerjs/docs-ui";
 import docsWords from "@univerjs/docs-ui/locale/en-US";
-import { UniverFormulaEnginePlugin, type IFunctionInfo } from "@univerjs/engine-formula";
+import { FormulaDataModel, UniverFormulaEnginePlugin, type IFunctionInfo } from "@univerjs/engine-formula";
 import { UniverRenderEnginePlugin } from "@univerjs/engine-render";
 import { UniverSheetsPlugin } from "@univerjs/sheets";
 import { CalculationMode, UniverSheetsFormulaPlugin } from "@univerjs/sheets-formula";
@@ -29,6 +29,7 @@ import "@univerjs/ui/facade";
 import type { CellReasons } from "./cell-reasons.js";
 import { gridFunctions } from "./grid-functions.js";
 import { sayWhyOnHover } from "./hover-reason.js";
+import { SpilledCells } from "./spilled-cells.js";
 
 // the page stays awake during a long calculation: after so many formulas keys and pointer have their turn
 const FORMULAS_A_TURN = 25;
@@ -46,7 +47,7 @@ export interface GridStart {
  * Starts the grid in an element with its workbook, and calculates every formula. Our functions are handed over before the
  * workbook exists, so that no cell is ever calculated without them.
  */
-export function startGrid({ container, workbook, descriptions, reasons, dark }: GridStart): FUniver {
+export function startGrid({ container, workbook, descriptions, reasons, dark }: GridStart): { readonly grid: FUniver; readonly spilled: SpilledCells } {
   const univer = new Univer({
     theme: defaultTheme,
     darkMode: dark,
@@ -73,5 +74,5 @@ export function startGrid({ container, workbook, descriptions, reasons, dark }: 
   const grid = FUniver.newAPI(univer);
   grid.getFormula().calculationStart(() => reasons.startRun());
   sayWhyOnHover(univer.__getInjector(), grid, reasons);
-  return grid;
+  return { grid, spilled: new SpilledCells(univer.__getInjector().get(FormulaDataModel)) };
 }

@@ -27,14 +27,14 @@ async function start(): Promise<void> {
   const reasons = new CellReasons();
   const theme = themeSwitch(element("theme-toggle"), (chosen) => grid.toggleDarkMode(chosen === "dark"));
   const plans = demonstrationWorkbook();
-  const grid = startGrid({
+  const { grid, spilled } = startGrid({
     container: element("grid"),
     workbook: workbookData("demonstration", plans),
     descriptions: functionDescriptions(metadata.functions),
     reasons,
     dark: theme === "dark",
   });
-  const workbook = new PracticeWorkbook(grid, plans);
+  const workbook = new PracticeWorkbook(grid, spilled, plans);
   const refreshCell = cellLine(grid, reasons, element("cell"));
   const refreshChart = chartPanel(grid, workbook, element("chart"), element("chart-toggle"));
   workbook.onChanged(() => {

@@ -8,6 +8,7 @@ import type { CellValue, InsertedSheet, PlannedChart, RangeText, SheetPlan, Work
 import { WorkbookRefusal } from "../host/workbook-refusal.js";
 import { Calculation } from "./calculation.js";
 import { reference, sheetData } from "./grid-data.js";
+import type { SpilledCells } from "./spilled-cells.js";
 
 /** A sheet and one range of it: cells, whole columns or whole rows. The grid itself reads the first area of several as if it were all. */
 const ONE_RANGE = /^(?:'(?:[^']|'')+'|[^'!,()]+)!\$?(?:[A-Z]{1,3}\$?\d+(?::\$?[A-Z]{1,3}\$?\d+)?|[A-Z]{1,3}:\$?[A-Z]{1,3}|\d+:\$?\d+)$/i;
@@ -27,11 +28,13 @@ export class PracticeWorkbook implements Workbook {
   private readonly planned: Map<string, readonly PlannedChart[]>;
 
   /**
-   * @param grid   with its workbook open
-   * @param plans  of the sheets that stand in it, in order
+   * @param grid     with its workbook open
+   * @param spilled  what its formulas fill
+   * @param plans    of the sheets that stand in it, in order
    */
   constructor(
     private readonly grid: FUniver,
+    private readonly spilled: SpilledCells,
     plans: readonly SheetPlan[],
   ) {
     this.calculation = new Calculation(grid);
@@ -51,19 +54,19 @@ export class PracticeWorkbook implements Workbook {
   private chartsOf(sheet: FWorksheet): SheetChart[] {
     const column = (range: string): CellValue[] => {
       const { top, left, bottom } = areaOf(range);
-      return sheet.getRange(top, left, bottom - top + 1, 1).getCellDatas().map(([cell]) => valueOf(cell ?? undefined));
+      return this.values(sheet, { startRow: top, endRow: bottom, startColumn: left, endColumn: left }).map(([value]) => value!);
     };
     return (this.planned.get(sheet.getSheetId()) ?? []).map((chart) => ({ chart, sheet: sheet.getSheetName(), column }));
   }
 
   async readName(name: string): Promise<RangeText | undefined> {
     const place = this.placeOf(name);
-    return place === undefined ? undefined : read(place.sheet, place.range);
+    return place === undefined ? undefined : this.read(place.sheet, place.range);
   }
 
   async readSelection(): Promise<RangeText | undefined> {
     const selected = this.book.getActiveRange();
-    return selected === null ? undefined : read(this.book.getActiveSheet(), selected.getRange());
+    return selected === null ? undefined : this.read(this.book.getActiveSheet(), selected.getRange());
   }
 
   async names(): Promise<string[]> {
@@ -99,6 +102,24 @@ export class PracticeWorkbook implements Workbook {
     return book;
   }
 
+  /** Reads a range of a sheet, cut to the used part of the sheet. */
+  private read(sheet: FWorksheet, range: IRange): RangeText {
+    const startRow = range.startRow || 0;
+    const startColumn = range.startColumn || 0;
+    const filled = this.spilled.last(this.book.getId(), sheet.getSheetId());
+    const lastRow = Math.max(sheet.getLastRow(), filled.row);
+    const lastColumn = Math.max(sheet.getLastColumn(), filled.column);
+    const endRow = Math.max(startRow, Math.min(Number.isNaN(range.endRow) ? Infinity : range.endRow, lastRow));
+    const endColumn = Math.max(startColumn, Math.min(Number.isNaN(range.endColumn) ? Infinity : range.endColumn, lastColumn));
+    const cut = { startRow, startColumn, endRow, endColumn };
+    return { sheet: sheet.getSheetName(), address: serializeRange(cut), values: this.values(sheet, cut) };
+  }
+
+  private values(sheet: FWorksheet, cut: IRange): CellValue[][] {
+    const book = this.book.getId();
+    return sheet.getRange(cut).getCellDatas().map((row, r) => row.map((cell, c) => valueOf(this.spilled.at(book, sheet.getSheetId(), cut.startRow + r, cut.startColumn + c) ?? cell ?? undefined)));
+  }
+
   private placeOf(name: string): { sheet: FWorksheet; range: IRange } | undefined {
     const wanted = name.trim().toLowerCase();
     const found = this.book.getDefinedNames().find((candidate) => candidate.getName().toLowerCase() === wanted);
@@ -109,20 +130,6 @@ export class PracticeWorkbook implements Workbook {
     const sheet = this.book.getSheetByName(sheetName);
     return sheet === null ? undefined : { sheet, range };
   }
-}
-
-/** Reads a range of a sheet, cut to the used part of the sheet. */
-function read(sheet: FWorksheet, range: IRange): RangeText {
-  const startRow = range.startRow || 0;
-  const startColumn = range.startColumn || 0;
-  const endRow = Math.max(startRow, Math.min(Number.isNaN(range.endRow) ? Infinity : range.endRow, sheet.getLastRow()));
-  const endColumn = Math.max(startColumn, Math.min(Number.isNaN(range.endColumn) ? Infinity : range.endColumn, sheet.getLastColumn()));
-  const cut = { startRow, startColumn, endRow, endColumn };
-  return {
-    sheet: sheet.getSheetName(),
-    address: serializeRange(cut),
-    values: sheet.getRange(cut).getCellDatas().map((row) => row.map((cell) => valueOf(cell ?? undefined))),
-  };
 }
 
 function valueOf(cell: ICellData | undefined): CellValue {

@@ -97,6 +97,15 @@ describe.each([
     for (const { sheet, names } of both) expect(await form.workbook.readName(names[0]!)).toEqual({ sheet, address: "A1:B5", values: WRITTEN });
   });
 
+  it("reads what a formula fills, also in the cells beside it", async () => {
+    const filled: SheetPlan = { name: "Filled", cells: [{ row: 0, column: 0, formula: "=SEQUENCE(3,2)" }], names: [{ name: "Table", range: "A1:B2" }] };
+    await form.workbook.insertSheet(filled);
+    await form.settled();
+    expect(await form.workbook.readName("Table")).toEqual({ sheet: "Filled", address: "A1:B2", values: [[1, 2], [3, 4]] });
+    await form.select("Filled", "B1:B9");
+    expect(await form.workbook.readSelection()).toEqual({ sheet: "Filled", address: "B1:B3", values: [[2], [4], [6]] });
+  });
+
   it("tells of cells, of what is calculated from them and of sheets, not of the selection, and no more after the end", async () => {
     const watch = await form.watch();
     await form.settled();

@@ -13,7 +13,7 @@ declare global {
 }
 
 const plans = STARTING_SHEETS.map(({ name, rows }): SheetPlan => ({ name, cells: rows.flatMap((row, r) => row.map((value, column) => (typeof value === "string" && value.startsWith("=") ? { row: r, column, formula: value } : { row: r, column, value }))) }));
-const grid = startGrid({ container: document.getElementById("grid")!, workbook: workbookData("contract", plans), descriptions: [], reasons: new CellReasons(), dark: false });
+const { grid, spilled } = startGrid({ container: document.getElementById("grid")!, workbook: workbookData("contract", plans), descriptions: [], reasons: new CellReasons(), dark: false });
 const book = grid.getActiveWorkbook()!;
 for (const { name, meaning } of STARTING_NAMES) book.insertDefinedName(name, meaning.slice(1));
 
@@ -30,6 +30,6 @@ window.grid = {
   },
   addSheet: (name) => void book.insertSheet(name),
 };
-const workbook = new PracticeWorkbook(grid, plans);
+const workbook = new PracticeWorkbook(grid, spilled, plans);
 offer(workbook);
 workbook.onChanged(() => document.body.setAttribute("data-state", "ready"));
