@@ -1,4 +1,4 @@
-import { readFileSync } from "node:fs";
+import { existsSync, readFileSync } from "node:fs";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { panePolicy, THREAD_POLICY } from "../../src/build/content-policy.js";
 import { formFrom } from "../../src/build/form.js";
@@ -55,6 +55,9 @@ describe("the pane of a released build", () => {
       return answers;
     });
     expect(found).toEqual([200, 200, 200, 200]);
+    const links = await opened.page.locator(".probeworth a").evaluateAll((all) => all.map((link) => link.getAttribute("href")));
+    expect(links.sort()).toEqual(["help.html", "privacy.html"]);
+    for (const link of links) expect(existsSync(`${released.folder}/${link}`) && existsSync(`${released.folder}/practice/${link}`)).toBe(true);
     expect(opened.requests.every((address) => address.startsWith(ADDRESS) || address.startsWith(LIBRARY))).toBe(true);
     await opened.page.context().close();
   });
@@ -102,6 +105,18 @@ describe("the practice page of a released build", () => {
     expect(opened.requests.filter((address) => !address.startsWith(`${ADDRESS}practice/`) && !/^(data|blob):/.test(address))).toEqual([]);
     expect(opened.requests.filter((address) => address.endsWith("-worker.js")).length).toBeGreaterThan(0);
     await opened.page.context().close();
+  });
+
+  it.each(["help.html", "privacy.html", "practice/help.html"])("opens %s beside it, which breaks no rule of its own policy, in both looks and at 320 px", async (path) => {
+    for (const colorScheme of ["light", "dark"] as const) {
+      const opened = await released.open(path, { viewport: { width: 320, height: 900 }, colorScheme });
+      expect(await opened.page.locator("h1").textContent()).toMatch(/^Probeworth/);
+      expect(await opened.page.evaluate(() => document.documentElement.scrollWidth)).toBe(320);
+      const [ink, paper] = await opened.page.evaluate(() => [getComputedStyle(document.body).color, getComputedStyle(document.body).backgroundColor]);
+      expect(Number(/\d+/.exec(ink!)![0]) > Number(/\d+/.exec(paper!)![0])).toBe(colorScheme === "dark");
+      expect([opened.violations, opened.complaints]).toEqual([[], []]);
+      await opened.page.context().close();
+    }
   });
 
   it("refuses a script in the page", async () => {

@@ -21,6 +21,8 @@ export const LAYOUT = `
 .probeworth *, .probeworth *::before, .probeworth *::after { box-sizing: border-box; }
 .probeworth [hidden] { display: none !important; }
 .probeworth h1, .probeworth h2, .probeworth p, .probeworth ul, .probeworth dl, .probeworth dd { margin: 0; padding: 0; }
+.probeworth a { color: var(--pane-accent); }
+.probeworth a:focus-visible { outline: 2px solid var(--pane-focus); outline-offset: 2px; }
 .probeworth .unseen { position: absolute; width: 1px; height: 1px; overflow: hidden; clip-path: inset(50%); white-space: nowrap; }
 .probeworth .top { flex: none; background: var(--pane-surface); border-bottom: 1px solid var(--pane-line); }
 .probeworth .header { display: flex; align-items: center; justify-content: space-between; padding: 6px 8px 0 12px; border: 0; }

@@ -37,7 +37,7 @@ export interface HelpActions extends ExampleActions {
  */
 export function helpView(content: HelpContent, actions: HelpActions): HTMLElement {
   const notice = content.notice === undefined ? undefined : element("p", { class: "refusal notice" }, content.notice);
-  return element("div", { class: "view" }, notice, functionsPanel(content, actions), repairPanel(content, actions), textPanel("What the figures are and are not", [IS, IS_NOT, SMALL_SUMS]), textPanel("Your data", PRIVACY), versionsPanel(content));
+  return element("div", { class: "view" }, notice, functionsPanel(content, actions), repairPanel(content, actions), textPanel("What the figures are and are not", [IS, IS_NOT, SMALL_SUMS]), textPanel("Your data", PRIVACY, pageLink("privacy.html", "Data and privacy in full")), versionsPanel(content));
 }
 
 function functionsPanel(content: HelpContent, actions: ExampleActions): HTMLElement {
@@ -60,14 +60,20 @@ function functionsPanel(content: HelpContent, actions: ExampleActions): HTMLElem
   };
   search.addEventListener("input", show);
   list.append(...made.values());
+  panel.append(pageLink("help.html", "All functions on one page, with the source of each method"));
   panel.append(element("label", { for: id, class: "label" }, "Find a function"), search, found, list);
   show();
   return panel;
 }
 
-function textPanel(heading: string, sentences: readonly string[]): HTMLElement {
+function textPanel(heading: string, sentences: readonly string[], ...more: readonly HTMLElement[]): HTMLElement {
   const title = freshId("title");
-  return element("section", { "aria-labelledby": title, class: "caution" }, element("h2", { id: title }, heading), ...sentences.map((sentence) => element("p", {}, sentence)));
+  return element("section", { "aria-labelledby": title, class: "caution" }, element("h2", { id: title }, heading), ...sentences.map((sentence) => element("p", {}, sentence)), ...more);
+}
+
+/** A page of the build beside this one; Excel opens it in the browser. */
+function pageLink(page: string, words: string): HTMLElement {
+  return element("p", {}, element("a", { href: page, target: "_blank", rel: "noopener" }, words));
 }
 
 function repairPanel({ namespace }: HelpContent, { repair }: HelpActions): HTMLElement | undefined {
