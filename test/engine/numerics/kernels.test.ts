@@ -12,6 +12,17 @@ import { kilopascals, metres } from "../../../src/units/quantities.js";
 /** Bits of numbers, because 0 and -0 are equal and not the same. */
 const bits = (values: Float64Array): bigint[] => [...new BigUint64Array(values.slice().buffer)];
 
+/** Where two lists of bits part first; to show all of them takes minutes. */
+function parting(ours: readonly bigint[][], theirs: readonly bigint[][]): string {
+  if (ours.length !== theirs.length) return `${ours.length} lists, and ${theirs.length}`;
+  for (let k = 0; k < ours.length; k++) {
+    if (ours[k].length !== theirs[k].length) return `list ${k}: ${ours[k].length} numbers, and ${theirs[k].length}`;
+    const at = ours[k].findIndex((value, i) => value !== theirs[k][i]);
+    if (at >= 0) return `list ${k}, number ${at}: ${ours[k][at]}, and ${theirs[k][at]}`;
+  }
+  return "nowhere";
+}
+
 const both = (): readonly [Kernels, Kernels] => [scalarKernels(), vectorKernels()!];
 
 /** Tiles, table of rows and right-hand sides behind one another, as the kernels want them. */
@@ -57,9 +68,9 @@ describe("kernels in WebAssembly and in JavaScript give the same bits", () => {
         const right = Float64Array.from({ length: 4 * (envelope.tileRows - firstRow) * 2 * pairs }, number);
         const found = solved(vector, envelope, tiles, right, 2 * pairs, firstRow);
         if (found.length === 1) failures++;
-        expect(found).toEqual(solved(scalar, envelope, tiles, right, 2 * pairs, firstRow));
+        expect(parting(found, solved(scalar, envelope, tiles, right, 2 * pairs, firstRow))).toBe("nowhere");
       }),
-      { seed: 21, numRuns: 400 },
+      { seed: 21, numRuns: 400, endOnFailure: true }, // a smaller example says no more than the bits do
     );
     expect(failures).toBeGreaterThan(20); // both kinds were met
     expect(failures).toBeLessThan(380);
@@ -81,7 +92,7 @@ describe("kernels in WebAssembly and in JavaScript give the same bits", () => {
     const right = Float64Array.from({ length: 4 * mesh.envelope.tileRows * 2 }, () => random.normal());
     const found = solved(vector, mesh.envelope, tiles, right, 2, 0);
     expect(found).toHaveLength(3);
-    expect(found).toEqual(solved(scalar, mesh.envelope, tiles, right, 2, 0));
+    expect(parting(found, solved(scalar, mesh.envelope, tiles, right, 2, 0))).toBe("nowhere");
   });
 
   // Powers of all sizes, those beyond the range and those where the power of two changes among them.
@@ -117,7 +128,7 @@ describe("kernels in WebAssembly and in JavaScript give the same bits", () => {
         }
         return given;
       });
-      expect(found[1]).toEqual(found[0]);
+      expect(parting(found[0], found[1])).toBe("nowhere");
     }
   });
 
