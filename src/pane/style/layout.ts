@@ -50,6 +50,7 @@ export const LAYOUT = `
 .probeworth .verdict { font-weight: 600; }
 .probeworth .verdict-refused { color: var(--pane-refused); }
 .probeworth .refusal { margin-top: 4px; padding: 6px 8px; border-inline-start: 3px solid var(--pane-refused); background: var(--pane-refused-wash); }
+.probeworth .repair .row { margin-top: 8px; }
 .probeworth .groups { margin-top: 6px; }
 .probeworth .group { border-top: 1px solid var(--pane-line); }
 .probeworth .group > summary { display: flex; align-items: center; gap: 6px; min-height: 30px; padding: 3px 2px; list-style: none; cursor: pointer; border-radius: 3px; }

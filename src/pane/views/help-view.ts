@@ -81,7 +81,7 @@ function repairPanel({ namespace }: HelpContent, { repair }: HelpActions): HTMLE
   const title = freshId("title");
   return element(
     "section",
-    { "aria-labelledby": title },
+    { "aria-labelledby": title, class: "repair" },
     element("h2", { id: title }, "Cells that are stuck"),
     element("p", {}, `Cells that stay at #BUSY! or #NAME?, and formulas that show [2]!_xldudf_${namespace}_ or a file in front of a function's name, are entered again on all sheets. Formulas that work and formulas of others are not touched.`),
     element("div", { class: "row" }, button("Repair formulas", repair)),
