@@ -59,20 +59,25 @@ describe("a run in the terminal", () => {
   let whole: Said;
   beforeAll(async () => {
     writeFileSync(SITE, smallSiteCsv());
-    whole = await said(simulate, [...SOON, "--out", at("new.xlsx"), "--state", at("whole.state")], undefined, simulationThreads);
+    whole = await said(simulate, [...SOON, "--out", at("new.xlsx"), "--brief", "0", "--state", at("whole.state")], undefined, simulationThreads);
   }, 120_000);
 
   it("prints the table with its stamp and writes it beside the site block in a new workbook", async () => {
     expect([whole.code, whole.out.split("\n")[0]]).toEqual([0, expect.stringMatching(/^Holes {2}Investigation .*Surprises {2}Over-design, m/)]);
     expect(whole.out).toMatch(/\nCheapest: \d holes?, total EUR [\d,]+.*\nRealisations: \d+ by finite elements, [\d,]+ by the second-order form alone\. Version .*, seed 11, inputs [0-9a-f]{16}\.\n$/);
     expect(whole.err).toContain("Preparing the piles and the ground ...");
-    expect(whole.err).toContain(`Written to ${at("new.xlsx")}, sheet Simulation.`);
+    expect(whole.err).toContain(`Written to ${at("new.xlsx")}, sheets Simulation and Client brief.`);
     const book = new ExcelJS.Workbook();
     await book.xlsx.readFile(at("new.xlsx"));
-    expect(book.worksheets.map(({ name }) => name)).toEqual(["Site", "Simulation"]);
+    expect(book.worksheets.map(({ name }) => name)).toEqual(["Site", "Simulation", "Client brief"]);
     expect(book.getWorksheet("Site")!.getCell("A2").value).toBe("Mean stiffness");
     const column = book.getWorksheet("Simulation")!.getColumn(1).values as unknown[];
     expect(column).toEqual(expect.arrayContaining(["Hash of the inputs", "Count (holes)", 0, 1, 3]));
+    const brief = (book.getWorksheet("Client brief")!.getColumn(1).values as unknown[]).filter((value) => typeof value === "string").join(" ");
+    expect(brief).toMatch(/^How many holes before the piles are priced For this foundation of 3 piles, .* expected to cost least: [\d,]+\u00a0EUR in all/);
+    // the count that the client has in mind is told of
+    expect(brief).toMatch(/buying none, as proposed, this|That is the number proposed/);
+    expect(brief).toMatch(/Inputs read from: small\.csv\./);
   });
 
   it("goes on from its state file without computing anything twice", async () => {
@@ -97,9 +102,12 @@ describe("a run in the terminal", () => {
     const cells = smallSiteRows().flatMap((row, r) => row.map((value, column) => ({ row: r, column, value })));
     const book = newWorkbook([{ name: "Simulation", cells, names: [{ name: "Site", range: `A1:D${smallSiteRows().length}` }] }]);
     writeFileSync(at("site.xlsx"), book);
-    const other = await simulated("--book", at("site.xlsx"), "--precision", "10000000", "--workers", "1", "--out", at("copy.xlsx"));
+    const other = await simulated("--book", at("site.xlsx"), "--precision", "10000000", "--workers", "1", "--brief", "none", "--out", at("copy.xlsx"));
     expect([other.code, tableOf(other)]).toEqual([0, tableOf(whole)]);
-    expect(other.err).toContain(`Written to ${at("copy.xlsx")}, sheet Simulation (2).`);
+    expect(other.err).toContain(`Written to ${at("copy.xlsx")}, sheets Simulation (2) and Client brief.`);
+    const copy = new ExcelJS.Workbook();
+    await copy.xlsx.readFile(at("copy.xlsx"));
+    expect(copy.worksheets.map(({ name }) => name)).toEqual(["Simulation", "Simulation (2)", "Client brief"]);
     expect(Buffer.from(readFileSync(at("site.xlsx"))).equals(Buffer.from(book))).toBe(true);
   }, 120_000);
 
@@ -133,7 +141,8 @@ describe("parts of a run", () => {
 
   it("are joined in any order into the table of one run, bit for bit, and written into a workbook", async () => {
     const one = await simulated("--book", SITE, "--realisations", "3", "--out", at("one.xlsx"), "--workers", "2");
-    const joined = await merged(at("b.part"), at("a.part"), "--book", SITE, "--out", at("joined.xlsx"), "--workers", "1");
+    const joined = await merged(at("b.part"), at("a.part"), "--book", SITE, "--out", at("joined.xlsx"), "--brief", "3", "--workers", "1");
+    expect(joined.err).toContain("sheets Simulation and Client brief.");
     expect([joined.code, joined.out]).toEqual([0, one.out]);
     const figures = async (path: string): Promise<unknown[][]> => {
       const book = new ExcelJS.Workbook();
@@ -203,6 +212,10 @@ describe("the words after the command", () => {
     [["--from", "5", "--to", "1", "--part", "x"], "--to must not be smaller than --from"],
     [["--from", "1", "--to", "5", "--part", "x", "--out", "y.xlsx"], "--part and --out do not go together"],
     [["--overwrite"], "--overwrite goes with --out."],
+    [["--brief", "2"], "--brief goes with --out, the workbook that it is written into."],
+    [["--brief", "few", "--out", "x.xlsx"], "The option --brief is few; the number of holes that the client has in mind, or none, is needed, from 0 to 60."],
+    [["--brief", "61", "--out", "x.xlsx"], "The option --brief is 61;"],
+    [["--brief", "--out", "x.xlsx"], "The option --brief needs the number of holes that the client has in mind, or none, after it."],
     [["--state"], "The option --state needs a file after it."],
     [["--state", "--out"], "The option --state needs a file after it."],
     [["--state", "a", "--state", "b"], "The option --state is given twice."],
