@@ -1,11 +1,12 @@
 import { readFile } from "node:fs/promises";
 import { fileURLToPath } from "node:url";
 import HtmlPlugin from "html-webpack-plugin";
-import webpack, { type Configuration, type Compiler } from "webpack";
+import webpack, { type Configuration, type Compiler, type Module } from "webpack";
 import configuration from "../../webpack.config.js";
 import { PRODUCT_VERSION } from "../results/version.js";
 import { panePolicy } from "./content-policy.js";
 import type { Form } from "./form.js";
+import { licences, packageOf } from "./licences.js";
 import { manifestFor } from "./manifest.js";
 import { textFiles } from "./text-files.js";
 
@@ -20,10 +21,17 @@ class FormPlugin {
       compilation.hooks.processAssets.tapPromise({ name: "form", stage: webpack.Compilation.PROCESS_ASSETS_STAGE_ADDITIONAL }, async () => {
         const emit = (name: string, text: string): void => compilation.emitAsset(name, new webpack.sources.RawSource(text));
         for (const [name, text] of await textFiles(this.form)) emit(name, text);
+        emit("licences.txt", licences([...compilation.modules].flatMap(filesOf).flatMap((file) => packageOf(file) ?? [])));
         emit("manifest.xml", manifestFor(await readFile(at("manifest.xml"), "utf8"), this.form));
       });
     });
   }
+}
+
+/** The source files of a module; the bundler joins several into one. */
+function filesOf(module: Module): string[] {
+  const { modules = [], resource } = module as Module & { readonly modules?: Iterable<Module>; readonly resource?: string };
+  return [...(resource === undefined ? [] : [resource]), ...[...modules].flatMap(filesOf)];
 }
 
 /**

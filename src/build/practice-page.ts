@@ -3,6 +3,7 @@ import { copyFile, mkdir, readdir, writeFile } from "node:fs/promises";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { DEVELOPMENT, type Form } from "./form.js";
+import { licences, packageOf } from "./licences.js";
 import { textFiles } from "./text-files.js";
 
 const source = fileURLToPath(new URL("../", import.meta.url));
@@ -28,12 +29,13 @@ export async function buildPractice(output: string, form: Form = DEVELOPMENT): P
     define: { "process.env.NODE_ENV": '"production"' },
     logLevel: "warning",
   } as const;
-  await Promise.all([
-    build({ ...settings, splitting: true, entryPoints: { main: join(source, "practice/main.ts") } }),
+  const [page] = await Promise.all([
+    build({ ...settings, metafile: true, splitting: true, entryPoints: { main: join(source, "practice/main.ts") } }),
     build({ ...settings, entryPoints: await workers() }),
     copyFile(join(source, "practice/index.html"), join(output, "index.html")),
     ...[...(await textFiles(form, "PROBE"))].map(([name, text]) => writeFile(join(output, name), text)),
   ]);
+  await writeFile(join(output, "licences.txt"), licences(Object.keys(page.metafile.inputs).flatMap((file) => packageOf(file) ?? [])));
 }
 
 /** The pane's threads: each is a file of its own beside the page, under its source's name. */

@@ -29,8 +29,8 @@ export function builtFaults(folder: string, address: string): string[] {
   const ours = files.filter((path) => !path.startsWith("practice/"));
   const read = (path: string): string => readFileSync(`${folder}/${path}`, "utf8");
   return [
-    ...["pane.html", "functions.js", "functions.json", "help.html", "privacy.html", "manifest.xml", "practice/index.html"].filter((path) => !files.includes(path)).map((path) => `${path} is missing.`),
-    ...ours.filter((path) => !ENDINGS.test(path)).map((path) => `${path} is of no kind that a page needs.`),
+    ...["pane.html", "functions.js", "functions.json", "help.html", "privacy.html", "manifest.xml", "licences.txt", "practice/index.html", "practice/licences.txt"].filter((path) => !files.includes(path)).map((path) => `${path} is missing.`),
+    ...ours.filter((path) => !ENDINGS.test(path) && path !== "licences.txt").map((path) => `${path} is of no kind that a page needs.`),
     ...ours.filter((path) => path.endsWith(".js")).flatMap((path) => scriptFaults(path, read(path))),
     ...files.filter((path) => path.endsWith(".html")).flatMap((path) => pageFaults(folder, path, read(path))),
     ...(files.includes("functions.json") ? helpFaults(JSON.parse(read("functions.json")) as FunctionsJson, parsedPage(read("help.html")), address) : []),
