@@ -53,17 +53,27 @@ export function drawChart(figure: HTMLElement, chart: PlannedChart, values: Char
   const least = parts.length > 0 && lines.length > 0 ? points[lines[0]!]!.reduce((best, point) => (point.value < best.value ? point : best)) : undefined;
   const say = written(chart.valueLook);
   const tip = ({ name, category, value }: Point): string => `${name}, ${category}: ${say(value)}`;
+  const title = document.createElement("strong");
+  title.textContent = least === undefined ? chart.title : `${chart.title}; cheapest ${least.category}`;
+  const save = button("Save picture", () => {
+    const picture = figure.querySelector("svg");
+    if (picture !== null) savePicture(picture, figure, `${`${chart.title} ${sheet}`.toLowerCase().replace(/[^a-z0-9]+/g, "-")}.svg`);
+  });
+  const keyed = chart.series.flatMap((series, k) => (series.kind === "mark" || series.hiddenInLegend === true ? [] : [key(series.name, colours[k]!)]));
+  caption.append(title, ...keyed, ...(extra === undefined ? [] : [extra]), save);
+  // the picture takes the room that the caption leaves, which may need two lines
+  figure.replaceChildren(caption);
   const plot = Plot.plot({
     width: Math.max(280, figure.clientWidth - 24),
-    height: Math.max(120, figure.clientHeight - 40),
+    height: Math.max(120, figure.clientHeight - caption.offsetHeight - 16),
     marginLeft: 70,
     marginBottom: 34,
     style: { background: "transparent", fontSize: "12px" },
     x: { label: chart.categoryTitle, type: parts.length > 0 ? "band" : "point", domain: [...values.categories] },
-    y: { label: null, grid: true, tickFormat: "~s", zero: parts.length > 0, nice: true },
+    y: { label: chart.valueTitle, labelArrow: "none", grid: true, tickFormat: "~s", zero: parts.length > 0, nice: true },
     color: { domain: parts.map((k) => chart.series[k]!.name), range: parts.map((k) => colours[k]!) },
     marks: [
-      Plot.barY(parts.flatMap((k) => points[k]!), { x: "category", y: "value", fill: "name", order: parts.map((k) => chart.series[k]!.name), title: tip }),
+      ...(parts.length > 0 ? [Plot.barY(parts.flatMap((k) => points[k]!), { x: "category", y: "value", fill: "name", order: parts.map((k) => chart.series[k]!.name), title: tip })] : []),
       ...band(of("bound").map((k) => points[k]!)),
       ...lines.flatMap((k) => [
         Plot.lineY(points[k]!, { x: "category", y: "value", stroke: colours[k]!, strokeWidth: 1.5 }),
@@ -74,14 +84,9 @@ export function drawChart(figure: HTMLElement, chart: PlannedChart, values: Char
       ...(parts.length > 0 ? [Plot.ruleY([0], { stroke: "var(--rule)" })] : []),
     ],
   });
-  const title = document.createElement("strong");
-  title.textContent = least === undefined ? chart.title : `${chart.title}; cheapest ${least.category}`;
   plot.setAttribute("role", "img");
   plot.setAttribute("aria-label", `${title.textContent}. ${chart.words}`);
-  const save = button("Save picture", () => savePicture(plot as SVGSVGElement, figure, `${`${chart.title} ${sheet}`.toLowerCase().replace(/[^a-z0-9]+/g, "-")}.svg`));
-  const keyed = chart.series.flatMap((series, k) => (series.kind === "mark" || series.hiddenInLegend === true ? [] : [key(series.name, colours[k]!)]));
-  caption.append(title, ...keyed, ...(extra === undefined ? [] : [extra]), save);
-  figure.replaceChildren(caption, plot);
+  figure.append(plot);
 }
 
 /** A button of the caption. */
@@ -93,12 +98,15 @@ export function button(words: string, pressed: () => void): HTMLButtonElement {
   return made;
 }
 
+/** Colours of lines that stand alone; the palest of the parts would be lost on paper. */
+const LINES = ["var(--part-4)", "var(--part-2)", "var(--ink)", "var(--part-3)"];
+
 /** Parts have the colours of the page's parts; a line over parts stands out from all of them. */
 function coloursOf({ series }: PlannedChart): string[] {
   const hasParts = series.some(({ kind }) => kind === "part");
   let parts = 0;
   let lines = 0;
-  return series.map(({ kind }) => (kind === "part" ? `var(--part-${(parts++ % 4) + 1})` : kind === "line" && !hasParts ? `var(--part-${[4, 2, 1, 3][lines++ % 4]!})` : "var(--ink)"));
+  return series.map(({ kind }) => (kind === "part" ? `var(--part-${(parts++ % 4) + 1})` : kind === "line" && !hasParts ? LINES[lines++ % LINES.length]! : "var(--ink)"));
 }
 
 function band(edges: readonly (readonly Point[])[]): Plot.Markish[] {
