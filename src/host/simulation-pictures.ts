@@ -8,8 +8,6 @@ export interface CostPicture {
   readonly chart: PlannedChart;
 }
 
-/** Columns of the block that a cost picture draws. */
-export const PICTURE_COLUMNS = 9;
 /** Foundation first, because it is the largest and the others are read against its even top. */
 const PARTS = [
   ["Foundation", (row: SimulationRow) => row.foundation],
