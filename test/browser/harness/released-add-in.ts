@@ -1,13 +1,13 @@
 import { existsSync, readFileSync, statSync } from "node:fs";
-import { mkdtemp, rm } from "node:fs/promises";
+import { cp, mkdtemp, rm } from "node:fs/promises";
 import { tmpdir } from "node:os";
 import { extname, join } from "node:path";
 import { fileURLToPath } from "node:url";
 import type { Browser, BrowserContextOptions, Page, Route } from "playwright-core";
-import { buildAddIn } from "../../../src/build/build-add-in.js";
 import { formFrom } from "../../../src/build/form.js";
 import { buildPractice } from "../../../src/build/practice-page.js";
 import { launchBrowser } from "./browser.js";
+import { builtAddIn } from "./built-add-in.js";
 
 /** Where the build believes that it is served: nothing is asked of that server, every request is answered from the build. */
 export const ADDRESS = "https://tools.example.org/probeworth/";
@@ -46,7 +46,7 @@ export interface Released {
 export async function startReleased(): Promise<Released> {
   const folder = await mkdtemp(join(tmpdir(), "released-"));
   const form = formFrom(["--base", ADDRESS]);
-  await Promise.all([buildAddIn(form, folder), buildPractice(join(folder, "practice"), form)]);
+  await Promise.all([builtAddIn(form).then((built) => cp(built, folder, { recursive: true })), buildPractice(join(folder, "practice"), form)]);
   const browser: Browser = await launchBrowser();
   return {
     folder,
