@@ -152,7 +152,7 @@ describe("comparison of counts", () => {
     expect(best.notDistinguishable).toBe(true);
   });
   it("totals are the sums of their parts", () => {
-    for (const row of rows) near(row.total, row.investigation + row.foundation + row.failure + row.delay, 1e-12);
+    for (const row of [...rows, ...assessCounts(ninePiles({ foundShare: 0.8 }), [0, 4])]) near(row.total, row.investigation + row.foundation + row.failure + row.delay, 1e-12);
   });
 });
 

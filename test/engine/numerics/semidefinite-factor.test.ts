@@ -27,6 +27,29 @@ describe("factor of a nearly semi-definite covariance", () => {
     product(l, 2).forEach((value) => expect(Math.abs(value - 0.99995)).toBeLessThan(1e-6));
   });
 
+  // Higham (1988) again, in several dimensions: rank 3 in 9, spoilt by a few millionths either way. Rounding of the matrix that is rebuilt must not stop it.
+  it("factors what is short of rank and a little spoilt, whatever the spoiling", () => {
+    for (let seed = 1; seed <= 40; seed++) {
+      let state = seed;
+      const next = (): number => ((state = (state * 48271) % 2147483647) / 2147483647) - 0.5;
+      const n = 9;
+      const root = Float64Array.from({ length: n * 3 }, next);
+      const sound = Float64Array.from({ length: n * n }, (_, at) => [0, 1, 2].reduce((sum, k) => sum + root[Math.floor(at / n) * 3 + k] * root[(at % n) * 3 + k], 0));
+      const spoilt = Float64Array.from(sound);
+      for (let i = 0; i < n; i++) for (let j = 0; j <= i; j++) spoilt[i * n + j] = spoilt[j * n + i] += 4e-6 * next();
+      factorSemidefinite(spoilt, n, 1e-13);
+      product(spoilt, n).forEach((value, at) => expect(Math.abs(value - sound[at])).toBeLessThan(3e-5));
+    }
+  });
+
+  // By hand: [[a, b], [b, a]] has the eigenvalues a + b and a - b; here 1 and -0.09, or 1 and -0.11.
+  it("takes a negative eigenvalue of up to a tenth of the largest, and no larger one", () => {
+    const l = Float64Array.of(0.455, 0.545, 0.545, 0.455);
+    factorSemidefinite(l, 2, 1e-9);
+    product(l, 2).forEach((value) => expect(Math.abs(value - 0.5)).toBeLessThan(1e-6));
+    expect(() => factorSemidefinite(Float64Array.of(0.445, 0.555, 0.555, 0.445), 2, 1e-9)).toThrow(DomainError);
+  });
+
   it("refuses what is no covariance at all", () => {
     expect(() => factorSemidefinite(Float64Array.of(1, 2, 2, 1), 2, 1e-9)).toThrow(DomainError);
   });

@@ -62,4 +62,39 @@ describe("design length in ground that changes with depth", () => {
     expect((stepped - 4) / 0.5).toBeCloseTo(Math.round((stepped - 4) / 0.5), 9);
     expect(design(kilonewtons(9000), 3000, allowable, metres(0))).toEqual({ length: 28, allowable: false });
   });
+
+  /** Whether a length is enough, asked of a design that may not be shorter. */
+  const isEnough = (shape: (z: number) => number, load: number, length: number): boolean => {
+    const found = profileDesign({ ...pile, shortest: metres(length), longest: metres(length * 1.1), shape })(kilonewtons(load), 5000, allowable, metres(0));
+    return found.allowable && found.length === length;
+  };
+
+  // Hand-made: stiff between 8 and 8.6 m, very soft below: a pile that ends above the stiff layer or in it is enough, one that ends in the
+  // soft ground only when it is far longer.
+  it("takes no step that leads out of the ground that made a shorter pile enough", () => {
+    const shape = (z: number): number => (z >= 8.6 ? 0.1 : z > 8 ? 20 : 1);
+    expect(profileDesign({ ...pile, shape })(kilonewtons(900), 5000, allowable, metres(0)).length).toBeLessThan(8);
+    const { length } = profileDesign({ ...pile, shape })(kilonewtons(900), 5000, allowable, metres(2.5));
+    const steps = [6.5, 9, 11.5, 14, 16.5, 19, 21.5, 24].map((step) => [step, isEnough(shape, 900, step)]);
+    expect(steps.find(([, enough]) => enough)).toEqual([length, true]);
+    expect(length).toBeGreaterThan(9);
+  });
+
+  // Hand-made: a stiff metre over hardly any ground at all: enough from about 7.5 m to 8 m and nowhere else, and of whole steps never.
+  it("finds the only stretch of lengths that is enough, and says when every step misses it", () => {
+    const shape = (z: number): number => (z >= 9 ? 0.02 : z > 8 ? 3 : 1);
+    const design = profileDesign({ ...pile, shape });
+    const found = design(kilonewtons(900), 5000, allowable, metres(0));
+    expect(found.allowable).toBe(true);
+    expect([found.length - 0.3, found.length - 0.01, found.length + 0.01, 9, 15, 27].map((length) => isEnough(shape, 900, length))).toEqual([false, false, true, false, false, false]);
+    expect(design(kilonewtons(900), 5000, allowable, metres(2.5))).toEqual({ length: 28, allowable: false });
+  });
+
+  it("tries the last stretch up to the longest length", () => {
+    const shape = (z: number): number => 1 + 0.05 * z;
+    const { length } = profileDesign({ ...pile, shape })(kilonewtons(1500), 8000, allowable, metres(0));
+    const close = profileDesign({ ...pile, longest: metres(length + 0.02), shape })(kilonewtons(1500), 8000, allowable, metres(0));
+    expect(close.allowable).toBe(true);
+    expect(Math.abs(close.length - length)).toBeLessThan(2e-3);
+  });
 });
