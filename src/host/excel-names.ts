@@ -1,4 +1,5 @@
 import { hasCode } from "./excel-refusal.js";
+import { isOnePlace } from "./one-place.js";
 
 /** A defined name that may stand for one range. */
 interface Candidate {
@@ -63,21 +64,6 @@ async function allNames(context: Excel.RequestContext): Promise<Excel.NamedItemC
 
 function isRange({ type, formula }: Excel.NamedItem): boolean {
   return type === "Range" && isOnePlace(String(formula));
-}
-
-/**
- * Whether a name's meaning is one place. Several areas are joined by commas; those in brackets, as of OFFSET, and in the name of a
- * sheet join nothing.
- */
-function isOnePlace(formula: string): boolean {
-  const bare = formula.replace(/'(?:[^']|'')*'|"(?:[^"]|"")*"/g, "");
-  let depth = 0;
-  for (const sign of bare) {
-    if (sign === "(") depth++;
-    else if (sign === ")") depth--;
-    else if (sign === "," && depth === 0) return false;
-  }
-  return !bare.includes("#REF!");
 }
 
 interface Found extends Candidate {
