@@ -5,8 +5,9 @@ import { templateRows } from "../../src/inputs/index.js";
 import { hostileTexts } from "../hostile/hostile-texts.js";
 import { serveForms, startExcelForm, startPracticeForm, type FormSite } from "./forms/start-forms.js";
 import { launchBrowser } from "./harness/browser.js";
-import { openPane, startPane, type PaneSite } from "./harness/pane-page.js";
-import { PracticePage, startPractice, type Practice } from "./harness/practice-page.js";
+import { openPane, startPane } from "./harness/pane-page.js";
+import type { ServedSite } from "./harness/served-site.js";
+import { PracticePage, startPractice } from "./harness/practice-page.js";
 
 const texts = hostileTexts(20_261_202, 160);
 /** Whatever a text could have made of itself: elements that no page of ours has, handlers, addresses that run, a mark that it ran. */
@@ -34,7 +35,7 @@ beforeAll(async () => {
 afterAll(() => browser?.close());
 
 describe("the pane", () => {
-  let site: PaneSite;
+  let site: ServedSite;
   beforeAll(async () => {
     site = await startPane();
   });
@@ -90,7 +91,7 @@ describe("the pane", () => {
 });
 
 describe("the practice page", () => {
-  let practice: Practice;
+  let practice: ServedSite;
   beforeAll(async () => {
     practice = await startPractice();
   });

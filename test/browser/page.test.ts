@@ -1,9 +1,10 @@
 import { createServer } from "node:http";
 import type { AddressInfo } from "node:net";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
-import { PracticePage, startPractice, type Practice } from "./harness/practice-page.js";
+import { PracticePage, startPractice } from "./harness/practice-page.js";
+import type { ServedSite } from "./harness/served-site.js";
 
-let practice: Practice;
+let practice: ServedSite;
 
 beforeAll(async () => {
   practice = await startPractice();

@@ -3,10 +3,11 @@ import type { Page } from "playwright-core";
 import { assessCounts, cheapestCount, holePositions } from "../../src/engine/index.js";
 import { parseSite, templateRows } from "../../src/inputs/index.js";
 import { longestTask } from "./harness/longest-task.js";
-import { openPane, picture, showResults, startPane, type PaneSite } from "./harness/pane-page.js";
+import { openPane, picture, showResults, startPane } from "./harness/pane-page.js";
+import type { ServedSite } from "./harness/served-site.js";
 import { weakTexts } from "./harness/weak-texts.js";
 
-let site: PaneSite;
+let site: ServedSite;
 beforeAll(async () => {
   site = await startPane();
 });

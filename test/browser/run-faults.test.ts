@@ -8,12 +8,13 @@ import { fileURLToPath } from "node:url";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import type { Locator, Page, Worker } from "playwright-core";
 import type { CellValue } from "../../src/host/workbook.js";
-import { openPane, picture, startPane, type PaneSite } from "./harness/pane-page.js";
+import { openPane, picture, startPane } from "./harness/pane-page.js";
+import type { ServedSite } from "./harness/served-site.js";
 
 // a run on a machine that is busy with other tests takes minutes
 const WAIT = 240_000;
 
-let site: PaneSite;
+let site: ServedSite;
 beforeAll(async () => {
   site = await startPane();
 }, 120_000);

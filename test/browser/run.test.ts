@@ -1,7 +1,8 @@
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import type { Locator, Page } from "playwright-core";
 import { longestTask } from "./harness/longest-task.js";
-import { PracticePage, startPractice, type Practice } from "./harness/practice-page.js";
+import { PracticePage, startPractice } from "./harness/practice-page.js";
+import type { ServedSite } from "./harness/served-site.js";
 
 // a run on a machine that is busy with other tests takes minutes
 const WAIT = 240_000;
@@ -10,7 +11,7 @@ const SUM = 30_000;
 /** grounds that it took */
 let grounds: number;
 
-let practice: Practice;
+let practice: ServedSite;
 let practised: PracticePage;
 let page: Page;
 let pane: Locator;

@@ -1,11 +1,12 @@
 import { afterAll, beforeAll, expect, it } from "vitest";
 import { checkSite, templateRows } from "../../src/inputs/index.js";
-import { PracticePage, startPractice, type Practice } from "./harness/practice-page.js";
+import { PracticePage, startPractice } from "./harness/practice-page.js";
+import type { ServedSite } from "./harness/served-site.js";
 
 // Source: the Markov variance function at T = 2 theta, as tabulated
 const TWO_SCALES = 0.377289;
 
-let practice: Practice;
+let practice: ServedSite;
 let sheet: PracticePage;
 
 beforeAll(async () => {

@@ -1,52 +1,32 @@
 import { build } from "esbuild";
-import { mkdir, mkdtemp, rm, writeFile } from "node:fs/promises";
-import { tmpdir } from "node:os";
+import { mkdir, writeFile } from "node:fs/promises";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
-import type { Browser, BrowserContextOptions, Page } from "playwright-core";
+import type { BrowserContextOptions, Page } from "playwright-core";
 import { panePolicy } from "../../../src/build/content-policy.js";
 import { DEVELOPMENT } from "../../../src/build/form.js";
 import { functionsMetadata } from "../../../src/build/metadata.js";
-import { servePractice } from "../../../src/build/practice-server.js";
-import { launchBrowser } from "./browser.js";
+import { pageLog, type PageLog } from "./page-log.js";
+import { servedSite, type ServedSite } from "./served-site.js";
 
 const here = (path: string): string => fileURLToPath(new URL(path, import.meta.url));
 
-/** The pane alone on a page as narrow as Excel's task pane, beside a workbook in memory. */
-export interface PaneSite {
-  readonly browser: Browser;
-  readonly address: string;
-  close(): Promise<void>;
+/** Bundles and serves the pane alone, on a page as narrow as Excel's task pane beside a workbook in memory, and starts the browser. */
+export function startPane(): Promise<ServedSite> {
+  const settings = { bundle: true, minify: true, format: "esm", target: "es2022", logLevel: "warning" } as const;
+  return servedSite(async (outdir) =>
+    Promise.all([
+      build({ ...settings, outdir, splitting: true, entryPoints: { page: here("pane-alone.ts") } }),
+      build({ ...settings, outdir, entryPoints: { "counts-worker": here("../../../src/jobs/counts-worker.ts"), "simulation-worker": here("../../../src/jobs/simulation-worker.ts") } }),
+      writeFile(join(outdir, "functions.json"), JSON.stringify(await functionsMetadata())),
+      writeFile(join(outdir, "index.html"), PAGE),
+    ]),
+  );
 }
 
-/** Bundles and serves the page and starts the browser. */
-export async function startPane(): Promise<PaneSite> {
-  const folder = await mkdtemp(join(tmpdir(), "pane-"));
-  const settings = { bundle: true, minify: true, format: "esm", target: "es2022", outdir: folder, logLevel: "warning" } as const;
-  await Promise.all([
-    build({ ...settings, splitting: true, entryPoints: { page: here("pane-alone.ts") } }),
-    build({ ...settings, entryPoints: { "counts-worker": here("../../../src/jobs/counts-worker.ts"), "simulation-worker": here("../../../src/jobs/simulation-worker.ts") } }),
-    writeFile(join(folder, "functions.json"), JSON.stringify(await functionsMetadata())),
-    writeFile(join(folder, "index.html"), PAGE),
-  ]);
-  const server = await servePractice(folder, 0);
-  const browser = await launchBrowser();
-  return {
-    browser,
-    address: server.address,
-    close: async () => {
-      await browser.close();
-      await server.close();
-      await rm(folder, { recursive: true });
-    },
-  };
-}
-
-/** A page with the pane open, and what it did that a person may not see. */
-export interface PanePage {
+/** A page with the pane open. */
+export interface PanePage extends PageLog {
   readonly page: Page;
-  readonly complaints: string[];
-  readonly requests: string[];
 }
 
 /**
@@ -54,24 +34,14 @@ export interface PanePage {
  *
  * @param before  what happens to the page before its first line
  */
-export async function openPane(site: PaneSite, options: BrowserContextOptions = {}, query = "", before?: () => void): Promise<PanePage> {
+export async function openPane(site: ServedSite, options: BrowserContextOptions = {}, query = "", before?: () => void): Promise<PanePage> {
   const context = await site.browser.newContext({ viewport: { width: 320, height: 900 }, colorScheme: "light", ...options });
   if (before !== undefined) await context.addInitScript(before);
   const page = await context.newPage();
-  const complaints: string[] = [];
-  const requests: string[] = [];
-  page.on("console", (message) => {
-    if (message.type() === "error" || message.type() === "warning") complaints.push(message.text());
-  });
-  page.on("pageerror", (error) => complaints.push(`uncaught: ${error.message}`));
-  page.on("dialog", (dialog) => {
-    complaints.push(`dialog: ${dialog.message()}`);
-    void dialog.dismiss();
-  });
-  page.on("request", (request) => requests.push(request.url()));
+  const log = pageLog(page);
   await page.goto(site.address + query);
   await page.locator(".probeworth .verdict").waitFor();
-  return { page, complaints, requests };
+  return { page, ...log };
 }
 
 /** Opens the Results view and waits until the last part of it, the table of lengths, is there. */

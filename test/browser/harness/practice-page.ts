@@ -1,47 +1,17 @@
-import { mkdtemp, mkdir, rm } from "node:fs/promises";
-import { tmpdir } from "node:os";
+import { mkdir } from "node:fs/promises";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
-import type { Browser, Page } from "playwright-core";
+import type { Page } from "playwright-core";
 import { buildPractice } from "../../../src/build/practice-page.js";
-import { servePractice, type PracticeServer } from "../../../src/build/practice-server.js";
-import { launchBrowser } from "./browser.js";
+import { pageLog, type PageLog } from "./page-log.js";
+import { servedSite, type ServedSite } from "./served-site.js";
 
 // a machine that is busy with other tests is slow, but a page that has not answered by then never will
 const WAIT = 45_000;
 const SCREENSHOTS = fileURLToPath(new URL("../out/", import.meta.url));
 
-/** The built page on a server of its own, with a browser to open it in. */
-export interface Practice {
-  readonly browser: Browser;
-  readonly address: string;
-  close(): Promise<void>;
-}
-
-/** Builds the page into a temporary folder, serves it on a free port and starts the browser. */
-export async function startPractice(): Promise<Practice> {
-  const folder = await mkdtemp(join(tmpdir(), "practice-"));
-  await buildPractice(folder);
-  const server: PracticeServer = await servePractice(folder, 0);
-  const browser = await launchBrowser();
-  return {
-    browser,
-    address: server.address,
-    close: async () => {
-      await browser.close();
-      await server.close();
-      await rm(folder, { recursive: true });
-    },
-  };
-}
-
-/** What a page did that a person may not see. */
-export interface PageLog {
-  /** everything written to the console above the level of a note, and every uncaught error */
-  readonly complaints: string[];
-  /** address of every request, and of every socket */
-  readonly requests: string[];
-}
+/** Builds and serves the practice page and starts the browser. */
+export const startPractice = (): Promise<ServedSite> => servedSite((folder) => buildPractice(folder));
 
 /** The page as a person uses it: by keyboard, mouse and what can be read on it. */
 export class PracticePage {
@@ -51,7 +21,7 @@ export class PracticePage {
   ) {}
 
   /** Opens the page and waits until the workbook is calculated. */
-  static async open(practice: Practice, options: { width?: number; height?: number; dark?: boolean } = {}): Promise<PracticePage> {
+  static async open(practice: ServedSite, options: { width?: number; height?: number; dark?: boolean } = {}): Promise<PracticePage> {
     const context = await practice.browser.newContext({
       permissions: ["clipboard-read", "clipboard-write"],
       viewport: { width: options.width ?? 1360, height: options.height ?? 860 },
@@ -59,13 +29,7 @@ export class PracticePage {
     });
     const page = await context.newPage();
     page.setDefaultTimeout(WAIT);
-    const log: PageLog = { complaints: [], requests: [] };
-    page.on("console", (message) => {
-      if (message.type() === "error" || message.type() === "warning") log.complaints.push(`${message.type()}: ${message.text()}`);
-    });
-    page.on("pageerror", (error) => log.complaints.push(`uncaught: ${error.message}`));
-    page.on("request", (request) => log.requests.push(request.url()));
-    page.on("websocket", (socket) => log.requests.push(socket.url()));
+    const log = pageLog(page);
     await page.goto(practice.address);
     await page.locator("body[data-state=ready]").waitFor({ timeout: 60_000 });
     return new PracticePage(page, log);
