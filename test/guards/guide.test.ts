@@ -25,7 +25,7 @@ describe("what people are told", () => {
   });
 
   it("has the server send the policy that threads are tested under", () => {
-    expect(read("assets/deployment.md")).toContain(`Content-Security-Policy: ${THREAD_POLICY}`);
+    expect(read("assets/deployment.md")).toContain(`\`Content-Security-Policy: ${THREAD_POLICY}\``);
   });
 
   it("gives an address that the build takes, and the platform's address as the build has it", () => {
