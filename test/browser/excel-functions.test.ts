@@ -211,4 +211,36 @@ describe("cell functions in the library's own runtime", () => {
       await excel.calculated();
       expect(at(0, 1)).toBe("2");
     }));
+
+  it("are left on #BUSY! by a page that starts anew, until everything is calculated", () =>
+    beside(async (excel, { enter, at }) => {
+      await enter(0, 0, "=TEST.LATER(5)");
+      await enter(0, 1, "=TEST.ONE(1)");
+      await excel.page.waitForFunction(() => window.kept.length === 1);
+      await excel.page.reload();
+      await excel.page.evaluate(() => Office.onReady());
+      await enter(0, 2, "=TEST.ONE(2)");
+      await expect.poll(() => at(0, 2), { timeout: 10_000 }).toBe("2");
+      expect([at(0, 0), await excel.page.evaluate(() => window.kept.length)]).toEqual([new ErrorValue("#BUSY!"), 0]);
+      await excel.person(({ calculator }) => calculator.everythingAgain());
+      await excel.page.waitForFunction(() => window.kept.length === 1);
+      await excel.page.evaluate(() => (window.kept[0] as () => void)());
+      await expect.poll(() => at(0, 0), { timeout: 10_000 }).toBe(5);
+    }));
+
+  it("are called where Excel waits for a command only for what is entered", () =>
+    beside(async (excel, { enter, at }) => {
+      excel.host.book.calculationMode = "Manual";
+      await enter(0, 0, 1);
+      await enter(1, 0, "=A1+1");
+      await enter(1, 1, "=TEST.ONE(A1)");
+      await excel.calculated();
+      expect([at(1, 0), at(1, 1)]).toEqual([2, "1"]);
+      await enter(0, 0, 10);
+      await excel.calculated();
+      expect([at(1, 0), at(1, 1)]).toEqual([2, "1"]);
+      await excel.page.evaluate(() => Excel.run(async (context) => context.workbook.application.calculate("Recalculate")));
+      await excel.calculated();
+      expect([at(1, 0), at(1, 1)]).toEqual([11, "10"]);
+    }));
 });

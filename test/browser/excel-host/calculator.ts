@@ -1,22 +1,24 @@
-import { BaseFunction, type BaseValueObject } from "@univerjs/engine-formula";
-import { cellAddress, type Area } from "../../../src/formula/addresses.js";
-import type { Book, BookCell } from "../../../src/formula/book.js";
+import type { Area } from "../../../src/formula/addresses.js";
+import type { BookCell } from "../../../src/formula/book.js";
 import { Calculation } from "../../../src/formula/calculation.js";
 import { ErrorValue, type CellValue } from "../../../src/formula/cell-value.js";
-import type { CellReasons } from "../../../src/practice/cell-reasons.js";
 import { BUSY, type CustomFunctions } from "./custom-functions.js";
-import { fromEngine, toEngine } from "./engine-values.js";
-import { fixedFormula, isInside, quotedSheet } from "./kinds/places.js";
+import { isInside } from "./kinds/places.js";
+import { asBook } from "./model/as-book.js";
 import type { Place } from "./model/chart-model.js";
 import { cellKey, placeKey, type SheetModel } from "./model/sheet-model.js";
 import type { WorkbookModel } from "./model/workbook-model.js";
+import { pageFunctions } from "./page-functions.js";
 import { StuckFormulas, type Stuck } from "./stuck-formulas.js";
 
-type FunctionClass = new (name: string) => BaseFunction;
+/** Whether a cell keeps what it shows. */
+type Stands = (sheet: SheetModel, row: number, column: number) => boolean;
 
 /** Calculates the formulas with the project's own engine; its cell functions are those of the page. */
 export class Calculator {
   private isDirty = false;
+  /** entered since the last calculation: Excel calculates these even where it waits for a command */
+  private entered: Place[] = [];
   private reasons = new Map<string, string>();
   private spills: { readonly sheet: SheetModel; readonly area: Area }[] = [];
   private readonly stuck: StuckFormulas;
@@ -27,8 +29,9 @@ export class Calculator {
     private readonly namespace: string,
   ) {
     this.stuck = new StuckFormulas(namespace);
-    book.listeners.add(({ what }) => {
-      if (what === "changed" || what === "added" || what === "deleted" || what === "renamed") this.isDirty = true;
+    book.listeners.add((event) => {
+      if (event.what === "changed") this.entered.push(event);
+      if (event.what === "changed" || event.what === "added" || event.what === "deleted" || event.what === "renamed") this.isDirty = true;
     });
     book.quiet.add(() => {
       this.isDirty = true;
@@ -41,15 +44,26 @@ export class Calculator {
 
   /** @param evenManual  also where the workbook waits for a command */
   bringUpToDate(evenManual = false): void {
-    if (!this.isDirty || (this.book.calculationMode === "Manual" && !evenManual)) return;
-    this.isDirty = false;
-    this.functions.startPass();
-    this.calculate();
+    const waits = this.book.calculationMode === "Manual" && !evenManual;
+    if (!this.isDirty || (waits && this.entered.length === 0)) return;
+    const entered = this.entered.splice(0);
+    this.isDirty = waits;
+    if (!waits) this.functions.startPass();
+    this.calculate(waits ? entered : undefined);
     this.functions.endPass();
   }
 
-  /** A result has come in, or something has to be looked at anew. */
+  /** Something has to be looked at anew. */
   markDirty(): void {
+    this.isDirty = true;
+  }
+
+  /** A result has come in for a cell, which shows it even where Excel waits for a command. */
+  answered(place: string): void {
+    const [id, row, column] = place.split(" ");
+    const sheet = this.book.sheets.find((each) => each.id === id);
+    if (sheet === undefined) return;
+    this.entered.push({ sheet, area: { top: Number(row), left: Number(column), bottom: Number(row), right: Number(column) } });
     this.isDirty = true;
   }
 
@@ -98,13 +112,15 @@ export class Calculator {
     return spill === undefined ? undefined : { row: spill.area.top, column: spill.area.left };
   }
 
-  private calculate(): void {
+  /** @param only  formulas that are calculated; the others keep what they show */
+  private calculate(only?: readonly Place[]): void {
     const calculated = new Map<SheetModel, Map<number, CellValue>>(this.book.sheets.map((sheet) => [sheet, new Map<number, CellValue>()]));
-    this.reasons = new Map();
-    this.spills = [];
-    const cells = this.book.sheets.map((sheet) => this.cellsOf(sheet));
+    const stands: Stands = (sheet, row, column) => only?.some((place) => isInside(this.ownerOf(sheet, row, column), place)) === false;
+    const cells = this.book.sheets.map((sheet) => this.cellsOf(sheet, stands));
+    this.reasons = new Map([...this.reasons].filter(([key]) => only?.some((place) => isInside(key, place)) === false));
+    this.spills = this.spills.filter(({ sheet, area }) => stands(sheet, area.top, area.left));
     // to start the engine for a workbook without formulas would cost every write its time
-    const calculation = cells.flat().some(({ formula }) => formula !== undefined) ? new Calculation(this.asBook(cells), (reasons) => this.pageFunctions(reasons)) : undefined;
+    const calculation = cells.flat().some(({ formula }) => formula !== undefined) ? new Calculation(asBook(this.book, cells), pageFunctions(this.book, this.functions, this.namespace)) : undefined;
     this.book.sheets.forEach((sheet, index) => this.fill(sheet, index, cells[index] ?? [], calculation, calculated.get(sheet)!));
     calculation?.dispose();
     for (const [sheet, values] of calculated) {
@@ -114,37 +130,32 @@ export class Calculator {
     }
   }
 
-  private cellsOf(sheet: SheetModel): BookCell[] {
-    return [...sheet.entries].map(([key, { value, formula }]) => {
-      const [row, column] = [Math.floor(key / 16_384), key % 16_384];
-      if (formula === undefined) return { row, column, value };
-      const error = this.stuck.errorOf(sheet, row, column, formula);
-      if (error !== undefined) return { row, column, value: error };
-      return { row, column, value: null, formula: formula.slice(1), placement: { kind: "spilling", area: { top: row, left: column, bottom: row, right: column } } };
-    });
+  /** The cell whose formula gives this one its value: itself, unless a table spills over it. */
+  private ownerOf(sheet: SheetModel, row: number, column: number): string {
+    const spill = this.spills.find(({ sheet: on, area }) => on === sheet && area.top <= row && area.bottom >= row && area.left <= column && area.right >= column);
+    return spill === undefined ? placeKey(sheet, row, column) : placeKey(sheet, spill.area.top, spill.area.left);
   }
 
-  private asBook(cells: readonly BookCell[][]): Book {
-    const { sheets, names } = this.book;
-    const named = [...names, ...sheets.flatMap((sheet) => sheet.names)];
-    return {
-      sheets: sheets.map(({ name }, index) => ({ name, cells: cells[index] ?? [] })),
-      names: named.map(({ name, sheet, range, formula }) => ({
-        name,
-        sheet: sheet === undefined ? undefined : sheets.indexOf(sheet),
-        meaning: (range === undefined ? formula : fixedFormula(range)).slice(1),
-      })),
-      tables: [],
-      activeSheet: 0,
-      dates1904: false,
-      iterates: false,
-    };
+  /** The cells for the engine; what stands is a value to it, whatever was entered there. */
+  private cellsOf(sheet: SheetModel, stands: Stands): BookCell[] {
+    const at = (key: number): { row: number; column: number } => ({ row: Math.floor(key / 16_384), column: key % 16_384 });
+    const entered = [...sheet.entries].flatMap(([key, { value, formula }]): BookCell[] => {
+      const { row, column } = at(key);
+      if (formula === undefined) return [{ row, column, value }];
+      if (stands(sheet, row, column)) return [];
+      const error = this.stuck.errorOf(sheet, row, column, formula);
+      if (error !== undefined) return [{ row, column, value: error }];
+      return [{ row, column, value: null, formula: formula.slice(1), placement: { kind: "spilling", area: { top: row, left: column, bottom: row, right: column } } }];
+    });
+    const standing = [...sheet.calculated].map(([key, value]) => ({ ...at(key), value })).filter(({ row, column }) => stands(sheet, row, column));
+    return [...entered, ...standing.map((cell) => ({ ...cell, value: cell.value instanceof ErrorValue && cell.value.code === "#BUSY!" ? new ErrorValue(BUSY) : cell.value }))];
   }
 
   private fill(sheet: SheetModel, index: number, cells: readonly BookCell[], calculation: Calculation | undefined, into: Map<number, CellValue>): void {
     for (const { row, column, value, formula } of cells) {
       if (formula === undefined) {
-        if (sheet.entries.get(cellKey(row, column))?.formula !== undefined) into.set(cellKey(row, column), published(value));
+        const entry = sheet.entries.get(cellKey(row, column));
+        if (entry === undefined || entry.formula !== undefined) into.set(cellKey(row, column), published(value));
         continue;
       }
       const outcome = calculation?.cell({ sheet: index, row, column });
@@ -154,25 +165,6 @@ export class Calculator {
       if (area.bottom > area.top || area.right > area.left) this.spills.push({ sheet, area });
       values.forEach((line, down) => line.forEach((each, right) => into.set(cellKey(row + down, column + right), published(each ?? 0))));
     }
-  }
-
-  private pageFunctions(reasons: CellReasons): [FunctionClass, string][] {
-    // the engine knows the functions under one namespace, whichever build they came with
-    const known = this.namespace === "PROBEDEV" ? "PROBE" : this.namespace;
-    return (this.functions.metadata?.functions ?? []).map(({ id, name }) => [this.functionClass(id, reasons), `${known}.${name.toUpperCase()}`]);
-  }
-
-  private functionClass(id: string, reasons: CellReasons): FunctionClass {
-    const { book, functions } = this;
-    return class extends BaseFunction {
-      override calculate(...variants: BaseValueObject[]): BaseValueObject {
-        const sheet = book.sheets[Number(this.subUnitId)]!;
-        reasons.calculating(this.subUnitId ?? "", this.row, this.column);
-        const result = functions.value(id, variants.map(fromEngine), placeKey(sheet, this.row, this.column), `${quotedSheet(sheet.name)}!${cellAddress(this.row, this.column)}`);
-        if (result.message !== undefined) reasons.add(this.subUnitId ?? "", this.row, this.column, result.message);
-        return toEngine(result.values);
-      }
-    };
   }
 }
 

@@ -22,6 +22,8 @@ interface Call {
   message: Message | undefined;
   result: FunctionResult | undefined;
   isUsed: boolean;
+  /** sent to a page that is gone: nobody will answer */
+  isLost?: boolean;
   /** by a test, which no formula gives up */
   isAsked?: boolean;
   answered?: (result: FunctionResult) => void;
@@ -48,13 +50,19 @@ export class CustomFunctions {
     readonly metadata: FunctionsJson | undefined,
     private readonly blanks: Blanks,
     private readonly send: (messages: readonly Message[]) => void,
-    private readonly arrived: () => void,
+    private readonly arrived: (place: string) => void,
   ) {}
 
   /** The page has loaded its functions. */
   ready(): void {
     this.isReady = true;
     this.sendWaiting();
+  }
+
+  /** The page is gone with everything that it was asked; Excel waits for its answers all the same. */
+  pageGone(): void {
+    this.isReady = false;
+    for (const call of this.calls.values()) call.isLost = call.message === undefined;
   }
 
   /** Called before the formulas are calculated. */
@@ -102,18 +110,18 @@ export class CustomFunctions {
   /** Results of the page; one of a call that is no longer wanted is dropped. */
   receive(results: readonly RawResult[]): void {
     for (const result of results) {
-      for (const call of this.calls.values()) {
+      for (const [key, call] of this.calls) {
         if (call.id !== result[0]) continue;
         call.result = functionResult(result);
         call.answered?.(call.result);
+        this.arrived((JSON.parse(key) as [string])[0]);
       }
     }
-    this.arrived();
   }
 
   /** Forgets answers, so that everything is called again. @param isMeant  by the cell */
   forget(isMeant: (place: string) => boolean): void {
-    for (const [key, call] of this.calls) if (call.result !== undefined && isMeant((JSON.parse(key) as [string])[0])) this.calls.delete(key);
+    for (const [key, call] of this.calls) if ((call.result !== undefined || call.isLost === true) && isMeant((JSON.parse(key) as [string])[0])) this.calls.delete(key);
   }
 
   /** How many calls have not been answered. */

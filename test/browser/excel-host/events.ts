@@ -31,6 +31,11 @@ export class Events {
     this.wanted.set(`${type} ${target}`, Math.max(0, (this.wanted.get(`${type} ${target}`) ?? 0) - 1));
   }
 
+  /** The page is gone, and what it wanted with it. */
+  pageGone(): void {
+    this.wanted.clear();
+  }
+
   /** How many events the page listens to. */
   get count(): number {
     return [...this.wanted.values()].filter((count) => count > 0).length;

@@ -43,7 +43,7 @@ export class ExcelHost {
     private readonly send: (messages: readonly Message[]) => void,
   ) {
     this.sets = sets;
-    this.functions = new CustomFunctions(metadata, blanks, (messages) => this.outbox.push(...messages), () => this.calculator.markDirty());
+    this.functions = new CustomFunctions(metadata, blanks, (messages) => this.outbox.push(...messages), (place) => this.calculator.answered(place));
     this.calculator = new Calculator(this.book, this.functions, namespace);
     this.book.listeners.add((event) => this.outbox.push(...this.events.messagesFor(event)));
   }
@@ -74,6 +74,12 @@ export class ExcelHost {
     const answer = this.functions.ask(id, given);
     this.settle();
     return answer;
+  }
+
+  /** The page starts anew, as Excel does with one that has not answered for too long. */
+  pageGone(): void {
+    this.events.pageGone();
+    this.functions.pageGone();
   }
 
   /** Calculates what has changed and tells the page; called after a request was answered or a person did something. */

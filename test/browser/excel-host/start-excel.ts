@@ -66,6 +66,9 @@ export async function startExcel(browser: Browser, options: ExcelOptions): Promi
   const host = new ExcelHost({ sets, namespace: options.namespace ?? "PROBEDEV", metadata: options.metadata, blanks: options.blanks === undefined ? 0 : options.blanks }, (messages) => {
     void page.evaluate((each) => (window as unknown as { excelDeliver(all: unknown): void }).excelDeliver(each), messages).catch(() => undefined);
   });
+  page.on("framenavigated", (frame) => {
+    if (frame === page.mainFrame()) host.pageGone();
+  });
   await route(context, new URL(options.address).origin, complaints);
   const commands = new Map<string, (status: number) => void>();
   await context.exposeBinding("excelExecute", async (_source, method: number, text: string) => {
