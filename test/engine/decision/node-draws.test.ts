@@ -1,8 +1,10 @@
 import { describe, expect, it } from "vitest";
+import { groupInteraction } from "../../../src/engine/decision/group-interaction.js";
 import { distortionDraws, type FoundSurprises } from "../../../src/engine/decision/node-draws.js";
 import type { NodeMoments } from "../../../src/engine/decision/node-moments.js";
 import { sortedPlan } from "../../../src/engine/decision/plan.js";
 import { quadraticWidth } from "../../../src/engine/decision/second-order-terms.js";
+import { stream } from "../../../src/engine/random/stream.js";
 import { kilonewtons, metres } from "../../../src/units/quantities.js";
 
 // Three piles in a line, 5 m and 4 m apart: the two outer ones are no neighbours.
@@ -41,5 +43,26 @@ describe("draws of the largest distortion", () => {
       near(foundDistortion[m], largest((i) => loads[i] * Math.exp(-(isShort(i) ? Math.min(found.needed[i], lnStiffness(i, m) + found.toLongest[i]) : lnStiffness(i, m)))));
     }
     expect(surprises[0] + surprises[1]).toBeGreaterThan(2);
+  });
+
+  // Long blocks are drawn in parts, so that the memory stays small: the parts must meet, and the last may be shorter.
+  it("do not hang on how many stand in a block", () => {
+    const all = 300;
+    const random = stream("long block");
+    const values = Float64Array.from({ length: 6 * all }, () => random.normal());
+    const found: FoundSurprises = { needed: Float64Array.of(10.7, 10.2, 10.4), toTolerance: Float64Array.of(0.05, 0.1, 0.02), toLongest: Float64Array.of(0.4, 0.5, 0.3), designPlace: () => 0.5, builtPlace: () => 1.5 };
+    const interaction = groupInteraction(Float64Array.of(2, 2.4, 2.8, 3.2), (length) => ({ length, radius: 0.25, tipShearModulus: 3000, averageRatio: 1, poisson: 0.3, pileModulus: 3e7 }), plan.distances, plan.distanceOf);
+    for (const between of [undefined, interaction]) {
+      const long = distortionDraws(plan, all);
+      long.draw(moments, values, found, between);
+      expect(long.surprises.reduce((sum, count) => sum + count, 0)).toBeGreaterThan(all / 2);
+      const short = distortionDraws(plan, 20);
+      for (let from = 0; from < all; from += 20) {
+        short.draw(moments, Float64Array.from({ length: 6 * 20 }, (_, at) => values[Math.floor(at / 20) * all + from + (at % 20)]), found, between);
+        expect([...long.distortion.subarray(from, from + 20)]).toEqual([...short.distortion]);
+        expect([...long.foundDistortion.subarray(from, from + 20)]).toEqual([...short.foundDistortion]);
+        expect([...long.surprises.subarray(from, from + 20)]).toEqual([...short.surprises]);
+      }
+    }
   });
 });
