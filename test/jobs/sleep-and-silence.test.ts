@@ -13,7 +13,7 @@ const NIGHT = 8 * 3600 * SECOND;
 beforeEach(() => void vi.useFakeTimers());
 afterEach(() => void vi.useRealTimers());
 
-/** What befalls the first piece of work that holds this realisation, or the first look (index 0): it is never answered, or the machine sleeps in the middle and its clock has gone on. */
+/** What befalls the first piece of work that holds this realisation, or that look (index 0: the first): it is never answered, or the machine sleeps in the middle and its clock has gone on. */
 interface Spell {
   readonly of: RowKind | "look";
   readonly index: number;
@@ -24,6 +24,7 @@ interface Spell {
 function timedThreads(size: number, each: number, spell?: Spell): Threads & { readonly started: () => number } {
   let started = 0;
   let left = spell;
+  let looks = 0;
   const befalls = (of: RowKind | "look", from: number, count: number): Spell["does"] | undefined => {
     if (left === undefined || left.of !== of || left.index < from || left.index >= from + count) return undefined;
     const { does } = left;
@@ -42,7 +43,7 @@ function timedThreads(size: number, each: number, spell?: Spell): Threads & { re
       return {
         post(request) {
           turn = turn.then(async () => {
-            const does = request.kind === "rows" ? befalls(request.of, request.from, request.count) : request.kind === "look" ? befalls("look", 0, 1) : undefined;
+            const does = request.kind === "rows" ? befalls(request.of, request.from, request.count) : request.kind === "look" ? befalls("look", looks++, 1) : undefined;
             const work = request.kind === "rows" ? each * request.count : request.kind === "look" ? each : 0;
             if (does === "sleep") sleep();
             await new Promise<void>((resolve) => (does === "die" ? undefined : setTimeout(resolve, work)));
@@ -117,10 +118,19 @@ describe("a thread that dies without a word", () => {
   });
 
   it("is replaced where it makes the tables, too", async () => {
-    const threads = timedThreads(1, 100, { of: "look", index: 0, does: "die" });
-    const going = started(drawsByNumber({ seed: "yard 7" }, 8), threads);
-    await pass(400 * SECOND);
+    const first = timedThreads(1, 100, { of: "look", index: 0, does: "die" });
+    const going = started(drawsByNumber({ seed: "yard 7" }, 8), first);
+    // nobody knows yet what a look takes, and before the first no realisation is begun
+    await pass(290 * SECOND);
+    expect(first.started()).toBe(1);
+    await pass(110 * SECOND);
     expect(going.end).toMatchObject({ kind: "done", used: { elements: 8 } });
-    expect(threads.started()).toBe(3);
+    expect(first.started()).toBe(3);
+    const later = timedThreads(1, 100, { of: "look", index: 3, does: "die" });
+    const other = started(drawsByNumber({ seed: "yard 7" }, 40), later);
+    await pass(60 * SECOND);
+    // the one in its place has been given all realisations
+    expect(other.end).toMatchObject({ kind: "done", used: { elements: 40 } });
+    expect(later.started()).toBe(3);
   });
 });

@@ -70,6 +70,9 @@ describe("the sheet of all figures", () => {
     expect(report({ table: few }).warnings).toEqual(["This rests on few grounds: the errors of so few are themselves not well known, and usually stated too small."]);
     expect(report({ table: simulatedTable(rows, { elements: 24, form: 399 }) }).warnings.length).toBe(1);
     expect(report().warnings).toEqual([]);
+    const [variant] = order.task.variants;
+    const settling = { ...order, task: { ...order.task, variants: [{ ...variant!, problem: { ...variant!.problem, piles: { ...variant!.problem.piles, groupInteraction: true } } }] } };
+    expect(report({ order: settling }).warnings).toEqual(["Piles settle their neighbours in these figures (group interaction is on)."]);
     expect(report({ phase: "running" }).warnings.join(" ")).toMatch(/not finished/);
     expect(reportOf(state({ table: undefined }), new Date())).toBeUndefined();
   });
