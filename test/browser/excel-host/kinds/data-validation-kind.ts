@@ -68,6 +68,7 @@ function rule(value: unknown): unknown {
   for (const key of Object.keys(content)) if (!known.includes(key)) throw notModelled(`${key} of the rule ${kind}`);
   if (kind === "list") {
     const { source } = content;
+    if (typeof source === "object" && source !== null) throw notModelled("a range as the list of a validation");
     if (typeof source !== "string" || source === "" || (!source.startsWith("=") && source.length > LONGEST_LIST)) throw invalidArgument("the list of a validation must be a text of at most 255 signs, a formula or a range");
   } else if (kind !== "custom") {
     const { operator, formula1, formula2 } = content;
