@@ -99,6 +99,12 @@ describe("what must rise or fall", () => {
   }, 60_000);
 });
 
+// By hand: 250 kg a cubic metre, and a solid round pile of 0.5 m has 0.19635 m3 a metre.
+it("carbon is that of the piles' concrete", () => {
+  const row = assess(ninePiles(), 4);
+  near(row.carbon, 250 * 0.1963495408493621 * row.totalMetres, 1e-12);
+});
+
 describe("certain ground", () => {
   // Closed form: with no variation and no error every pile has its design length, all predictions are the same, and count 0 equals count 4.
   it("needs no holes", () => {
@@ -151,8 +157,36 @@ describe("comparison of counts", () => {
     expect(Math.max(...rows.map((row) => row.chanceCheapest))).toBe(best.chanceCheapest);
     expect(best.notDistinguishable).toBe(true);
   });
+  it("of two counts that cost the same the smaller one is the cheapest", () => {
+    const same = (count: number, total: number) => ({ ...rows[0], count, total });
+    expect(cheapestCount([same(5, 70), same(3, 70), same(4, 70), same(2, 71)])).toBe(3);
+  });
+  it("tells a count that costs far more from the cheapest, and says so", () => {
+    const dear = ninePiles();
+    const told = assessCounts({ ...dear, prices: { ...dear.prices, perHole: 1e6 } }, [0, 1, 2]);
+    expect(told.map((row) => row.notDistinguishable)).toEqual([true, false, false]);
+    expect(told[0].chanceCheapest).toBeGreaterThan(0.999);
+  });
   it("totals are the sums of their parts", () => {
     for (const row of [...rows, ...assessCounts(ninePiles({ foundShare: 0.8 }), [0, 4])]) near(row.total, row.investigation + row.foundation + row.failure + row.delay, 1e-12);
+  });
+});
+
+describe("the share of surprises that is found", () => {
+  // Identity: either all surprises of a job are found or none, so every expectation is the mixture of the two.
+  it("mixes what happens with none found and with all found", () => {
+    const [none, some, all] = [1e-9, 0.4, 1].map((foundShare) => assess(ninePiles({ foundShare }), 4));
+    for (const part of ["failure", "failureChance", "delay", "foundation"] as const) expect(Math.abs(some[part] - 0.6 * none[part] - 0.4 * all[part])).toBeLessThanOrEqual(1e-7 * Math.max(none[part], all[part]));
+    expect(all.failureChance).toBeLessThan(0.9 * none.failureChance);
+    expect(all.delay).toBeGreaterThan(all.surprises * 5000);
+  });
+  // Common sense: a greater tolerance leaves fewer surprises; without one, half of all piles of a median design are surprises.
+  it("fewer surprise where more is tolerated", () => {
+    const at = (surpriseTolerance: number): number => {
+      const problem = ninePiles();
+      return assess({ ...problem, delay: { ...problem.delay, surpriseTolerance: metres(surpriseTolerance) } }, 4).surprises;
+    };
+    expect(at(3)).toBeLessThan(0.8 * at(0));
   });
 });
 
@@ -170,6 +204,12 @@ describe("the stated error", () => {
     expect(scatter).toBeGreaterThan(0);
     expect(stated / scatter).toBeGreaterThan(0.5);
     expect(stated / scatter).toBeLessThan(4);
+  });
+  // test/study/accuracy.md: the failure cost scatters about finite elements by a fiftieth.
+  it("holds a fiftieth of the failure cost for the model's own error", () => {
+    const row = assess(ninePiles(), 4);
+    expect(row.standardError).toBeGreaterThanOrEqual(0.02 * row.failure);
+    expect(row.standardError).toBeLessThan(0.1 * row.failure);
   });
   it("is nothing where one design value is integrated over and nothing is at stake", () => {
     const problem = ninePiles();
