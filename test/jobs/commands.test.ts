@@ -126,6 +126,17 @@ describe("a run in the terminal", () => {
   }, 60_000);
 });
 
+it("lets piles settle their neighbours as the block says, or where the command says so", async () => {
+  const settling = at("settling.csv");
+  writeFileSync(SITE, smallSiteCsv());
+  writeFileSync(settling, smallSiteCsv({ "Group interaction": "on" }));
+  const few = ["--realisations", "2", "--counts", "0"];
+  const [alone, told, block] = [await simulated("--book", SITE, ...few), await simulated("--book", SITE, ...few, "--interaction"), await simulated("--book", settling, ...few)];
+  expect([alone.code, told.code]).toEqual([0, 0]);
+  expect(told.out).toBe(block.out);
+  expect(told.out).not.toBe(alone.out);
+}, 60_000);
+
 describe("parts of a run", () => {
   const part = (from: number, to: number, name: string, ...more: string[]): Promise<Said> => simulated("--book", SITE, "--from", String(from), "--to", String(to), "--part", at(name), "--workers", "1", ...more);
 
@@ -259,7 +270,8 @@ it("hears Ctrl-C as a process of its own", async () => {
   let isPressed = false;
   child.stderr.on("data", (piece: Buffer) => {
     err += piece.toString();
-    if (isPressed || !/ %: /.test(err)) return;
+    // not before something is finished, which would be told otherwise
+    if (isPressed || !/ %: [1-9][\d,]* of /.test(err)) return;
     isPressed = true;
     child.kill("SIGINT");
   });
