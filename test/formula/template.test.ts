@@ -92,6 +92,21 @@ describe("the template, read by exceljs", () => {
     expect(Buffer.from(new ZipFile(file).read("docProps/custom.xml")!).toString()).toContain(`name="Probeworth version"><vt:lpwstr>${PRODUCT_VERSION}<`);
   });
 
+  it("draws the cells of each chart, and repeats their figures", () => {
+    let drawn = 0;
+    for (const { name, charts = [] } of plans) for (const chart of charts) {
+      const xml = Buffer.from(new ZipFile(file).read(`xl/charts/chart${++drawn}.xml`)!).toString();
+      const references = [...xml.matchAll(/<c:(cat|val)><c:numRef><c:f>([^<]*)<\/c:f><c:numCache>(.*?)<\/c:numCache>/g)].map(([, , range, cache]) => [range, [...cache!.matchAll(/<c:v>([^<]*)</g)].map(([, v]) => Number(v))]);
+      const cells = (range: string): unknown[] => {
+        const [, column, from, to] = /^([A-Z]+)(\d+):[A-Z]+(\d+)$/.exec(range)!;
+        const values = Array.from({ length: Number(to) - Number(from) + 1 }, (_, k) => other.getWorksheet(name)!.getCell(`${column}${Number(from) + k}`)).map((cell) => (cell.formula === undefined ? cell.value : cell.result));
+        return [`'${name}'!$${column}$${from}:$${column}$${to}`, values];
+      };
+      expect(references).toEqual([...chart.series].sort((a, b) => Number(b.kind === "part") - Number(a.kind === "part")).flatMap(({ values }) => [cells(chart.categories), cells(values)]));
+    }
+    expect(drawn).toBeGreaterThan(0);
+  });
+
   it("has a rule for every input that the plan rules, with its words, and none else", () => {
     let rules = 0;
     for (const { name, cells } of plans) for (const { row, column, validation } of cells) {

@@ -2,6 +2,7 @@ import type { SheetPlan } from "../../host/workbook.js";
 import { unreadable } from "../failure.js";
 import { withNames } from "./added-names.js";
 import { addedStyles } from "./added-styles.js";
+import { chartParts, DRAWING_RELATION } from "./chart-parts.js";
 import type { XlsxBook } from "./read-book.js";
 import { relations, relationsPart } from "./relations.js";
 import { lookKey, looksOf, sheetXml } from "./sheet-xml.js";
@@ -11,12 +12,14 @@ import type { ZipFile } from "./zip.js";
 
 const SHEET_TYPE = "application/vnd.openxmlformats-officedocument.spreadsheetml.worksheet+xml";
 const LONGEST_NAME = 31;
+/** In the strict form of the format drawings have other names, and are left out. */
+const ORDINARY = "http://schemas.openxmlformats.org/spreadsheetml/2006/main";
 
 /**
  * Adds a sheet of values behind the others; everything else in the file stays as it is written.
  *
  * @param source  the workbook as read
- * @param plan    the sheet with its defined names; a name that is taken gets a number, formulas and charts are left out
+ * @param plan    the sheet with its defined names; a name that is taken gets a number, formulas are left out
  * @returns       the new file, and the names of sheet and cells that were free
  * @throws {FormulaLineError} a workbook that allows no sheet more
  */
@@ -39,9 +42,18 @@ export function withSheet({ zip, book }: XlsxBook, plan: SheetPlan): { bytes: Ui
   const named = withNames(withSheetNamed(workbook, sheet, id), plan, sheet, book.tables.map(({ name }) => name));
   put(main, named.xml);
   put(relationsPart(main), withRelation(textOf(zip, relationsPart(main)), id, `/${part}`));
-  put("[Content_Types].xml", withType(textOf(zip, "[Content_Types].xml"), part));
+  const taken = [...zip.names, part];
+  const free = (beginning: string): string => {
+    const name = freePart(beginning, taken);
+    taken.push(name);
+    return name;
+  };
+  const drawn = root === ORDINARY ? chartParts(plan, sheet, part, { styleOf }, free) : [];
+  const typed = drawn.filter(({ content }) => content !== "");
+  put("[Content_Types].xml", typed.reduce((xml, { name, content }) => withType(xml, name, content), withType(textOf(zip, "[Content_Types].xml"), part, SHEET_TYPE)));
+  for (const { name, xml } of drawn) put(name, xml);
   if (styles !== undefined && added !== undefined) put(styles, added.xml);
-  put(part, sheetXml(plan, { namespace: root, styleOf }));
+  put(part, sheetXml(plan, { namespace: root, styleOf, ...(drawn.length > 0 ? { drawing: DRAWING_RELATION } : {}) }));
   return { bytes: zip.withParts(parts), sheet, names: named.names };
 }
 
@@ -54,7 +66,7 @@ function rootOf(workbook: string): string {
   const scan = new TagScanner(workbook);
   scan.next();
   const prefix = scan.prefix.replace(":", "");
-  return scan.attributes().get(prefix === "" ? "xmlns" : `xmlns:${prefix}`) ?? "http://schemas.openxmlformats.org/spreadsheetml/2006/main";
+  return scan.attributes().get(prefix === "" ? "xmlns" : `xmlns:${prefix}`) ?? ORDINARY;
 }
 
 function refuseProtected(workbook: string): void {
@@ -107,11 +119,11 @@ function withRelation(xml: string, id: string, target: string): string {
   return `${xml.slice(0, scan.start)}<${prefix}Relationship Id="${id}" Type="${type}" Target="${target}"/>${xml.slice(scan.start)}`;
 }
 
-function withType(xml: string, part: string): string {
+function withType(xml: string, part: string, content: string): string {
   const scan = new TagScanner(xml);
   let prefix = "";
   while (scan.next() && !scan.closes("Types")) if (scan.opens("Override") || scan.opens("Default")) prefix = scan.prefix;
-  return `${xml.slice(0, scan.start)}<${prefix}Override PartName="/${part}" ContentType="${SHEET_TYPE}"/>${xml.slice(scan.start)}`;
+  return `${xml.slice(0, scan.start)}<${prefix}Override PartName="/${part}" ContentType="${content}"/>${xml.slice(scan.start)}`;
 }
 
 function inItsEncoding(zip: ZipFile, name: string, xml: string): Uint8Array {

@@ -1,11 +1,9 @@
 import type { SheetPlan } from "../../host/workbook.js";
-import { COLUMNS } from "../addresses.js";
 import type { CellValue } from "../cell-value.js";
 import { CELL_METADATA } from "./cell-metadata.js";
-import { chartXml, type CellAt } from "./chart-xml.js";
+import { chartParts, DRAWING_RELATION, relation, relationsOf, type WrittenPart } from "./chart-parts.js";
 import { PROPERTY_KINDS, propertyParts, type About } from "./document-properties.js";
-import { drawingXml } from "./drawing-xml.js";
-import { lookKey, looksOf, sheetXml, writtenCells, type SheetSurroundings } from "./sheet-xml.js";
+import { lookKey, looksOf, sheetXml, type SheetSurroundings } from "./sheet-xml.js";
 import type { Namespace } from "./stored-formula.js";
 import { workbookStyles } from "./workbook-styles.js";
 import { escaped } from "./xml.js";
@@ -26,12 +24,6 @@ export interface WorkbookContents {
   readonly about?: About;
 }
 
-interface Part {
-  readonly name: string;
-  readonly xml: string;
-  readonly content: string;
-}
-
 /**
  * A workbook in the xlsx format.
  *
@@ -42,53 +34,38 @@ export function newWorkbook(plans: readonly SheetPlan[], { valuesOf, functions =
   const looks = looksOf(plans);
   const styleOf = new Map(looks.map((look, k) => [lookKey(look), k + 1]));
   const footer = about === undefined ? undefined : `${about.program} ${about.version}`;
-  const drawings: Part[] = [];
-  const charts: Part[] = [];
-  const relationParts: Part[] = [];
-  const sheets = plans.map((plan, k): Part => {
+  const pictures: WrittenPart[] = [];
+  const made = new Map<string, number>();
+  const free = (beginning: string): string => {
+    made.set(beginning, (made.get(beginning) ?? 0) + 1);
+    return `${beginning}${made.get(beginning)}.xml`;
+  };
+  const sheets = plans.map((plan, k): WrittenPart => {
     const own: Pick<SheetSurroundings, "styleOf" | "valuesOf"> = { styleOf, ...(valuesOf === undefined ? {} : { valuesOf: (row, column) => valuesOf(k, row, column) }) };
     const name = `xl/worksheets/sheet${k + 1}.xml`;
-    const isDrawn = (plan.charts ?? []).length > 0;
-    if (isDrawn) {
-      const drawing = `xl/drawings/drawing${drawings.length + 1}.xml`;
-      relationParts.push(relationsOf(name, [relation("rId1", "drawing", `/${drawing}`)]));
-      const at = cellsAt(plan, own);
-      const first = charts.length;
-      for (const chart of plan.charts ?? []) charts.push({ name: `xl/charts/chart${charts.length + 1}.xml`, xml: chartXml(chart, plan.name, at), content: `${TYPE}.drawingml.chart+xml` });
-      drawings.push({ name: drawing, xml: drawingXml(plan.charts ?? [], (chart) => `rId${chart + 1}`), content: `${TYPE}.drawing+xml` });
-      relationParts.push(relationsOf(drawing, charts.slice(first).map((chart, c) => relation(`rId${c + 1}`, "chart", `/${chart.name}`))));
-    }
-    const around: SheetSurroundings = { ...own, namespace: MAIN, functions, isShown: k === 0, ...(footer === undefined ? {} : { footer }), ...(isDrawn ? { drawing: "rId1" } : {}) };
+    const drawn = chartParts(plan, plan.name, name, own, free);
+    pictures.push(...drawn);
+    const around: SheetSurroundings = { ...own, namespace: MAIN, functions, isShown: k === 0, ...(footer === undefined ? {} : { footer }), ...(drawn.length > 0 ? { drawing: DRAWING_RELATION } : {}) };
     return { name, xml: sheetXml(plan, around), content: `${TYPE}.spreadsheetml.worksheet+xml` };
   });
   const spills = sheets.some(({ xml }) => / cm="/.test(xml));
-  const main: Part[] = [
+  const main: WrittenPart[] = [
     { name: "xl/workbook.xml", xml: workbookXml(plans, valuesOf !== undefined), content: `${TYPE}.spreadsheetml.sheet.main+xml` },
     { name: "xl/styles.xml", xml: workbookStyles(looks), content: `${TYPE}.spreadsheetml.styles+xml` },
     ...(spills ? [{ name: "xl/metadata.xml", xml: CELL_METADATA, content: `${TYPE}.spreadsheetml.sheetMetadata+xml` }] : []),
   ];
   const workbookRelations = [...sheets.map(({ name }, k) => relation(`rId${k + 1}`, "worksheet", `/${name}`)), relation(`rId${sheets.length + 1}`, "styles", "/xl/styles.xml"), ...(spills ? [relation(`rId${sheets.length + 2}`, "sheetMetadata", "/xl/metadata.xml")] : [])];
-  const properties = Object.entries(about === undefined ? {} : propertyParts(about)).map(([name, xml]): Part => ({ name, xml, content: PROPERTY_KINDS[name]!.content }));
+  const properties = Object.entries(about === undefined ? {} : propertyParts(about)).map(([name, xml]): WrittenPart => ({ name, xml, content: PROPERTY_KINDS[name]!.content }));
   const packageRelations = [relation("rId1", "officeDocument", "xl/workbook.xml"), ...properties.map(({ name }, k) => `<Relationship Id="rId${k + 2}" Type="${PROPERTY_KINDS[name]!.relation}" Target="${name}"/>`)];
-  const parts = [...main, ...sheets, ...drawings, ...charts, ...properties];
-  const all = [typesPart(parts), relationsOf("", packageRelations), main[0]!, relationsOf("xl/workbook.xml", workbookRelations), ...main.slice(1), ...sheets, ...relationParts, ...drawings, ...charts, ...properties];
+  const parts = [...main, ...sheets, ...pictures.filter(({ content }) => content !== ""), ...properties];
+  const all = [typesPart(parts), relationsOf("", packageRelations), main[0]!, relationsOf("xl/workbook.xml", workbookRelations), ...main.slice(1), ...sheets, ...pictures, ...properties];
   return new ZipFile(EMPTY_ZIP).withParts(new Map(all.map(({ name, xml }) => [name, Buffer.from(xml)])));
 }
 
 /** A zip file without parts is the end of its directory alone. */
 const EMPTY_ZIP = Uint8Array.of(0x50, 0x4b, 5, 6, ...new Array<number>(18).fill(0));
 
-function relation(id: string, kind: string, target: string): string {
-  return `<Relationship Id="${id}" Type="${OFFICE}/${kind}" Target="${target}"/>`;
-}
-
-/** The part that holds the relations of a part; "" for those of the package. */
-function relationsOf(part: string, relations: readonly string[]): Part {
-  const slash = part.lastIndexOf("/");
-  return { name: `${part.slice(0, slash + 1)}_rels/${part.slice(slash + 1)}.rels`, xml: `${HEAD}<Relationships xmlns="${PACKAGE}/relationships">${relations.join("")}</Relationships>`, content: "" };
-}
-
-function typesPart(parts: readonly Part[]): Part {
+function typesPart(parts: readonly WrittenPart[]): WrittenPart {
   const overrides = parts.map(({ name, content }) => `<Override PartName="/${name}" ContentType="${content}"/>`).join("");
   return { name: "[Content_Types].xml", xml: `${HEAD}<Types xmlns="${PACKAGE}/content-types"><Default Extension="rels" ContentType="application/vnd.openxmlformats-package.relationships+xml"/><Default Extension="xml" ContentType="application/xml"/>${overrides}</Types>`, content: "" };
 }
@@ -108,12 +85,6 @@ function workbookXml(plans: readonly SheetPlan[], isCalculated: boolean): string
   });
   const calculation = isCalculated ? '<calcPr calcId="191029" fullCalcOnLoad="1"/>' : "";
   return `${HEAD}<workbook xmlns="${MAIN}" xmlns:r="${OFFICE}"><bookViews><workbookView activeTab="0"/></bookViews><sheets>${sheets}</sheets>${names.length === 0 ? "" : `<definedNames>${names.join("")}</definedNames>`}${calculation}</workbook>`;
-}
-
-/** The values that a chart's cells show. */
-function cellsAt(plan: SheetPlan, own: Pick<SheetSurroundings, "styleOf" | "valuesOf">): CellAt {
-  const values = new Map(writtenCells(plan, own).map(({ row, column, value }) => [row * COLUMNS + column, value]));
-  return (row, column) => values.get(row * COLUMNS + column) ?? null;
 }
 
 function quoted(sheet: string): string {
