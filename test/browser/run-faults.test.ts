@@ -47,6 +47,12 @@ async function totals(page: Page): Promise<string[]> {
 /** The threads that compute or make tables, without those of the quick figures. */
 const threads = (page: Page): Worker[] => page.workers().filter((worker) => worker.url().includes("simulation-worker"));
 
+/** Lets every thread of the run die of an error. A run that ends over the first closes the others before they can be reached. */
+async function pullThreads(page: Page): Promise<void> {
+  const pulled = await Promise.allSettled(threads(page).map((thread) => thread.evaluate(() => void setTimeout(() => { throw new Error("pulled from under the run"); }))));
+  expect(pulled.map(({ status }) => status)).toContain("fulfilled");
+}
+
 let undisturbed: string[];
 /** row, column and value of every cell of the two sheets that the pane wrote */
 let fromPane: [number, number, CellValue][][];
@@ -98,7 +104,7 @@ describe("a thread of the browser", () => {
     await start(page, "0, 2", 8);
     await reach(page, 2);
     // both kinds: the one that computes and the one that makes the tables
-    for (const thread of threads(page)) await thread.evaluate(() => void setTimeout(() => { throw new Error("pulled from under the run"); }));
+    await pullThreads(page);
     await expect.poll(() => notes(page), { timeout: WAIT, interval: 50 }).toMatch(/A thread was replaced and its work is done again: .*pulled from under the run\./);
     await finish(page);
     expect(await totals(page)).toEqual(undisturbed);
@@ -111,7 +117,7 @@ describe("a thread of the browser", () => {
     await reach(page, 2);
     // whatever takes the place of a thread dies as it begins
     await page.route("**/simulation-worker.js", (route) => route.fulfill({ contentType: "text/javascript", body: 'throw new Error("the browser allows no more");' }));
-    for (const thread of threads(page)) await thread.evaluate(() => void setTimeout(() => { throw new Error("pulled from under the run"); }));
+    await pullThreads(page);
     const ending = /^(No thread|The thread that makes the tables|Realisations? .*) (can be kept at work|cannot be kept at work|could not be computed in 3 tries): .*the browser allows no more\. \d+ grounds? by finite elements and [\d,]+ by the short form are there and kept on this machine\.$/;
     await expect.poll(() => words(page).textContent(), { timeout: WAIT, interval: 50 }).toMatch(ending);
     expect(await page.getByRole("button", { name: "Go on" }).isVisible()).toBe(true);
