@@ -15,7 +15,7 @@ const COLUMNS = 9;
 /** Rows that the picture covers. */
 const PICTURE_ROWS = 17;
 /** Characters that fit across the printed page. */
-const LINE = 116;
+const LINE = 108;
 const MIDDLE = lengthPercentiles.indexOf(50);
 
 /**
