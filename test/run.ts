@@ -44,7 +44,7 @@ const STEPS: readonly Step[] = [
 
 function run([command, ...rest]: readonly string[]): Promise<boolean> {
   return new Promise((resolve) => {
-    const child = spawn(command, rest, { cwd: root, stdio: "inherit", timeout: 10 * MINUTES });
+    const child = spawn(command, rest, { cwd: root, stdio: "inherit", timeout: 15 * MINUTES });
     child.on("error", () => resolve(false));
     child.on("close", (code) => resolve(code === 0));
   });
