@@ -53,6 +53,20 @@ async function pullThreads(page: Page): Promise<void> {
   expect(pulled.map(({ status }) => status)).toContain("fulfilled");
 }
 
+/** Every cell of the sheets that the pane has written. */
+const writtenBy = (page: Page): Promise<[number, number, CellValue][][]> =>
+  page.evaluate(() => window.book.inserted.map(({ cells }) => cells.map(({ row, column, value }): [number, number, CellValue] => [row, column, value ?? ""])));
+/** The columns of counts and totals of a written table, from its heads down. */
+function countsAndTotals(cells: [number, number, CellValue][]): [CellValue, CellValue][] {
+  const head = (label: RegExp): [number, number, CellValue] => cells.find(([, , value]) => label.test(String(value)))!;
+  const [row, countColumn] = head(/^Count \(holes\)$/);
+  const [, totalColumn] = head(/^Total \(/);
+  const at = (down: number, column: number): CellValue | undefined => cells.find(([r, c]) => r === row + down && c === column)?.[2];
+  const found: [CellValue, CellValue][] = [];
+  for (let down = 1; typeof at(down, totalColumn) === "number"; down++) found.push([at(down, countColumn)!, at(down, totalColumn)!]);
+  return found;
+}
+
 let undisturbed: string[];
 /** row, column and value of every cell of the two sheets that the pane wrote */
 let fromPane: [number, number, CellValue][][];
@@ -69,7 +83,15 @@ describe("a run that nobody disturbs", () => {
     await expect.poll(() => page.evaluate(() => window.book.inserted.length)).toBe(1);
     await page.getByRole("button", { name: "Write the client brief" }).click();
     await expect.poll(() => page.evaluate(() => window.book.inserted.length)).toBe(2);
-    fromPane = await page.evaluate(() => window.book.inserted.map(({ cells }) => cells.map(({ row, column, value }): [number, number, CellValue] => [row, column, value ?? ""])));
+    fromPane = await writtenBy(page);
+    // the pane shows the totals rounded, so many noughts at the end
+    const shown = undisturbed.map((line) => line.split(" ").map((word) => word.replaceAll(",", "")));
+    const inSheet = countsAndTotals(fromPane[0]!);
+    expect(inSheet.map(([count]) => String(count))).toEqual(shown.map(([count]) => count));
+    inSheet.forEach(([, total], k) => {
+      const step = 10 ** /0*$/.exec(shown[k]![1]!)![0].length;
+      expect(Math.abs(Number(total) - Number(shown[k]![1]))).toBeLessThanOrEqual(step / 2);
+    });
     await page.context().close();
   });
 
@@ -157,6 +179,12 @@ describe("a site block that changes during a run", () => {
     await expect.poll(() => page.evaluate(() => window.book.inserted.length)).toBe(2);
     const warned = await page.evaluate(() => window.book.inserted.map(({ cells }) => cells.filter(({ value }) => /^The site block has changed since this run was ordered/.test(String(value))).length));
     expect(warned).toEqual([1, 1]);
+    // of the inputs that were ordered, in the stamp too
+    const sheet = (await writtenBy(page))[0]!;
+    const hash = (cells: [number, number, CellValue][]): CellValue => cells[cells.findIndex(([, , value]) => value === "Hash of the inputs") + 1]![2];
+    expect(hash(sheet)).toMatch(/^[0-9a-f]{16}$/);
+    expect(hash(sheet)).toBe(hash(fromPane[0]!));
+    expect(countsAndTotals(sheet)).toEqual(countsAndTotals(fromPane[0]!));
     await page.context().close();
   });
 });
