@@ -1,9 +1,10 @@
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import type { Browser } from "playwright-core";
 import { launchBrowser } from "./harness/browser.js";
+import { besideExcel } from "./excel-host/beside-excel.js";
 import { validationAt } from "./excel-host/kinds/data-validation-kind.js";
 import { serveScript, type Outcome, type ScriptSite } from "./excel-host/script-site.js";
-import { startExcel, type Excel as ExcelBeside } from "./excel-host/start-excel.js";
+import type { Excel as ExcelBeside } from "./excel-host/start-excel.js";
 
 let browser: Browser;
 let site: ScriptSite;
@@ -15,13 +16,7 @@ afterAll(async () => {
   await site?.close();
 });
 
-async function beside(test: (excel: ExcelBeside) => Promise<void>): Promise<void> {
-  const excel = await startExcel(browser, { address: site.address });
-  await excel.page.evaluate(() => Office.onReady());
-  await test(excel);
-  expect(excel.complaints).toEqual([]);
-  await excel.close();
-}
+const beside = (test: (excel: ExcelBeside) => Promise<void>): Promise<void> => besideExcel(browser, { address: site.address }, test);
 
 /** Writes 1 into A1 of the active sheet. */
 const write = ({ page }: ExcelBeside, delayForCellEdit = false): Promise<Outcome> =>

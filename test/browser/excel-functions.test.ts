@@ -3,8 +3,9 @@ import type { Browser } from "playwright-core";
 import type { FunctionsJson } from "../../src/build/metadata.js";
 import { ErrorValue, type CellValue } from "../../src/formula/cell-value.js";
 import { launchBrowser } from "./harness/browser.js";
+import { besideExcel } from "./excel-host/beside-excel.js";
 import { serveScript, type ScriptSite } from "./excel-host/script-site.js";
-import { startExcel, type Excel as ExcelBeside, type ExcelOptions } from "./excel-host/start-excel.js";
+import type { Excel as ExcelBeside, ExcelOptions } from "./excel-host/start-excel.js";
 
 // Each function shows what reaches it, because what Excel hands over is what these tests are about.
 const SCRIPT = `
@@ -55,18 +56,16 @@ interface Cells {
   why(column: number, row: number): string | undefined;
 }
 
-async function beside(test: (excel: ExcelBeside, cells: Cells) => Promise<void>, options: Partial<ExcelOptions> = {}): Promise<void> {
-  const excel = await startExcel(browser, { address: site.address, metadata: METADATA, namespace: "TEST", ...options });
-  await excel.page.evaluate(() => Office.onReady());
-  const sheet = excel.host.book.active;
-  await test(excel, {
-    enter: (column, row, what) => excel.person(({ book }) => book.write(sheet, { top: row, left: column, bottom: row, right: column }, [[what]], "person")),
-    at: (column, row) => sheet.valueAt(row, column),
-    why: (column, row) => excel.host.calculator.reasonAt(sheet, row, column),
+function beside(test: (excel: ExcelBeside, cells: Cells) => Promise<void>, options: Partial<ExcelOptions> = {}): Promise<void> {
+  return besideExcel(browser, { address: site.address, metadata: METADATA, namespace: "TEST", ...options }, async (excel) => {
+    const sheet = excel.host.book.active;
+    await test(excel, {
+      enter: (column, row, what) => excel.person(({ book }) => book.write(sheet, { top: row, left: column, bottom: row, right: column }, [[what]], "person")),
+      at: (column, row) => sheet.valueAt(row, column),
+      why: (column, row) => excel.host.calculator.reasonAt(sheet, row, column),
+    });
+    expect(excel.host.functions.troubles).toEqual([]);
   });
-  expect(excel.complaints).toEqual([]);
-  expect(excel.host.functions.troubles).toEqual([]);
-  await excel.close();
 }
 
 describe("cell functions in the library's own runtime", () => {

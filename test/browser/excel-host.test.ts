@@ -2,6 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import type { Browser } from "playwright-core";
 import { ErrorValue } from "../../src/formula/cell-value.js";
 import { launchBrowser } from "./harness/browser.js";
+import { besideExcel } from "./excel-host/beside-excel.js";
 import { serveScript, type ScriptSite } from "./excel-host/script-site.js";
 import { startExcel, type Excel as ExcelBeside, type ExcelOptions } from "./excel-host/start-excel.js";
 
@@ -15,14 +16,7 @@ afterAll(async () => {
   await site?.close();
 });
 
-/** Runs a test beside an Excel of its own; the page must not have complained of anything. */
-async function beside(test: (excel: ExcelBeside) => Promise<void>, options: Partial<ExcelOptions> = {}): Promise<void> {
-  const excel = await startExcel(browser, { address: site.address, ...options });
-  await excel.page.evaluate(() => Office.onReady());
-  await test(excel);
-  expect(excel.complaints).toEqual([]);
-  await excel.close();
-}
+const beside = (test: (excel: ExcelBeside) => Promise<void>, options: Partial<ExcelOptions> = {}): Promise<void> => besideExcel(browser, { address: site.address, ...options }, test);
 
 describe("the platform's own library beside the model of Excel", () => {
   it("is ready, and says that the host is Excel for Windows", () =>

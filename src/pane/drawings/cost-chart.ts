@@ -1,7 +1,7 @@
 import { axisY, barY, dot, gridY, lineY, plot, ruleX, ruleY, text, areaY } from "@observablehq/plot";
 import type { CostDrawing, PartBlock, TotalPoint } from "../model/cost-drawing.js";
 import { niceTicks } from "../model/ticks.js";
-import { axisOfCounts, hidden, PADDING, SIDES } from "./count-axis.js";
+import { axisOfCounts, drawInBands, hidden, PADDING, SIDES } from "./count-axis.js";
 
 /** Writes an amount of money for an axis, in the unit that the axis states. */
 export type AxisWriter = (value: number) => string;
@@ -62,32 +62,17 @@ export function drawTotals(drawing: CostDrawing, width: number, write: AxisWrite
  * @returns        an SVG picture, hidden from screen readers
  */
 export function drawParts(drawing: CostDrawing, width: number, write: AxisWriter, colours: readonly string[]): Element {
-  const ticks = niceTicks(drawing.partAxis[0], drawing.partAxis[1], 4);
-  return hidden(
-    plot({
-      ...SIDES,
-      width,
-      height: 150,
-      marginTop: 8,
-      marginBottom: 32,
-      x: { type: "band", domain: [...drawing.counts], label: null, padding: PADDING },
-      y: { domain: [...drawing.partAxis], label: null },
-      marks: [
-        gridY(ticks, { stroke: "var(--pane-line)", strokeOpacity: 1 }),
-        axisY(ticks, { tickSize: 0, tickFormat: write, color: "var(--pane-soft)" }),
-        axisOfCounts(drawing.counts, width),
-        ...drawing.parts.map((part, k) =>
-          barY(drawing.blocks.filter((block) => block.part === part), {
-            x: "count",
-            y1: (block: PartBlock) => block.from,
-            y2: (block: PartBlock) => block.to,
-            fill: colours[k] ?? "var(--pane-soft)",
-            stroke: "var(--pane-part-edge)",
-            strokeWidth: 0.75,
-          }),
-        ),
-        ruleY([0], { stroke: "var(--pane-soft)" }),
-      ],
-    }),
-  );
+  return drawInBands(drawing.counts, width, drawing.partAxis, write, [
+    ...drawing.parts.map((part, k) =>
+      barY(drawing.blocks.filter((block) => block.part === part), {
+        x: "count",
+        y1: (block: PartBlock) => block.from,
+        y2: (block: PartBlock) => block.to,
+        fill: colours[k] ?? "var(--pane-soft)",
+        stroke: "var(--pane-part-edge)",
+        strokeWidth: 0.75,
+      }),
+    ),
+    ruleY([0], { stroke: "var(--pane-soft)" }),
+  ]);
 }
